@@ -13,6 +13,25 @@ export interface Provenance {
   readonly confidence: Confidence;
 }
 
+/** Range in which K of a material is expected to lie up to a ratio of inside radius to thickness. */
+export interface KBand {
+  /** The band holds for R/T below this (first match counts); null = for every larger ratio. */
+  readonly ratioBelow: number | null;
+  readonly low: number;
+  readonly high: number;
+  readonly source: string;
+  readonly confidence: Confidence;
+}
+
+/** One row of a material's own table of K, for `ratioFrom` <= R/T < `ratioTo` (null = no upper end). */
+export interface KTableRow {
+  readonly ratioFrom: number;
+  readonly ratioTo: number | null;
+  readonly kFactor: number;
+  readonly source: string;
+  readonly confidence: Confidence;
+}
+
 /** Sheet and tooling that a development is computed for. Resolved from the document's stock by `stock/`. */
 export interface BendingStock {
   readonly materialId: string;
@@ -24,6 +43,10 @@ export interface BendingStock {
   readonly deliveredRadiusMm: number;
   readonly vOpeningMm: number;
   readonly ultimateStrengthMpa: number;
+  /** The material's own band of K, in ascending order of `ratioBelow`; empty when none is known. */
+  readonly kBands: readonly KBand[];
+  /** K by material; empty when there is no table, then DIN 6935 serves for steel and the textbook rule for the rest. */
+  readonly kTable: readonly KTableRow[];
 }
 
 /** One row of the bend table. Every length in mm. */
@@ -90,6 +113,53 @@ export interface FlatPattern {
   readonly cutLengthMm: number;
   readonly pierces: number;
   readonly massKg: number;
+  /** Holes, slots and cut-outs that reach into a bend zone. They are cut as drawn and may pull out of shape. */
+  readonly featuresInBendZones: readonly string[];
+  /** Ends of bend zones with sheet beside them on the same line: relieved, or left without relief. */
+  readonly reliefs: readonly Relief[];
+}
+
+/** A place where a bend ends beside sheet that stays flat. */
+export interface Relief {
+  readonly bendId: string;
+  /** `added` by the settings, or `missing` because reliefs are switched off. */
+  readonly state: 'added' | 'missing';
+  /** End of the bend's crease in the layout, and the matching corner of the bend zone in the flat pattern. */
+  readonly layout: Point;
+  readonly flat: Point;
+  readonly widthMm: number;
+  /** How far the relief reaches past the tangent line. */
+  readonly depthMm: number;
+}
+
+/**
+ * A rigid motion of the plane: turn by `turnDeg` (counter-clockwise) about the origin, then shift.
+ */
+export interface Placement {
+  readonly turnDeg: number;
+  readonly shift: Point;
+}
+
+/**
+ * One bend zone of the flat pattern, with all that is needed to fold it: a strip between two parallel tangent lines
+ * that joins two panels. A bend that opens several tabs has a zone for each.
+ */
+export interface BendZone {
+  readonly bendId: string;
+  readonly parentIndex: number;
+  readonly childIndex: number;
+  /** A point on the parent's tangent line, flat-pattern coordinates. */
+  readonly origin: Point;
+  /** Unit vector along the bend; `towardsChild` is this turned counter-clockwise by 90 degrees. */
+  readonly along: Point;
+  readonly towardsChild: Point;
+  readonly bendAllowanceMm: number;
+  readonly bendAngleDeg: number;
+  readonly direction: BendDirection;
+  readonly insideRadiusMm: number;
+  readonly kFactor: number;
+  /** Boundary of the strip in flat-pattern coordinates, counter-clockwise, openings not taken out. */
+  readonly outer: Loop;
 }
 
 /** A flat region between bends. `index` 0 is the base panel. */
@@ -101,6 +171,10 @@ export interface Panel {
   /** Boundary in flat-pattern coordinates, between its tangent lines. */
   readonly outer: Loop;
   readonly openings: readonly Loop[];
+  /** From layout to flat pattern; the base panel stays where it is. */
+  readonly placement: Placement;
+  /** The panel as drawn, up to its creases, in layout coordinates. */
+  readonly layoutOuter: Loop;
 }
 
 /** Triangles for the screen. Positions xyz mm; normals unit; indices into them. */
@@ -131,6 +205,8 @@ export interface FormedSize {
 export interface Development {
   readonly stock: BendingStock;
   readonly panels: readonly Panel[];
+  /** One or more for each bend; a panel's zone towards its parent is the one whose `childIndex` is the panel's. */
+  readonly zones: readonly BendZone[];
   readonly flat: FlatPattern;
   readonly bendTable: readonly BendRow[];
   readonly formedBox: FormedBox;
