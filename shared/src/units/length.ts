@@ -30,7 +30,8 @@ const UNIT_WORDS: ReadonlyMap<string, { readonly unit: LengthUnit; readonly mm: 
   ["''", { unit: 'in', mm: MM_PER_INCH }],
 ]);
 
-const LENGTH = /^([+-]?)\s*(?:(\d+)[\s-]+(\d+)\s*[/⁄]\s*(\d+)|(\d+)\s*[/⁄]\s*(\d+)|(\d+(?:[.,]\d*)?|[.,]\d+))\s*([a-z]+|"|″|”|'')?\.?$/i;
+const LENGTH =
+  /^([+-]?)\s*(?:(\d+)[\s-]+(\d+)\s*[/⁄]\s*(\d+)|(\d+)\s*[/⁄]\s*(\d+)|(\d+(?:[.,]\d*)?|[.,]\d+))\s*([a-z]+|"|″|”|'')?\.?$/i;
 
 /**
  * Reads a typed length: `12`, `12 mm`, `12,5`, `0.5in`, `1 3/8"`, `1-3/8 in`, `3/8"`.

@@ -1,0 +1,78 @@
+import type { HandbookK, KBands, MetalFamily } from './material';
+import { findMaterial } from './materials';
+import { SHARPEST_RADIUS_OVER_T, usualVOpeningMm } from './v-dies';
+
+/** What a person chose: the shape of a part document's stock, as far as tooling depends on it. */
+export interface SheetChoice {
+  readonly materialId: string;
+  readonly thicknessMm: number;
+  /** Null = the usual die for the thickness. */
+  readonly vOpeningMm: number | null;
+}
+
+/** Sheet and tooling a development is computed for. Fits `BendingStock` of the bending folder. */
+export interface ResolvedStock {
+  readonly materialId: string;
+  readonly materialName: string;
+  readonly family: MetalFamily;
+  readonly thicknessMm: number;
+  readonly densityKgPerM3: number;
+  readonly deliveredRadiusMm: number;
+  readonly vOpeningMm: number;
+  readonly ultimateStrengthMpa: number;
+  readonly kBands: KBands;
+  readonly handbookK: HandbookK | null;
+  readonly din6935: 'covered' | 'customary' | 'no';
+}
+
+export type StockResolution =
+  | { readonly ok: true; readonly stock: ResolvedStock }
+  | {
+      readonly ok: false;
+      readonly problem: { readonly code: 'stockUnknown'; readonly message: string; readonly ids: readonly string[] };
+    };
+
+/**
+ * Fills a choice of sheet from the tables: density, strength, die (the chart's nearest to 8 T unless one is named) and
+ * the inside radius an air bend in that die delivers.
+ * The radius follows the opening and the material and not the punch's nose, as long as the nose is smaller; it never
+ * falls below 0.63 T, where a bend turns into a crease. Source: the trade's share-of-V rule, common practice.
+ * @param choice material id, thickness and opening in mm
+ * @returns the stock, or why there is none (unknown material, a thickness or opening that is not above 0)
+ */
+export function resolveStock(choice: SheetChoice): StockResolution {
+  const material = findMaterial(choice.materialId);
+  if (material === null)
+    return unknown(`There is no material “${choice.materialId}” in the tables.`, choice.materialId);
+  const thicknessMm = choice.thicknessMm;
+  if (!Number.isFinite(thicknessMm) || thicknessMm <= 0) {
+    return unknown(`A sheet of ${thicknessMm} mm cannot be bent; give its thickness in mm.`, choice.materialId);
+  }
+  const vOpeningMm = choice.vOpeningMm ?? usualVOpeningMm(thicknessMm);
+  if (!Number.isFinite(vOpeningMm) || vOpeningMm <= 0) {
+    return unknown(`A die opening of ${vOpeningMm} mm does not exist.`, choice.materialId);
+  }
+  return {
+    ok: true,
+    stock: {
+      materialId: material.id,
+      materialName: material.name,
+      family: material.family,
+      thicknessMm,
+      densityKgPerM3: material.densityKgPerM3.value,
+      deliveredRadiusMm: Math.max(
+        material.deliveredRadiusShare.value * vOpeningMm,
+        SHARPEST_RADIUS_OVER_T * thicknessMm,
+      ),
+      vOpeningMm,
+      ultimateStrengthMpa: material.ultimateMpa.value,
+      kBands: material.kBands,
+      handbookK: material.handbookK,
+      din6935: material.din6935,
+    },
+  };
+}
+
+function unknown(message: string, materialId: string): StockResolution {
+  return { ok: false, problem: { code: 'stockUnknown', message, ids: [materialId] } };
+}
