@@ -54,7 +54,10 @@ export interface SheetMaterial {
   readonly handbookK: HandbookK | null;
   /** Inside radius an air bend delivers, as a share of the V opening (0.16 = 16 %). */
   readonly deliveredRadiusShare: Figure;
-  /** Whether DIN 6935, which is written for steel, covers it. Stainless is a customary extrapolation. */
-  readonly din6935: 'covered' | 'customary' | 'no';
+  /**
+   * What K is taken from when nobody measured it: `din6935` (written for flat rolled steel), the handbook's figure, or
+   * the middle of the trade's band where neither names the metal.
+   */
+  readonly kFrom: 'din6935' | 'handbook' | 'band';
   readonly note: string;
 }

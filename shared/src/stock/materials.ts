@@ -84,7 +84,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: STEEL_BANDS,
     handbookK: HARD_GROUP,
     deliveredRadiusShare: commonPractice(0.16, `${V_SHARE}: 15 to 17 %`),
-    din6935: 'covered',
+    kFrom: 'din6935',
     note: '',
   },
   {
@@ -110,7 +110,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: STEEL_BANDS,
     handbookK: HALF_HARD_GROUP,
     deliveredRadiusShare: commonPractice(0.15, `${V_SHARE}: 14 to 16 %`),
-    din6935: 'covered',
+    kFrom: 'din6935',
     note: '',
   },
   {
@@ -127,7 +127,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: STEEL_BANDS,
     handbookK: HARD_GROUP,
     deliveredRadiusShare: commonPractice(0.16, `${V_SHARE}: as cold rolled steel, 15 to 17 %`),
-    din6935: 'covered',
+    kFrom: 'din6935',
     note: 'Zinc fume is harmful: no welding or heating without extraction.',
   },
   {
@@ -142,9 +142,9 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     ultimateMpa: published(750, 'EN 10088-2 1.4301: 540 to 750 (ASTM A240: at least 515)'),
     minimumRadius: radiusOverT(1, 0.5, 'shop rule; Kalpakjian & Schmid give 0.5 T soft to 6 T hard'),
     kBands: STAINLESS_BANDS,
-    handbookK: HARD_GROUP,
+    handbookK: null,
     deliveredRadiusShare: commonPractice(0.21, `${V_SHARE}: 20 to 22 %`),
-    din6935: 'customary',
+    kFrom: 'band',
     note: '',
   },
   {
@@ -159,9 +159,9 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     ultimateMpa: fromMemory(680, 'EN 10088-2 1.4401: 530 to 680 (ASTM A240: at least 515)'),
     minimumRadius: radiusOverT(1, 0.5, 'shop rule, as 304'),
     kBands: STAINLESS_BANDS,
-    handbookK: HARD_GROUP,
+    handbookK: null,
     deliveredRadiusShare: commonPractice(0.21, `${V_SHARE}: 20 to 22 %`),
-    din6935: 'customary',
+    kFrom: 'band',
     note: '',
   },
   {
@@ -178,7 +178,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: ALLOY_BANDS,
     handbookK: HALF_HARD_GROUP,
     deliveredRadiusShare: commonPractice(0.14, `${V_SHARE}: 13 to 15 %`),
-    din6935: 'no',
+    kFrom: 'handbook',
     note: '',
   },
   {
@@ -195,7 +195,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: ALLOY_BANDS,
     handbookK: HALF_HARD_GROUP,
     deliveredRadiusShare: fromMemory(0.14, `${V_SHARE}: no figure for this temper, taken as 5052`),
-    din6935: 'no',
+    kFrom: 'handbook',
     note: 'Cracks readily in T6. Shops bend it in T4 or O and age it, or take 5052-H32.',
   },
   {
@@ -212,7 +212,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: SOFT_BANDS,
     handbookK: HALF_HARD_GROUP,
     deliveredRadiusShare: fromMemory(0.14, `${V_SHARE}: no figure for this temper, taken as 5052`),
-    din6935: 'no',
+    kFrom: 'handbook',
     note: '',
   },
   {
@@ -229,7 +229,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: ALLOY_BANDS,
     handbookK: HALF_HARD_GROUP,
     deliveredRadiusShare: fromMemory(0.14, `${V_SHARE}: no figure for this temper, taken as 5052`),
-    din6935: 'no',
+    kFrom: 'handbook',
     note: 'Bend it in O or freshly quenched; welds poorly.',
   },
   {
@@ -246,7 +246,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: SOFT_BANDS,
     handbookK: HALF_HARD_GROUP,
     deliveredRadiusShare: scaledShare(315),
-    din6935: 'no',
+    kFrom: 'handbook',
     note: '',
   },
   {
@@ -263,7 +263,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: SOFT_BANDS,
     handbookK: HALF_HARD_GROUP,
     deliveredRadiusShare: scaledShare(460),
-    din6935: 'no',
+    kFrom: 'handbook',
     note: 'Hard tempers crack along the grain; left under stress it can crack in ammonia.',
   },
   {
@@ -287,7 +287,7 @@ export const SHEET_MATERIALS: readonly SheetMaterial[] = [
     kBands: airBendBands([0.36, 0.42], [0.4, 0.46], [0.44, 0.5]),
     handbookK: null,
     deliveredRadiusShare: scaledShare(345),
-    din6935: 'no',
+    kFrom: 'band',
     note: 'Springs back far; keep chlorinated fluids away; hot cutting discolours it.',
   },
 ];

@@ -1,4 +1,5 @@
-import type { HandbookK, KBands, MetalFamily } from './material';
+import type { TableConfidence } from './figure';
+import type { KBand, MetalFamily, SheetMaterial } from './material';
 import { findMaterial } from './materials';
 import { SHARPEST_RADIUS_OVER_T, usualVOpeningMm } from './v-dies';
 
@@ -20,9 +21,26 @@ export interface ResolvedStock {
   readonly deliveredRadiusMm: number;
   readonly vOpeningMm: number;
   readonly ultimateStrengthMpa: number;
-  readonly kBands: KBands;
-  readonly handbookK: HandbookK | null;
-  readonly din6935: 'covered' | 'customary' | 'no';
+  readonly kBands: readonly KBandRow[];
+  readonly kTable: readonly KRow[];
+}
+
+/** Band of K below a ratio R/T; null = for every larger one. */
+export interface KBandRow {
+  readonly ratioBelow: number | null;
+  readonly low: number;
+  readonly high: number;
+  readonly source: string;
+  readonly confidence: TableConfidence;
+}
+
+/** K of the material itself from one ratio R/T up to another; null = no upper end. */
+export interface KRow {
+  readonly ratioFrom: number;
+  readonly ratioTo: number | null;
+  readonly kFactor: number;
+  readonly source: string;
+  readonly confidence: TableConfidence;
 }
 
 export type StockResolution =
@@ -66,11 +84,35 @@ export function resolveStock(choice: SheetChoice): StockResolution {
       ),
       vOpeningMm,
       ultimateStrengthMpa: material.ultimateMpa.value,
-      kBands: material.kBands,
-      handbookK: material.handbookK,
-      din6935: material.din6935,
+      kBands: kBandRows(material),
+      kTable: kRows(material),
     },
   };
+}
+
+function kBandRows(material: SheetMaterial): readonly KBandRow[] {
+  const { belowOne, oneToThree, aboveThree, source, confidence } = material.kBands;
+  return [
+    { ratioBelow: 1, ...belowOne, source, confidence },
+    { ratioBelow: 3, ...oneToThree, source, confidence },
+    { ratioBelow: null, ...aboveThree, source, confidence },
+  ];
+}
+
+/** Empty for steel, so that the standard written for it serves. */
+function kRows(material: SheetMaterial): readonly KRow[] {
+  if (material.kFrom === 'din6935') return [];
+  if (material.kFrom === 'handbook' && material.handbookK !== null) {
+    return [{ ratioFrom: 0, ratioTo: null, ...material.handbookK }];
+  }
+  const { belowOne, oneToThree, aboveThree, confidence } = material.kBands;
+  const middle = (band: KBand) => (band.low + band.high) / 2;
+  const source = 'middle of the band the trade uses for air bends, no source';
+  return [
+    { ratioFrom: 0, ratioTo: 1, kFactor: middle(belowOne), source, confidence },
+    { ratioFrom: 1, ratioTo: 3, kFactor: middle(oneToThree), source, confidence },
+    { ratioFrom: 3, ratioTo: null, kFactor: middle(aboveThree), source, confidence },
+  ];
 }
 
 function unknown(message: string, materialId: string): StockResolution {
