@@ -1,36 +1,55 @@
 const { createCjsPreset } = require('jest-preset-angular/presets');
 
-const shared = { '^@foldwright/shared/(.*)$': '<rootDir>/shared/src/$1', '^@foldwright/server/(.*)$': '<rootDir>/server/src/$1' };
-// Types are checked by `tsc -b`; here each file is only transpiled, which keeps the suite fast.
-const transpile = { '^.+\\.ts$': ['ts-jest', { tsconfig: '<rootDir>/tsconfig.jest.json', diagnostics: false }] };
+const paths = {
+  '^@foldwright/shared/(.*)$': '<rootDir>/shared/src/$1',
+  '^@foldwright/server/(.*)$': '<rootDir>/server/src/$1',
+};
 
-/** Three projects: pure and server code, code that needs the database, and the Angular application. */
+const node = {
+  rootDir: __dirname,
+  testEnvironment: 'node',
+  // Types are checked by `tsc -b`; here each file is only transpiled, which keeps the suite fast.
+  transform: {
+    '^.+\\.ts$': ['ts-jest', { tsconfig: '<rootDir>/tsconfig.jest.json', diagnostics: false }],
+    'server/src/setup/.+\\.mjs$': '<rootDir>/test/support/esm-transform.cjs',
+  },
+  moduleNameMapper: paths,
+};
+
+/** One cluster and one migrated template per call of jest, however many of these projects run. */
+const withDatabase = {
+  ...node,
+  globalSetup: '<rootDir>/test/support/database-setup.cjs',
+  globalTeardown: '<rootDir>/test/support/database-teardown.cjs',
+};
+
+/** Code that needs nothing but Node; code that needs the database; journeys through the built product; the application. */
 module.exports = {
   projects: [
     {
+      ...node,
       displayName: 'node',
-      rootDir: __dirname,
-      testEnvironment: 'node',
-      testMatch: ['<rootDir>/shared/src/**/*.test.ts', '<rootDir>/server/src/**/*.test.ts', '<rootDir>/test/cross/**/*.test.ts'],
-      testPathIgnorePatterns: ['\\.db\\.test\\.ts$'],
-      transform: transpile,
-      moduleNameMapper: shared,
+      testMatch: [
+        '<rootDir>/shared/src/**/*.test.ts',
+        '<rootDir>/server/src/**/*.test.ts',
+        '<rootDir>/test/cross/**/*.test.ts',
+        '<rootDir>/test/setup/**/*.test.ts',
+      ],
+      testPathIgnorePatterns: ['/node_modules/', '\\.db\\.test\\.ts$', '\\.e2e\\.test\\.ts$'],
     },
     {
+      ...withDatabase,
       displayName: 'database',
-      rootDir: __dirname,
-      testEnvironment: 'node',
-      testMatch: ['<rootDir>/server/src/**/*.db.test.ts', '<rootDir>/test/api/**/*.test.ts'],
-      transform: transpile,
-      moduleNameMapper: shared,
+      testMatch: [
+        '<rootDir>/server/src/**/*.db.test.ts',
+        '<rootDir>/test/setup/**/*.db.test.ts',
+        '<rootDir>/test/api/**/*.test.ts',
+      ],
     },
     {
+      ...withDatabase,
       displayName: 'e2e',
-      rootDir: __dirname,
-      testEnvironment: 'node',
-      testMatch: ['<rootDir>/test/e2e/**/*.test.ts'],
-      transform: transpile,
-      moduleNameMapper: shared,
+      testMatch: ['<rootDir>/test/e2e/**/*.test.ts', '<rootDir>/test/setup/**/*.e2e.test.ts'],
     },
     {
       displayName: 'web',
@@ -39,7 +58,7 @@ module.exports = {
       testMatch: ['<rootDir>/projects/**/*.spec.ts'],
       setupFilesAfterEnv: ['<rootDir>/projects/foldwright/jest-setup.ts'],
       transformIgnorePatterns: ['node_modules/(?!(.*\\.mjs$|three/|@mdi/js/|@angular/common/locales/.*\\.js$))'],
-      moduleNameMapper: { ...shared, '^@foldwright/ui/(.*)$': '<rootDir>/projects/ui/src/$1' },
+      moduleNameMapper: { ...paths, '^@foldwright/ui/(.*)$': '<rootDir>/projects/ui/src/$1' },
     },
   ],
 };
