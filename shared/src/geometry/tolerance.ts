@@ -1,0 +1,17 @@
+/** Two positions closer than this are the same point: numerical noise of double arithmetic on parts up to some metres, mm. */
+export const COINCIDENT_MM = 1e-6;
+
+/** A line drawn by hand or traced may miss the edge it is meant to reach by this much and is still taken to reach it, mm. */
+export const JOIN_MM = 0.5;
+
+/** Largest distance between an arc and the chords that stand for it, where an algorithm or a screen needs chords, mm. */
+export const CHORD_MM = 0.05;
+
+/** Edges shorter than this cannot be drawn, cut or chosen on purpose, mm. */
+export const TINY_EDGE_MM = 1e-4;
+
+/** Areas below this are left-overs of arithmetic, mm2. */
+export const TINY_AREA_MM2 = 1e-9;
+
+/** Angles that differ by less are equal, degrees. */
+export const COINCIDENT_DEG = 1e-9;
