@@ -71,7 +71,15 @@ export function makeDxf(input: DocumentInput): Promise<Buffer> {
   for (const entity of plan) drawEntity(drawing, entity);
   drawing.setActiveLayer('NOTES');
   const note = `${input.partNumber} ${revisionWords(input)}, ${stockWords(input)}, face A up, mm`;
-  drawing.drawText(rounded(flat.bounds.min.x), rounded(flat.bounds.min.y - 8), 4, 0, plainText(note), 'left', 'baseline');
+  drawing.drawText(
+    rounded(flat.bounds.min.x),
+    rounded(flat.bounds.min.y - 8),
+    4,
+    0,
+    plainText(note),
+    'left',
+    'baseline',
+  );
   return Promise.resolve(Buffer.from(`${drawing.toDxfString()}\n`, 'latin1'));
 }
 

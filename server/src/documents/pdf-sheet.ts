@@ -90,7 +90,12 @@ export class PdfSheet {
 
   rectangle(at: Point, widthMm: number, heightMm: number, style: StrokeStyle & { readonly fill?: string }): void {
     const draw = (): PDFKit.PDFDocument =>
-      this.document.rect(this.x(at), this.y(at) - heightMm * POINTS_PER_MM, widthMm * POINTS_PER_MM, heightMm * POINTS_PER_MM);
+      this.document.rect(
+        this.x(at),
+        this.y(at) - heightMm * POINTS_PER_MM,
+        widthMm * POINTS_PER_MM,
+        heightMm * POINTS_PER_MM,
+      );
     if (style.fill !== undefined) draw().fill(style.fill);
     if (style.widthMm > 0) this.stroke(style, draw);
   }
@@ -102,7 +107,11 @@ export class PdfSheet {
   polygon(points: readonly Point[], fill: string): void {
     const corners = points.map((point): [number, number] => [this.x(point), this.y(point)]);
     // A hairline of the same colour closes the seams that renderers leave between neighbouring faces.
-    this.document.lineWidth(0.2).lineJoin('round').polygon(...corners).fillAndStroke(fill, fill);
+    this.document
+      .lineWidth(0.2)
+      .lineJoin('round')
+      .polygon(...corners)
+      .fillAndStroke(fill, fill);
   }
 
   /** Closed chain of lines and arcs after `place` has put it on the page (a similarity that keeps orientation). */
@@ -186,7 +195,10 @@ export class PdfSheet {
 
   private stroke(style: StrokeStyle, draw: () => void): void {
     this.document.save();
-    this.document.lineWidth(style.widthMm * POINTS_PER_MM).strokeColor(style.colour ?? '#22201D').lineJoin('round');
+    this.document
+      .lineWidth(style.widthMm * POINTS_PER_MM)
+      .strokeColor(style.colour ?? '#22201D')
+      .lineJoin('round');
     if (style.dashMm) {
       this.document.dash(style.dashMm.map((length) => length * POINTS_PER_MM));
     }

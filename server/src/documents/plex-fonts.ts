@@ -24,7 +24,11 @@ function findFontsFolder(): string {
 /** File of a cut; `extended` is the subset with the Latin letters beyond Western Europe. */
 export function plexFile(font: PlexFont, subset: 'latin' | 'extended' = 'latin'): string {
   const name = subset === 'latin' ? PLEX[font] : PLEX[font].replace('-latin-', '-latin-ext-');
-  return path.join(findFontsFolder(), name.startsWith('ibm-plex-mono') ? 'ibm-plex-mono' : 'ibm-plex-sans', `${name}.woff2`);
+  return path.join(
+    findFontsFolder(),
+    name.startsWith('ibm-plex-mono') ? 'ibm-plex-mono' : 'ibm-plex-sans',
+    `${name}.woff2`,
+  );
 }
 
 export interface FontRun {
@@ -33,7 +37,8 @@ export interface FontRun {
 }
 
 // What the Latin subset holds (its published unicode range, less what its files turn out to lack).
-const IN_LATIN = /[\u0020-\u007e\u00a0-\u00ff\u0131\u0152\u0153\u02c6\u02da\u02dc\u2013\u2014\u2018-\u201a\u201c-\u201e\u2020-\u2022\u2026\u2030\u2039\u203a\u20ac\u2122\u2212]/;
+const IN_LATIN =
+  /[\u0020-\u007e\u00a0-\u00ff\u0131\u0152\u0153\u02c6\u02da\u02dc\u2013\u2014\u2018-\u201a\u201c-\u201e\u2020-\u2022\u2026\u2030\u2039\u203a\u20ac\u2122\u2212]/;
 const IN_EXTENDED = /[\u0100-\u0130\u0132-\u0151\u0154-\u017f\u0218-\u021b\u1e80-\u1e85\u1ef2\u1ef3]/;
 
 /**

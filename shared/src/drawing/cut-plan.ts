@@ -69,19 +69,20 @@ export function planCutFile(flat: FlatPattern): readonly CutEntity[] {
   return [
     loopEntity(flat.outer, 'OUTLINE'),
     ...flat.cutouts.map((loop) => loopEntity(loop, 'OPENING')),
-    ...flat.holes.map(
-      (hole): CutEntity => ({ kind: 'circle', layer: 'OPENING', centre: hole.centre, diameterMm: hole.diameterMm }),
-    ),
+    ...flat.holes.map((hole): CutEntity => ({
+      kind: 'circle',
+      layer: 'OPENING',
+      centre: hole.centre,
+      diameterMm: hole.diameterMm,
+    })),
     ...flat.slots.map((slot) => slotEntity(slot.from, slot.to, slot.widthMm)),
     ...flat.bends.flatMap((bend) =>
-      bend.centreLines.map(
-        (line): CutEntity => ({
-          kind: 'line',
-          layer: bend.direction === 'towards' ? 'FOLD-TOWARD' : 'FOLD-AWAY',
-          from: line.from,
-          to: line.to,
-        }),
-      ),
+      bend.centreLines.map((line): CutEntity => ({
+        kind: 'line',
+        layer: bend.direction === 'towards' ? 'FOLD-TOWARD' : 'FOLD-AWAY',
+        from: line.from,
+        to: line.to,
+      })),
     ),
   ];
 }
