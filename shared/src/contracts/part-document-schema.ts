@@ -148,14 +148,30 @@ export const partDocumentSchema = z.strictObject({
 
 export const stockRoleSchema = z.enum(['trial', 'production']);
 
+const listPlace = z.exactOptional(z.int().check(z.gte(0), z.lte(4000)));
 const sliceSchema = z.discriminatedUnion('slice', [
   z.strictObject({ slice: z.literal('stock'), role: stockRoleSchema, value: sheetStockSchema }),
   z.strictObject({ slice: z.literal('template'), value: z.nullable(templateSchema) }),
   z.strictObject({ slice: z.literal('calibration'), value: calibrationSchema }),
   z.strictObject({ slice: z.literal('outer'), value: outlineLoopSchema }),
-  z.strictObject({ slice: z.literal('cutout'), id: entityId, value: z.nullable(outlineLoopSchema) }),
-  z.strictObject({ slice: z.literal('feature'), id: entityId, value: z.nullable(featureSchema) }),
-  z.strictObject({ slice: z.literal('bend'), id: entityId, value: z.nullable(bendDeclarationSchema) }),
+  z.strictObject({
+    slice: z.literal('cutout'),
+    id: entityId,
+    value: z.nullable(outlineLoopSchema),
+    index: listPlace,
+  }),
+  z.strictObject({
+    slice: z.literal('feature'),
+    id: entityId,
+    value: z.nullable(featureSchema),
+    index: listPlace,
+  }),
+  z.strictObject({
+    slice: z.literal('bend'),
+    id: entityId,
+    value: z.nullable(bendDeclarationSchema),
+    index: listPlace,
+  }),
   z.strictObject({ slice: z.literal('reliefs'), value: reliefSettingsSchema }),
   z.strictObject({ slice: z.literal('baseAnchor'), value: pointSchema }),
   z.strictObject({ slice: z.literal('making'), value: makingSchema }),

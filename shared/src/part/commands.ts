@@ -1,16 +1,28 @@
-import type { BendDeclaration, Feature, HolePurpose, Layout, OutlineEdge, OutlineLoop, ReliefSettings } from '../bending/layout';
+import type {
+  BendDeclaration,
+  Feature,
+  HolePurpose,
+  Layout,
+  OutlineEdge,
+  OutlineLoop,
+  ReliefSettings,
+} from '../bending/layout';
 import type { Point } from '../geometry/point';
 import type { DeclaredUse, Making, PartDocument, SheetStock, StockRole, Template } from './part-document';
 
-/** Part of a document that a revert can put back on its own, so that undo never touches what somebody else changed. */
+/**
+ * Part of a document that a revert can put back on its own, so that undo never touches what somebody else changed.
+ * `index` is the place in its list that a thing which is put back takes (last where absent): names such as H3 follow the
+ * order, so an undone removal has to give the old order back.
+ */
 export type DocumentSlice =
   | { readonly slice: 'stock'; readonly role: StockRole; readonly value: SheetStock }
   | { readonly slice: 'template'; readonly value: Template | null }
   | { readonly slice: 'calibration'; readonly value: PartDocument['calibration'] }
   | { readonly slice: 'outer'; readonly value: OutlineLoop }
-  | { readonly slice: 'cutout'; readonly id: string; readonly value: OutlineLoop | null }
-  | { readonly slice: 'feature'; readonly id: string; readonly value: Feature | null }
-  | { readonly slice: 'bend'; readonly id: string; readonly value: BendDeclaration | null }
+  | { readonly slice: 'cutout'; readonly id: string; readonly value: OutlineLoop | null; readonly index?: number }
+  | { readonly slice: 'feature'; readonly id: string; readonly value: Feature | null; readonly index?: number }
+  | { readonly slice: 'bend'; readonly id: string; readonly value: BendDeclaration | null; readonly index?: number }
   | { readonly slice: 'reliefs'; readonly value: ReliefSettings }
   | { readonly slice: 'baseAnchor'; readonly value: Point }
   | { readonly slice: 'making'; readonly value: Making }
@@ -33,7 +45,12 @@ export type PartCommand =
   | { readonly kind: 'moveVertex'; readonly edgeId: string; readonly to: Point }
   | { readonly kind: 'insertVertex'; readonly edgeId: string; readonly newEdge: OutlineEdge }
   | { readonly kind: 'removeVertex'; readonly edgeId: string }
-  | { readonly kind: 'setEdgeLength'; readonly edgeId: string; readonly lengthMm: number; readonly hold: 'start' | 'end' }
+  | {
+      readonly kind: 'setEdgeLength';
+      readonly edgeId: string;
+      readonly lengthMm: number;
+      readonly hold: 'start' | 'end';
+    }
   | { readonly kind: 'slideEdge'; readonly edgeId: string; readonly byMm: number }
   | { readonly kind: 'setEdgeBulge'; readonly edgeId: string; readonly bulge: number }
   | { readonly kind: 'roundCorner'; readonly edgeId: string; readonly radiusMm: number; readonly newEdgeId: string }
@@ -51,6 +68,11 @@ export type PartCommand =
   | { readonly kind: 'setBaseAnchor'; readonly to: Point }
   | { readonly kind: 'setMaking'; readonly making: Making }
   | { readonly kind: 'setDeclaredUses'; readonly uses: readonly DeclaredUse[] }
-  | { readonly kind: 'revert'; readonly reason: 'undo' | 'redo'; readonly of: string; readonly changes: readonly SliceChange[] };
+  | {
+      readonly kind: 'revert';
+      readonly reason: 'undo' | 'redo';
+      readonly of: string;
+      readonly changes: readonly SliceChange[];
+    };
 
 export type PartCommandKind = PartCommand['kind'];

@@ -40,4 +40,5 @@ export interface PartDocument {
   readonly declaredUses: readonly DeclaredUse[];
 }
 
-export type DeclaredUse = 'vehicle' | 'fuel' | 'pressure' | 'heat' | 'vibration' | 'lifting-people' | 'seat' | 'steering' | 'brakes';
+export type DeclaredUse =
+  'vehicle' | 'fuel' | 'pressure' | 'heat' | 'vibration' | 'lifting-people' | 'seat' | 'steering' | 'brakes';
