@@ -1,0 +1,21 @@
+import type { Transaction } from 'sequelize';
+import type { Models, WorkshopRows } from '../models/all-models';
+import { workshopRows } from '../models/all-models';
+
+/**
+ * One workshop inside one transaction. Row-level security in the database holds the transaction to the same workshop,
+ * so a statement written without the repository still sees nothing else.
+ */
+export interface WorkshopScope {
+  readonly workshopId: string;
+  readonly transaction: Transaction;
+  /** One repository for each table that belongs to workshops. */
+  readonly rows: WorkshopRows;
+  /** Tables outside of workshops (users), to be read with `transaction`. */
+  readonly models: Models;
+}
+
+/** Repositories of all tables with a workshop, bound to one workshop and one transaction. */
+export function scopeOf(models: Models, workshopId: string, transaction: Transaction): WorkshopScope {
+  return { workshopId, transaction, models, rows: workshopRows(models, workshopId, transaction) };
+}
