@@ -113,7 +113,7 @@ const POLICIES = `
 
 /** The queue's own plan, without its transaction: the migration has one. Queues are made here because only the owner may. */
 function queuePlan(): string {
-  return PgBoss.getConstructionPlans('pgboss').replace(/^\s*(BEGIN|COMMIT);?\s*$/gm, '');
+  return PgBoss.getConstructionPlans('pgboss').replace(/^\s*(BEGIN|COMMIT);\s*$/gm, '');
 }
 
 const QUEUE_RIGHTS = `
