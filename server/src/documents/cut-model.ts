@@ -65,7 +65,6 @@ export function buildCutModel(plan: readonly CutEntity[]): makerjs.IModel {
 export function measureCutModel(model: makerjs.IModel): Bounds | null {
   const extents = makerjs.measure.modelExtents(model);
   if (!extents) return null;
-  const [minX = 0, minY = 0] = extents.low;
-  const [maxX = 0, maxY = 0] = extents.high;
-  return { min: { x: minX, y: minY }, max: { x: maxX, y: maxY } };
+  const point = (corner: makerjs.IPoint): Point => ({ x: corner[0] ?? NaN, y: corner[1] ?? NaN });
+  return { min: point(extents.low), max: point(extents.high) };
 }

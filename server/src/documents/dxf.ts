@@ -33,16 +33,15 @@ function assertSameExtents(kernel: Bounds, measured: Bounds | null): void {
   if (differs) throw new Error('The cut file’s extents differ from the flat pattern’s; it was not written');
 }
 
+/** The writer reads the bulge from a corner's third place; its typings know only two. */
+const withBulge = (corner: [number, number], bulge: number): [number, number] => Object.assign(corner, { 2: bulge });
+
 function drawEntity(drawing: DxfDrawing, entity: CutEntity): void {
   drawing.setActiveLayer(entity.layer);
   switch (entity.kind) {
     case 'contour':
       drawing.drawPolyline(
-        entity.corners.map((corner): [number, number, number] => [
-          rounded(corner.at.x),
-          rounded(corner.at.y),
-          corner.bulge,
-        ]),
+        entity.corners.map((corner) => withBulge([rounded(corner.at.x), rounded(corner.at.y)], corner.bulge)),
         true,
       );
       return;
