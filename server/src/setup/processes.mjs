@@ -67,7 +67,8 @@ export async function whileLocked(lock, action, { patienceMs = 600_000 } = {}) {
       if (error.code !== 'EEXIST') throw error;
       const holder = readLink(lock);
       if (holder !== undefined && !isRunning(holder)) fs.rmSync(lock, { force: true });
-      else if (Date.now() > deadline) throw new Error(`Another process (${holder}) has held ${lock} for too long.`);
+      else if (Date.now() > deadline)
+        throw new Error(`Another process (${holder}) has held ${lock} for too long.`, { cause: error });
       else await pause(100);
     }
   }
