@@ -28,6 +28,13 @@ export async function choosePorts(given, { dataDir }) {
   return ports;
 }
 
+/** Where the web process answers on this machine, whatever name the world knows it by. */
+export function ownAddress(given, ports) {
+  const host = given.FOLDWRIGHT_HOST ?? '127.0.0.1';
+  const here = { '0.0.0.0': '127.0.0.1', '::': '[::1]' }[host] ?? (host.includes(':') ? `[${host}]` : host);
+  return `http://${here}:${ports.web}`;
+}
+
 /**
  * The environment of the product's own processes.
  * @param {Record<string, string>} given settings from outside, which win
@@ -39,7 +46,7 @@ export function productEnvironment(given, places, ports, database) {
   return {
     ...keptSecrets(places.dataDir),
     FOLDWRIGHT_PORT: String(ports.web),
-    FOLDWRIGHT_PUBLIC_URL: loopback(ports.web),
+    FOLDWRIGHT_PUBLIC_URL: ownAddress(given, ports),
     DATABASE_URL: database.application,
     PAYMENT_HOST_URL: loopback(ports.payments),
     CUTTING_SERVICE_URL: loopback(ports.cutting),
@@ -57,7 +64,7 @@ export function productEnvironment(given, places, ports, database) {
  * @returns {{ program: string, env: Record<string, string> }[]}
  */
 export function standIns(given, places, ports, product) {
-  const own = `http://127.0.0.1:${ports.web}`;
+  const own = ownAddress(given, ports);
   const services = [
     {
       program: 'payment-host',

@@ -1,5 +1,6 @@
 // What may be set from the environment, and what is said when a setting cannot be used.
 import { randomBytes } from 'node:crypto';
+import net from 'node:net';
 import path from 'node:path';
 import { dataDirectory, ensureDirectory, readJson, ROOT, writeJson } from './places.mjs';
 
@@ -31,6 +32,12 @@ const secret = (least) => (text) => (text.length >= least ? undefined : `must ha
 
 const directory = (text) => (text.includes('\0') ? 'must be the path of a folder' : undefined);
 
+const oneOf = (choices) => (text) => (choices.includes(text) ? undefined : `must be one of ${choices.join(', ')}`);
+
+const count = (text) => (/^[1-9]\d{0,8}$/.test(text) ? undefined : 'must be a whole number, at least 1');
+
+const host = (text) => (net.isIP(text) > 0 ? undefined : 'must be the number of a network address, such as 127.0.0.1');
+
 const sender = (text) =>
   /^[^\s@<>]+@[^\s@<>]+$/.test(text) || /^[^<>]*<[^\s@<>]+@[^\s@<>]+>$/.test(text)
     ? undefined
@@ -42,8 +49,13 @@ const sender = (text) =>
  */
 const SETTINGS = {
   FOLDWRIGHT_PORT: { judge: port },
+  FOLDWRIGHT_HOST: { judge: host },
   FOLDWRIGHT_PUBLIC_URL: { judge: address(['http', 'https']) },
   FOLDWRIGHT_DATA_DIR: { judge: directory },
+  FOLDWRIGHT_REQUESTS_PER_MINUTE: { judge: count },
+  FOLDWRIGHT_SEED_DEMO: { judge: oneOf(['yes', 'no']) },
+  LOG_LEVEL: { judge: oneOf(['fatal', 'error', 'warn', 'info', 'debug', 'silent']) },
+  NODE_ENV: { judge: oneOf(['development', 'production', 'test']) },
   DATABASE_URL: { judge: address(['postgres', 'postgresql']), isSecret: true, needs: ['DATABASE_OWNER_URL'] },
   DATABASE_OWNER_URL: { judge: address(['postgres', 'postgresql']), isSecret: true, needs: ['DATABASE_URL'] },
   SESSION_SECRET: { judge: secret(32), isSecret: true },

@@ -4,7 +4,7 @@ import path from 'node:path';
 import { buildServer, buildWeb, programPath } from './bundle.mjs';
 import { startCluster } from './cluster.mjs';
 import { ensureDebianPackages, MissingPackagesError } from './debian.mjs';
-import { choosePorts, productEnvironment, standIns } from './installation.mjs';
+import { choosePorts, ownAddress, productEnvironment, standIns } from './installation.mjs';
 import { ensurePackages } from './packages.mjs';
 import { ensureDirectory, readJson, ROOT, writeJson } from './places.mjs';
 import { isRunning, pause, processIdentity } from './processes.mjs';
@@ -138,7 +138,7 @@ async function start() {
     }
     const worker = supervisor.keep('worker', ...node('worker', env));
     const web = supervisor.keep('web', ...node('main', env));
-    await untilHealthy(`http://127.0.0.1:${ports.web}`, web);
+    await untilHealthy(ownAddress(given, ports), web);
     publish({ url: env.FOLDWRIGHT_PUBLIC_URL, ports, processes: { web: web.pid, worker: worker.pid } });
   });
 
