@@ -13,7 +13,7 @@ import { drawFlat, labelBends, labelOpenings } from './flat-view';
 import { PdfSheet } from './pdf-sheet';
 
 const BAR_MM = 100;
-const BAR: Parameters<PdfSheet['line']>[2] = { widthMm: 0.25 };
+const BAR = { widthMm: 0.25 } as const;
 const WORDS = { font: 'sans', sizeMm: 2.6 } as const;
 const SMALL = { font: 'sans', sizeMm: 2.2, colour: '#595145' } as const;
 
@@ -23,7 +23,9 @@ function drawScaleBar(sheet: PdfSheet, from: Point, direction: 'across' | 'up'):
     direction === 'across' ? { x: from.x + mm, y: from.y + aside } : { x: from.x - aside, y: from.y + mm };
   sheet.line(along(0, 0), along(BAR_MM, 0), BAR);
   for (let mm = 0; mm <= BAR_MM; mm += 10) {
-    sheet.line(along(mm, 0), along(mm, mm % 50 === 0 ? 3 : 1.8), BAR);
+    // End ticks stand inside, so that the bar measures 100 mm over everything that is printed of it.
+    const inward = mm === 0 ? BAR.widthMm / 2 : mm === BAR_MM ? -BAR.widthMm / 2 : 0;
+    sheet.line(along(mm + inward, 0), along(mm + inward, mm % 50 === 0 ? 3 : 1.8), BAR);
   }
 }
 
