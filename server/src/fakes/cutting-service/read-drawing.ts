@@ -38,7 +38,7 @@ export class UnreadableDrawing extends Error {}
 /** Ends closer than this count as joined: half of what a laser's kerf hides, mm. */
 const JOINED_MM = 0.05;
 const FOLD_LAYERS = ['FOLD-TOWARD', 'FOLD-AWAY'];
-const IGNORED_LAYERS = ['SCRIBE'];
+const IGNORED_LAYERS = ['SCRIBE', 'NOTES'];
 
 type Pair = readonly [code: number, value: string];
 interface Entity {
