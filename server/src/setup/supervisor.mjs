@@ -4,6 +4,7 @@ import fs from 'node:fs';
 import path from 'node:path';
 import { pause, processIdentity, signalGroup } from './processes.mjs';
 
+/** How long a process may take to end in order. */
 const GRACE_MS = 8000;
 const FIRST_PAUSE_MS = 200;
 const LONGEST_PAUSE_MS = 10_000;
@@ -16,8 +17,9 @@ const LOG_LIMIT = 5_000_000;
  * @param {string} options.logs folder for one log per process
  * @param {{tell(message: object): void}} options.watchdog told of every process, for the case that this one is killed
  * @param {(line: string) => void} options.report told when a kept process fell
+ * @param {number} [options.graceMs] how long a process may take to end in order
  */
-export function createSupervisor({ logs, watchdog, report }) {
+export function createSupervisor({ logs, watchdog, report, graceMs = GRACE_MS }) {
   /** Identities of the groups that are running. */
   const groups = new Map();
   let isStopping = false;
@@ -95,7 +97,7 @@ export function createSupervisor({ logs, watchdog, report }) {
     isStopping = true;
     for (const identity of groups.keys()) signalGroup(identity, 'SIGTERM');
     const gone = Promise.all(groups.values());
-    await Promise.race([gone, pause(GRACE_MS)]);
+    await Promise.race([gone, pause(graceMs)]);
     for (const identity of groups.keys()) signalGroup(identity, 'SIGKILL');
     await gone;
   }
