@@ -54,6 +54,7 @@ export const orderEventSchema = z.object({
     'shipped',
     'refused',
     'cancelled',
+    'refunded',
     'mail-sent',
   ]),
   text: z.string(),
