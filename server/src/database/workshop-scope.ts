@@ -1,4 +1,5 @@
 import type { Transaction } from 'sequelize';
+import { QueryTypes } from 'sequelize';
 import type { Models, WorkshopRows } from '../models/all-models';
 import { workshopRows } from '../models/all-models';
 
@@ -13,9 +14,18 @@ export interface WorkshopScope {
   readonly rows: WorkshopRows;
   /** Tables outside of workshops (users), to be read with `transaction`. */
   readonly models: Models;
+  /** One statement in this transaction; answers its rows, still unparsed. */
+  sql(statement: string, bind?: readonly unknown[]): Promise<unknown[]>;
 }
 
 /** Repositories of all tables with a workshop, bound to one workshop and one transaction. */
 export function scopeOf(models: Models, workshopId: string, transaction: Transaction): WorkshopScope {
-  return { workshopId, transaction, models, rows: workshopRows(models, workshopId, transaction) };
+  return {
+    workshopId,
+    transaction,
+    models,
+    rows: workshopRows(models, workshopId, transaction),
+    sql: (statement, bind = []) =>
+      models.sequelize.query(statement, { bind: [...bind], transaction, type: QueryTypes.SELECT }),
+  };
 }

@@ -96,6 +96,14 @@ const TABLES = `
     started_at timestamptz NOT NULL DEFAULT now(),
     beat_at timestamptz NOT NULL DEFAULT now()
   );
+
+  -- Runs with the owner's rights, since old rows of every workshop go; it takes no input, so it can do nothing else.
+  CREATE FUNCTION foldwright_prune() RETURNS void LANGUAGE sql SECURITY DEFINER SET search_path = public, pg_temp AS $$
+    DELETE FROM live_events WHERE created_at < now() - interval '1 day';
+    DELETE FROM idempotency_keys WHERE created_at < now() - interval '7 days';
+    DELETE FROM worker_heartbeats WHERE beat_at < now() - interval '1 day';
+    DELETE FROM rate_limits WHERE expire < extract(epoch FROM now() - interval '1 hour') * 1000;
+  $$;
 `;
 
 // A person sees their own memberships in every workshop, and the names of those workshops.
@@ -136,6 +144,7 @@ export const foundation: Migration = {
   async down({ query }) {
     await query(`
       DROP SCHEMA pgboss CASCADE;
+      DROP FUNCTION foldwright_prune;
       DROP TABLE worker_heartbeats, idempotency_keys, audit_entries, live_events, rate_limits, http_sessions;
       DROP POLICY workshops_own ON workshops;
       DROP TABLE memberships, users, workshops;

@@ -17,6 +17,7 @@ import { defineWorkshop } from './workshop';
 /** Every table of the application on one connection. */
 export function defineModels(sequelize: Sequelize) {
   return {
+    sequelize,
     workshops: defineWorkshop(sequelize),
     users: defineUser(sequelize),
     memberships: defineMembership(sequelize),
