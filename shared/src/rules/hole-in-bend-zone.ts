@@ -1,0 +1,126 @@
+import type { BendZone, Development } from '../bending/development';
+import { loopReach } from '../geometry/loop';
+import type { Loop } from '../geometry/path';
+import type { Point } from '../geometry/point';
+import { dot, scale } from '../geometry/vector';
+import type { PartCommand } from '../part/commands';
+import { formatDecimal } from '../units/length';
+import { type CutOpening, cutSheet } from './cut-openings';
+import type { Finding, Severity } from './finding';
+import { DIE_MOUTH, LIMIT_SLACK_MM, TANGENT_DISTANCE } from './limits';
+import { type RuleContext, layoutShift, listNames, nameOf, placeOfFlat } from './rule-context';
+
+/** An opening that comes too near to one bend. */
+interface Intrusion {
+  readonly opening: CutOpening;
+  readonly zone: BendZone;
+  readonly severity: Severity;
+  /** From the bend's centre to the nearest rim, negative when the opening lies over the centre. */
+  readonly rimFromCentreMm: number;
+  readonly requiredMm: number;
+  /** Unit vector in the flat pattern away from the bend. */
+  readonly away: Point;
+}
+
+/**
+ * Holes, slots and cut-outs near a bend. Within 2 T of a tangent line the opening is pulled out of shape: a blocker. Over
+ * the die's mouth, V/2 from the bend's centre, the metal is not held: a caution. A cut-out that spans the whole mouth has
+ * no rim in it and is a usual relief. Openings count where they lie beside the bend's own length.
+ */
+export function checkHoleInBendZone(context: RuleContext): readonly Finding[] {
+  const { development } = context;
+  if (development === null) return [];
+  const intrusions = cutSheet(context).openings.flatMap((opening) =>
+    development.zones.flatMap((zone) => intrusionOf(development, opening, zone) ?? []),
+  );
+  return groupAlike(intrusions).map((group) => describe(context, development, group));
+}
+
+function intrusionOf(development: Development, opening: CutOpening, zone: BendZone): Intrusion | null {
+  const { thicknessMm, vOpeningMm } = development.stock;
+  const beside = range(opening.loop, zone.along);
+  const bendRange = range(zone.outer, zone.along);
+  if (beside.high <= bendRange.low || beside.low >= bendRange.high) return null;
+  const centre = dot(zone.origin, zone.towardsChild) + zone.bendAllowanceMm / 2;
+  const { low, high } = range(opening.loop, zone.towardsChild);
+  const halfMouthMm = DIE_MOUTH.shareOfV * vOpeningMm;
+  const nearMm = zone.bendAllowanceMm / 2 + TANGENT_DISTANCE.overT * thicknessMm;
+  const clearMm = Math.max(halfMouthMm, nearMm);
+  if (opening.kind === 'cutout' && low <= centre - clearMm && high >= centre + clearMm) return null;
+  const isOnChildSide = (low + high) / 2 >= centre;
+  const rimFromCentreMm = isOnChildSide ? low - centre : centre - high;
+  if (rimFromCentreMm >= clearMm - LIMIT_SLACK_MM) return null;
+  return {
+    opening,
+    zone,
+    severity: rimFromCentreMm < nearMm - LIMIT_SLACK_MM ? 'blocker' : 'caution',
+    rimFromCentreMm,
+    requiredMm: clearMm,
+    away: isOnChildSide ? zone.towardsChild : scale(zone.towardsChild, -1),
+  };
+}
+
+/** Extent of a loop along a direction, exact with arcs. */
+function range(loop: Loop, direction: Point): { readonly low: number; readonly high: number } {
+  return { low: -loopReach(loop, scale(direction, -1)), high: loopReach(loop, direction) };
+}
+
+/** Openings at the same bend, of the same kind and depth, make one finding: a person moves them together. */
+function groupAlike(intrusions: readonly Intrusion[]): readonly (readonly Intrusion[])[] {
+  const groups = new Map<string, Intrusion[]>();
+  for (const intrusion of intrusions) {
+    const { zone, opening, severity, rimFromCentreMm, away } = intrusion;
+    const side = dot(away, zone.towardsChild) > 0 ? 'child' : 'parent';
+    const key = [zone.bendId, opening.kind, severity, side, rimFromCentreMm.toFixed(4)].join(' ');
+    groups.set(key, [...(groups.get(key) ?? []), intrusion]);
+  }
+  return [...groups.values()];
+}
+
+function describe(context: RuleContext, development: Development, group: readonly Intrusion[]): Finding {
+  const [first] = group;
+  if (first === undefined) throw new RangeError('a group of openings has at least one');
+  const { zone, opening, severity, rimFromCentreMm, requiredMm } = first;
+  const mm = (valueMm: number) => formatDecimal(valueMm, 1);
+  const names = group.map(({ opening: { id } }) => nameOf(context, id));
+  const kind = { hole: 'hole', slot: 'slot', cutout: 'cut-out' }[opening.kind];
+  const subject = `${kind}${group.length > 1 ? 's' : ''} ${listNames(names)}`;
+  const bend = nameOf(context, zone.bendId);
+  const { thicknessMm, vOpeningMm } = development.stock;
+  const tangentMm = zone.bendAllowanceMm / 2 + TANGENT_DISTANCE.overT * thicknessMm;
+  const whose = group.length > 1 ? 'Their rims sit' : 'Its rim sits';
+  const isBlocker = severity === 'blocker';
+  const commands = group.flatMap((intrusion) => moveAway(development, intrusion));
+  const shiftMm = requiredMm - rimFromCentreMm;
+  const who = group.length === 1 ? 'it' : group.length === 2 ? 'both' : 'all';
+  return {
+    id: `holeInBendZone-${zone.bendId}-${group.map(({ opening: { id } }) => id).join('-')}`,
+    rule: 'holeInBendZone',
+    severity,
+    title: isBlocker ? `${capital(subject)} would be bent at ${bend}` : `${capital(subject)} may pull oval at ${bend}`,
+    detail: isBlocker
+      ? `${whose} ${mm(rimFromCentreMm)} mm from the centre of ${bend}. The metal is stretched up to ` +
+        `${mm(zone.bendAllowanceMm / 2)} and pulled along up to ${mm(tangentMm)}.`
+      : `${whose} ${mm(rimFromCentreMm)} mm from the centre of ${bend}. The V ${mm(vOpeningMm)} die gapes to ` +
+        `${mm(DIE_MOUTH.shareOfV * vOpeningMm)} on either side, and nothing holds the sheet there.`,
+    foundMm: rimFromCentreMm,
+    requiredMm: isBlocker ? tangentMm : requiredMm,
+    why: isBlocker ? TANGENT_DISTANCE.why : DIE_MOUTH.why,
+    ids: [...group.map(({ opening: { id } }) => id), zone.bendId],
+    at: placeOfFlat(development, opening.centre),
+    advice: `Move ${who} ${formatDecimal(shiftMm, 2)} mm away from the bend, or cut ${who === 'it' ? 'it' : 'them'} after bending.`,
+    mend:
+      commands.length === group.length ? { label: `Move ${who} ${formatDecimal(shiftMm, 2)} mm out`, commands } : null,
+  };
+}
+
+function moveAway(development: Development, intrusion: Intrusion): readonly PartCommand[] {
+  const { opening, away, requiredMm, rimFromCentreMm } = intrusion;
+  if (opening.kind === 'cutout') return [];
+  const by = layoutShift(development, opening.centre, scale(away, requiredMm - rimFromCentreMm));
+  return [{ kind: 'moveFeature', featureId: opening.id, by }];
+}
+
+function capital(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1);
+}
