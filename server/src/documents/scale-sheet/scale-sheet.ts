@@ -37,12 +37,12 @@ function words(layout: ScaleSheetLayout): readonly Words[] {
   return [
     { title: 'Foldwright', lines: [`Scale sheet ${layout.size}, ${layout.variant}`, ground] },
     { title: 'Print at 100 %', lines: ['No fit to page, no scaling.', 'Matt white paper.'] },
-    { title: 'Measure both rulers', lines: ['They should read 100 mm.', 'If not, type what they read.'] },
-    { title: 'Lay the paper flat', lines: ['Tape it down. One template,', 'clear of the markers.'] },
+    { title: 'Check both rulers', lines: ['They should read 100 mm.', 'If not, type what they read.'] },
+    { title: 'Lay the paper flat', lines: ['Tape it down. Keep clear', 'of the markers.'] },
     { title: 'Take the photo', lines: ['From above, all markers in,', 'sharp, even light, no flash.'] },
     { title: 'Press it down', lines: ['The template must touch', 'the paper all round.'] },
     { title: 'Know the thickness', lines: ['Measure the template with', 'callipers and type it in.'] },
-    { title: 'Which way is up', lines: ['The face in the photo is', 'the face you will be asked for.'] },
+    { title: 'Which way is up', lines: ['You will be asked which', 'face the photo shows.'] },
   ];
 }
 
@@ -97,9 +97,9 @@ function writeWords(pdf: PDFKit.PDFDocument, layout: ScaleSheetLayout, box: Page
   const top = layout.heightMm - box.y - box.heightMm;
   const inset = marked ? 7.5 : 0;
   if (marked) drawMark(pdf, box.x + 0.4, top + 0.6, 6, INK);
-  pdf.fillColor(INK).font('title').fontSize(2.9);
+  pdf.fillColor(INK).font('title').fontSize(2.7);
   pdf.text(text.title, box.x + 0.4 + inset, top + (marked ? 1.6 : 0.6), { lineBreak: false });
-  pdf.fillColor(SOFT_INK).font('body').fontSize(2.1);
+  pdf.fillColor(SOFT_INK).font('body').fontSize(2);
   text.lines.forEach((line, index) => {
     pdf.text(line, box.x + 0.4, top + (marked ? 7.8 : 5) + index * 3, { lineBreak: false });
   });
