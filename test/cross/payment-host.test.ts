@@ -4,11 +4,11 @@ import type { AddressInfo } from 'node:net';
 import os from 'node:os';
 import path from 'node:path';
 import Stripe from 'stripe';
-import type { FakeSettings } from '../fake-settings';
-import type { ListeningServer } from '../listening-server';
-import { parseFormBody } from './form-body';
-import { startPaymentHost } from './start-payment-host';
-import { readTestCard } from './test-cards';
+import type { FakeSettings } from '@foldwright/server/fakes/fake-settings';
+import type { ListeningServer } from '@foldwright/server/fakes/listening-server';
+import { parseFormBody } from '@foldwright/server/fakes/payment-host/form-body';
+import { startPaymentHost } from '@foldwright/server/fakes/payment-host/start-payment-host';
+import { readTestCard } from '@foldwright/server/fakes/payment-host/test-cards';
 
 const SECRET = 'whsec_test';
 const CARD = { number: '4242 4242 4242 4242', expiry: '04 / 40', code: '123' };

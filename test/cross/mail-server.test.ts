@@ -2,7 +2,7 @@ import fs from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import nodemailer from 'nodemailer';
-import { startMailServer } from './start-mail-server';
+import { startMailServer } from '@foldwright/server/fakes/mail-server/start-mail-server';
 
 describe('the local mail server', () => {
   it('keeps what it takes, readable again after a restart', async () => {
