@@ -27,6 +27,12 @@ const FAST_SETTINGS = [
   'jit = off',
 ];
 
+/**
+ * What a server says that will start in a moment: the one before it was killed and stays a zombie, whose lock counts,
+ * until its parent takes note; or somebody took the port after it was looked at.
+ */
+const PASSING_TROUBLE = /lock file|shared memory block|could not bind|could not create any TCP\/IP sockets/;
+
 /** The folder of PostgreSQL's programs: the newest version Debian installed, else wherever PATH finds them. */
 export function findPrograms() {
   const debian = '/usr/lib/postgresql';
@@ -172,13 +178,13 @@ export async function startCluster({ home: wish, port: wishedPort, isDisposable 
     ];
     writeAs(account, path.join(data, 'postgresql.auto.conf'), `${settings.join('\n')}\n`, 0o600);
     const log = path.join(home, 'server.log');
+    if (fs.existsSync(log)) fs.renameSync(log, `${log}.old`);
     try {
       runProgram(path.join(programs, 'pg_ctl'), ['-D', data, '-w', '-t', '30', '-l', log, 'start'], context);
       return clusterAt({ ...context, port, wasRunning: false });
     } catch (error) {
-      // A killed server stays a zombie until its parent takes note, and until then its lock file counts; a port may
-      // also have been taken since it was looked at. Both pass.
-      if (attempt === 5) throw error;
+      const said = fs.existsSync(log) ? fs.readFileSync(log, 'utf8').trim() : '';
+      if (attempt === 5 || !PASSING_TROUBLE.test(said)) throw new Error(`${error.message}\n${said}`, { cause: error });
       await pause(1500);
     }
   }
