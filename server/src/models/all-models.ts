@@ -6,12 +6,17 @@ import { defineCommandBatch } from './command-batch';
 import { defineDraft } from './draft';
 import { defineIdempotencyKey } from './idempotency-key';
 import { defineJob } from './job';
+import { defineMail } from './mail';
 import { defineMembership } from './membership';
+import { defineOrder } from './order';
+import { defineOrderEvent } from './order-event';
 import { definePart } from './part';
 import { definePhoto } from './photo';
+import { defineQuote } from './quote';
 import { defineRevision } from './revision';
 import { defineRevisionFile } from './revision-file';
 import { defineUser } from './user';
+import { defineWebhookEvent } from './webhook-event';
 import { defineWorkshop } from './workshop';
 
 /** Every table of the application on one connection. */
@@ -30,6 +35,11 @@ export function defineModels(sequelize: Sequelize) {
     revisionFiles: defineRevisionFile(sequelize),
     photos: definePhoto(sequelize),
     jobs: defineJob(sequelize),
+    quotes: defineQuote(sequelize),
+    orders: defineOrder(sequelize),
+    orderEvents: defineOrderEvent(sequelize),
+    mails: defineMail(sequelize),
+    webhookEvents: defineWebhookEvent(sequelize),
   };
 }
 export type Models = ReturnType<typeof defineModels>;
@@ -48,6 +58,11 @@ export function workshopRows(models: Models, workshopId: string, transaction: Tr
     revisionFiles: of(models.revisionFiles),
     photos: of(models.photos),
     jobs: of(models.jobs),
+    quotes: of(models.quotes),
+    orders: of(models.orders),
+    orderEvents: of(models.orderEvents),
+    mails: of(models.mails),
+    webhookEvents: of(models.webhookEvents),
   };
 }
 export type WorkshopRows = ReturnType<typeof workshopRows>;
