@@ -9,7 +9,7 @@ import { ensurePackages } from './packages.mjs';
 import { ensureDirectory, readJson, ROOT, writeJson } from './places.mjs';
 import { isRunning, pause, processIdentity } from './processes.mjs';
 import { places, readSettings, SettingsError } from './settings.mjs';
-import { createSupervisor, StoppedError } from './supervisor.mjs';
+import { CommandError, createSupervisor, StoppedError } from './supervisor.mjs';
 import { startWatchdog } from './watchdog.mjs';
 
 const DATABASE = 'foldwright';
@@ -102,7 +102,7 @@ async function start() {
   undo.push(() => watchdog.dismiss());
   supervisor = createSupervisor({ logs: where.logs, watchdog, report: say });
   undo.push(() => supervisor.stop());
-  const run = (command, args, options) => supervisor.run('set-up', command, args, { cwd: ROOT, ...options });
+  const run = (command, args, options) => supervisor.run(path.basename(command), command, args, { cwd: ROOT, ...options });
   // Only the migration may know how to sign in as the owner of the tables, so that address is not simply passed on.
   const { DATABASE_OWNER_URL: _, ...inherited } = process.env;
   const node = (program, env) => {
@@ -179,6 +179,7 @@ setInterval(() => {
 const started = start().catch((error) => {
   if (error instanceof StoppedError) return;
   const isPlain = error instanceof SettingsError || error instanceof MissingPackagesError;
-  process.stderr.write(isPlain ? `${error.message}\n` : `\nFoldwright could not start.\n${error.stack}\n`);
+  const words = error instanceof CommandError ? error.message : error.stack;
+  process.stderr.write(isPlain ? `${error.message}\n` : `\nFoldwright could not start: ${words}\n`);
   setImmediate(() => void end(1));
 });

@@ -65,7 +65,7 @@ export function createSupervisor({ logs, watchdog, report, graceMs = GRACE_MS })
     const { ended, tail } = launch(name, command, args, options);
     const { code, reason } = await ended;
     if (isStopping) throw new StoppedError();
-    if (code !== 0) throw new Error(`${name} failed (${reason}):\n${tail()}`);
+    if (code !== 0) throw new CommandError(`${name} failed (${reason}):\n${tail()}`);
     return tail(10_000);
   }
 
@@ -104,6 +104,9 @@ export function createSupervisor({ logs, watchdog, report, graceMs = GRACE_MS })
 
   return { run, keep, stop };
 }
+
+/** A command failed; the message holds what it said last, which tells more than where it was called from. */
+export class CommandError extends Error {}
 
 /** Something was asked for after the stop had begun. */
 export class StoppedError extends Error {
