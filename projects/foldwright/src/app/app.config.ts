@@ -1,13 +1,18 @@
-import { provideHttpClient, withFetch } from '@angular/common/http';
-import { type ApplicationConfig, provideBrowserGlobalErrorListeners } from '@angular/core';
-import { provideRouter, withComponentInputBinding } from '@angular/router';
+import { provideHttpClient, withInterceptors } from '@angular/common/http';
+import { type ApplicationConfig, ErrorHandler, provideBrowserGlobalErrorListeners } from '@angular/core';
+import { TitleStrategy, provideRouter, withComponentInputBinding, withInMemoryScrolling } from '@angular/router';
+import { watchForSignedOut } from './api/signed-out-watch';
 import { routes } from './app.routes';
+import { PageErrorHandler } from './shell/page-error-handler';
+import { PageTitle } from './shell/page-title';
 
-/** What the application is given at start. */
+/** What the application is given at start. Requests go by XMLHttpRequest, because only that tells how far an upload is. */
 export const appConfig: ApplicationConfig = {
   providers: [
     provideBrowserGlobalErrorListeners(),
-    provideHttpClient(withFetch()),
-    provideRouter(routes, withComponentInputBinding()),
+    provideHttpClient(withInterceptors([watchForSignedOut])),
+    provideRouter(routes, withComponentInputBinding(), withInMemoryScrolling({ scrollPositionRestoration: 'enabled' })),
+    { provide: TitleStrategy, useClass: PageTitle },
+    { provide: ErrorHandler, useClass: PageErrorHandler },
   ],
 };

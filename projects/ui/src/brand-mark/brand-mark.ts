@@ -13,7 +13,7 @@ import { ChangeDetectionStrategy, Component, input } from '@angular/core';
       <circle class="hole" cx="18.2" cy="19.5" r="1.7" />
     </svg>
     @if (withName()) {
-      <span>Foldwright</span>
+      <span class="name">Foldwright</span>
     }
   `,
   styleUrl: './brand-mark.scss',

@@ -38,6 +38,7 @@ const MARK_WORDS: Readonly<Record<RouteMark, string>> = { punched: 'done', ring:
   templateUrl: './route-strip.html',
   styleUrl: './route-strip.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
+  host: { '(keydown)': 'walk($event)' },
 })
 export class RouteStrip {
   private readonly host: HTMLElement = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;

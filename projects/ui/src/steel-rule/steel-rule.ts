@@ -44,6 +44,7 @@ export interface RuleTool {
   templateUrl: './steel-rule.html',
   styleUrl: './steel-rule.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
+  host: { '(keydown)': 'walk($event)' },
 })
 export class SteelRule {
   private readonly host: HTMLElement = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;

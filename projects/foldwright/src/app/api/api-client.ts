@@ -10,7 +10,7 @@ import type {
 import { readSession } from '@foldwright/shared/contracts/session';
 import { type Observable, catchError, firstValueFrom, from, map, of, switchMap } from 'rxjs';
 import * as z from 'zod/mini';
-import { ApiProblem, problemFromError, unreadableAnswer } from './api-problem';
+import { type ApiProblem, problemFromError, unreadableAnswer } from './api-problem';
 import { type UrlValue, routeUrl } from './route-url';
 import { SessionToken } from './session-token';
 

@@ -1,5 +1,5 @@
 import { Injectable, signal } from '@angular/core';
-import { ApiProblem, problemFromError } from './api-problem';
+import { type ApiProblem, problemFromError } from './api-problem';
 
 /** Something to tell a person that belongs to no field of the page. */
 export interface Notice {
@@ -27,6 +27,18 @@ export class Notices {
   /** Shows a sentence about something that went well or is worth knowing. */
   showNews(title: string, detail = ''): void {
     this.shown.set({ tone: 'know', title, detail, kept: null, next: null, requestId: null });
+  }
+
+  /** Owns up to a fault of the page itself. */
+  showFault(): void {
+    this.shown.set({
+      tone: 'stop',
+      title: 'This page stumbled',
+      detail: 'Something in it broke that should not have.',
+      kept: 'What was stored before is kept.',
+      next: 'Load the page again, then repeat the last step.',
+      requestId: null,
+    });
   }
 
   dismiss(): void {
