@@ -1,4 +1,4 @@
-import type { CardReading, Layout } from '../bending/layout';
+import type { BendDirection, CardReading, Layout } from '../bending/layout';
 
 /** A sheet to make the part from. */
 export interface SheetStock {
@@ -17,6 +17,8 @@ export interface Template {
   readonly kind: TemplateKind;
   readonly thicknessMm: number;
   readonly reading: CardReading;
+  /** Way its flanges fold as face A shows: what a new bend is proposed as. Absent when nobody said. */
+  readonly flangesFold?: BendDirection;
 }
 
 export type StockRole = 'trial' | 'production';

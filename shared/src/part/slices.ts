@@ -8,7 +8,6 @@ import type { PartDocument } from './part-document';
  * What differs between two documents, slice by slice: each change carries the slice before and after. Holes, slots,
  * cut-outs and bends are compared by id; a thing that is new in `after` brings its place in the list.
  * @returns changes that, applied in order to `before` by a revert, give `after`; empty when they are equal.
- * A mere change of order within a list is not a change.
  */
 export function diffDocuments(before: PartDocument, after: PartDocument): readonly SliceChange[] {
   const changes: SliceChange[] = [];
@@ -60,20 +59,23 @@ interface Identified {
 type Place = { readonly index: number } | Record<string, never>;
 const ANYWHERE: Place = {};
 
-/** Removals first, then additions in rising order of place, so that each place holds when it is used. */
+/**
+ * Removals first, then additions in rising order of place, so that each place holds when it is used. A thing that changed
+ * its place among the others is taken out and put in again.
+ */
 function diffList<Item extends Identified>(
   before: readonly Item[],
   after: readonly Item[],
   slice: (id: string, value: Item | null, place: Place) => DocumentSlice,
 ): readonly SliceChange[] {
-  const inBefore = new Set(before.map((item) => item.id));
+  const steady = steadyIds(before, after);
   const inAfter = new Map(after.map((item) => [item.id, item]));
   const removed: SliceChange[] = [];
   const changed: SliceChange[] = [];
   const added: SliceChange[] = [];
   before.forEach((item, index) => {
     const { id } = item;
-    const other = inAfter.get(id);
+    const other = steady.has(id) ? inAfter.get(id) : undefined;
     if (other === undefined) {
       removed.push({ before: slice(id, item, { index }), after: slice(id, null, ANYWHERE) });
     } else if (!isSameJson(item, other)) {
@@ -82,9 +84,33 @@ function diffList<Item extends Identified>(
   });
   after.forEach((item, index) => {
     const { id } = item;
-    if (!inBefore.has(id)) added.push({ before: slice(id, null, ANYWHERE), after: slice(id, item, { index }) });
+    if (!steady.has(id)) added.push({ before: slice(id, null, ANYWHERE), after: slice(id, item, { index }) });
   });
   return [...removed, ...changed, ...added];
+}
+
+/** Ids that both lists have in the same order among themselves: the longest such run. */
+function steadyIds(before: readonly Identified[], after: readonly Identified[]): ReadonlySet<string> {
+  const placeAfter = new Map(after.map(({ id }, index) => [id, index]));
+  const common = before.flatMap(({ id }) => {
+    const place = placeAfter.get(id);
+    return place === undefined ? [] : [{ id, place }];
+  });
+  const runs: { readonly length: number; readonly from: number }[] = [];
+  let best = -1;
+  common.forEach(({ place }, index) => {
+    let run = { length: 1, from: -1 };
+    for (let earlier = 0; earlier < index; earlier += 1) {
+      const candidate = runs[earlier];
+      if (candidate === undefined || (common[earlier]?.place ?? place) >= place) continue;
+      if (candidate.length + 1 > run.length) run = { length: candidate.length + 1, from: earlier };
+    }
+    runs.push(run);
+    if (run.length > (runs[best]?.length ?? 0)) best = index;
+  });
+  const steady = new Set<string>();
+  for (let index = best; index >= 0; index = runs[index]?.from ?? -1) steady.add(common[index]?.id ?? '');
+  return steady;
 }
 
 /**

@@ -46,7 +46,8 @@ export function shareMinor(amountMinor: number, basisPoints: number): number {
   if (!Number.isInteger(basisPoints)) throw new RangeError(`basis points must be whole: ${basisPoints}`);
   const product = amountMinor * basisPoints;
   const magnitude = Math.floor((Math.abs(product) + 5000) / 10000);
-  return product < 0 ? -magnitude : magnitude;
+  // No -0: it would not equal 0 where rows are compared.
+  return product < 0 && magnitude > 0 ? -magnitude : magnitude;
 }
 
 /**
