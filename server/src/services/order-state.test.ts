@@ -17,13 +17,16 @@ const fact = (kind: OrderEventKind, minute: number, changes: Partial<OrderFact> 
 const PLACED = fact('placed', 0);
 const OPENED = fact('checkout-opened', 1, { key: 'checkout-opened:cs_1' });
 const FAILED = fact('payment-failed', 2, { key: 'payment-failed:evt_1', details: { reason: 'declined' } });
-const PAID = fact('paid', 3, { details: { paymentId: 'pi_1' } });
+const PAID = fact('paid', 3, { key: 'paid:pi_1', details: { paymentId: 'pi_1' } });
 const SENT = fact('sent-to-cutter', 4);
 const ACCEPTED = fact('accepted', 5);
 const CUTTING = fact('cutting', 6);
 const BENDING = fact('bending', 7);
 const SHIPPED = fact('shipped', 8, { details: { trackingCode: 'AM 1' } });
 const REFUSED = fact('refused', 6, { details: { reason: 'no sheet' } });
+
+const BACK = fact('refunded', 9, { key: 'refunded:pi_1', details: { paymentId: 'pi_1' } });
+const PAID_TWICE = fact('paid', 4, { key: 'paid:pi_2', details: { paymentId: 'pi_2' } });
 
 const join = (tellings: readonly OrderFact[]) => tellings.reduce(joinFact, [PLACED] as readonly OrderFact[]);
 const outcome = (tellings: readonly OrderFact[]) => {
@@ -53,7 +56,7 @@ describe('the state of an order', () => {
     expect(tried).toBe(40320);
     expect(outcome(told)).toMatchObject({
       standing: { state: 'shipped', paymentState: 'paid', trackingCode: 'AM 1', revision: 9 },
-      due: { submission: false, refund: null },
+      due: { submission: false, refunds: [] },
     });
     expect(outcome(told).timeline.map(({ kind }) => kind)).toEqual([
       'placed',
@@ -75,7 +78,7 @@ describe('the state of an order', () => {
   });
 
   it('ends the same whatever is doubled, mixed or told with other times', () => {
-    const pool = [OPENED, FAILED, PAID, SENT, ACCEPTED, CUTTING, BENDING, SHIPPED, REFUSED];
+    const pool = [OPENED, FAILED, PAID, SENT, ACCEPTED, CUTTING, BENDING, SHIPPED, REFUSED, PAID_TWICE, BACK];
     const retold = pool.map((one) => ({ ...one, at: new Date(one.at.getTime() + 500), source: `${one.source}-again` }));
     const telling = fc.constantFrom(...pool, ...retold);
     fc.assert(
@@ -95,22 +98,28 @@ describe('the state of an order', () => {
   });
 
   it('says once that there is something to hand over, until it was handed over', () => {
-    expect(outcome([]).due).toEqual({ submission: false, refund: null });
-    expect(outcome([PAID]).due).toEqual({ submission: true, refund: null });
-    expect(outcome([PAID, SENT]).due).toEqual({ submission: false, refund: null });
+    expect(outcome([]).due).toEqual({ submission: false, refunds: [] });
+    expect(outcome([PAID]).due).toEqual({ submission: true, refunds: [] });
+    expect(outcome([PAID, SENT]).due).toEqual({ submission: false, refunds: [] });
   });
 
   it('sends the money back when the shop hands the order back', () => {
-    expect(outcome([PAID, SENT, REFUSED]).due).toEqual({ submission: false, refund: 'pi_1' });
-    const facts = outcome([PAID, SENT, REFUSED, fact('refunded', 9)]);
+    expect(outcome([PAID, SENT, REFUSED]).due).toEqual({ submission: false, refunds: ['pi_1'] });
+    const facts = outcome([PAID, SENT, REFUSED, BACK]);
     expect(facts.standing).toMatchObject({ state: 'refused', paymentState: 'refunded' });
-    expect(facts.due).toEqual({ submission: false, refund: null });
+    expect(facts.due).toEqual({ submission: false, refunds: [] });
   });
 
   it('sends the money back that came after the order was cancelled, and never has it cut', () => {
     const late = outcome([fact('cancelled', 2), PAID]);
     expect(late.standing).toMatchObject({ state: 'cancelled', paymentState: 'paid' });
-    expect(late.due).toEqual({ submission: false, refund: 'pi_1' });
+    expect(late.due).toEqual({ submission: false, refunds: ['pi_1'] });
+  });
+
+  it('sends a second payment back and keeps the first', () => {
+    const twice = outcome([PAID_TWICE, PAID, SENT]);
+    expect(twice.standing).toMatchObject({ state: 'paid', paymentState: 'paid' });
+    expect(twice.due).toEqual({ submission: false, refunds: ['pi_2'] });
   });
 
   it('keeps the course of an order within one second, where the clocks are too coarse to tell', () => {

@@ -37,8 +37,8 @@ export interface OrderStanding {
 export interface WorkDue {
   /** The order is paid and has to be handed to the cutting service. */
   readonly submission: boolean;
-  /** The payment has to go back. */
-  readonly refund: string | null;
+  /** Payments that have to go back: all when the order was ended early, else all but the first. */
+  readonly refunds: readonly string[];
 }
 
 /** Furthest last. What ends an order early outweighs whatever else is told, since the money goes back then. */
@@ -61,7 +61,7 @@ const WITHIN_A_SECOND: readonly OrderEventKind[] = [
   'mail-sent',
 ];
 
-const sameOrEarlier = (a: OrderFact, b: OrderFact) =>
+const byTelling = (a: OrderFact, b: OrderFact) =>
   a.at.getTime() - b.at.getTime() || (a.source < b.source ? -1 : a.source > b.source ? 1 : 0);
 
 /**
@@ -72,7 +72,7 @@ const sameOrEarlier = (a: OrderFact, b: OrderFact) =>
 export function joinFact(known: readonly OrderFact[], told: OrderFact): readonly OrderFact[] {
   const before = known.find((fact) => fact.key === told.key);
   if (before === undefined) return [...known, told];
-  if (sameOrEarlier(before, told) <= 0) return known;
+  if (byTelling(before, told) <= 0) return known;
   return known.map((fact) => (fact === before ? told : fact));
 }
 
@@ -80,10 +80,17 @@ export function joinFact(known: readonly OrderFact[], told: OrderFact): readonly
 export function standingOf(facts: readonly OrderFact[]): OrderStanding {
   const has = (kind: OrderEventKind) => facts.some((fact) => fact.kind === kind);
   const state = BY_WEIGHT.findLast(has) ?? 'placed';
-  const paymentState = has('refunded') ? 'refunded' : has('paid') ? 'paid' : has('payment-failed') ? 'failed' : 'open';
+  const [payment] = paymentsOf(facts);
   return {
     state,
-    paymentState,
+    paymentState:
+      payment !== undefined
+        ? wentBack(facts, payment)
+          ? 'refunded'
+          : 'paid'
+        : has('payment-failed')
+          ? 'failed'
+          : 'open',
     trackingCode: facts.find((fact) => fact.kind === 'shipped')?.details.trackingCode ?? null,
     revision: facts.filter((fact) => fact.kind !== 'mail-sent').length,
   };
@@ -93,13 +100,22 @@ export function standingOf(facts: readonly OrderFact[]): OrderStanding {
 export function workDue(facts: readonly OrderFact[]): WorkDue {
   const { state } = standingOf(facts);
   const has = (kind: OrderEventKind) => facts.some((fact) => fact.kind === kind);
-  const paymentId = facts.find((fact) => fact.kind === 'paid')?.details.paymentId;
   const isEnded = state === 'refused' || state === 'cancelled';
+  const payments = paymentsOf(facts);
   return {
     submission: has('paid') && !isEnded && !has('sent-to-cutter'),
-    refund: isEnded && paymentId !== undefined && !has('refunded') ? paymentId : null,
+    refunds: (isEnded ? payments : payments.slice(1)).filter((paymentId) => !wentBack(facts, paymentId)),
   };
 }
+
+/** Payments of an order, the first one first: the order is paid by that one, any other was made by mistake. */
+export function paymentsOf(facts: readonly OrderFact[]): readonly string[] {
+  const paid = facts.filter((fact) => fact.kind === 'paid').sort(byTelling);
+  return paid.flatMap((fact) => fact.details.paymentId ?? []);
+}
+
+const wentBack = (facts: readonly OrderFact[], paymentId: string) =>
+  facts.some((fact) => fact.kind === 'refunded' && fact.details.paymentId === paymentId);
 
 /** Facts as a timeline: by time, and within a second by the course of an order. */
 export function timelineOf(facts: readonly OrderFact[]): readonly OrderFact[] {
