@@ -113,10 +113,6 @@ export interface FlatPattern {
   readonly cutLengthMm: number;
   readonly pierces: number;
   readonly massKg: number;
-  /** Holes, slots and cut-outs that reach into a bend zone. They are cut as drawn and may pull out of shape. */
-  readonly featuresInBendZones: readonly string[];
-  /** Ends of bend zones with sheet beside them on the same line: relieved, or left without relief. */
-  readonly reliefs: readonly Relief[];
 }
 
 /** A place where a bend ends beside sheet that stays flat. */
@@ -211,6 +207,10 @@ export interface Development {
   readonly bendTable: readonly BendRow[];
   readonly formedBox: FormedBox;
   readonly formedSizes: readonly FormedSize[];
+  /** Holes, slots and cut-outs that reach into a bend zone. They are cut as drawn and may pull out of shape. */
+  readonly featuresInBendZones: readonly string[];
+  /** Ends of bend zones with sheet beside them on the same line: relieved, or left without relief. */
+  readonly reliefs: readonly Relief[];
 }
 
 /** Why a layout cannot be developed. Names the offending things. */
@@ -227,7 +227,8 @@ export interface DevelopmentProblem {
     | 'referenceNotAllowed'
     | 'kOutOfRange'
     | 'baseAnchorOutside'
-    | 'stockUnknown';
+    | 'stockUnknown'
+    | 'holeUnknown';
   readonly message: string;
   readonly ids: readonly string[];
 }

@@ -72,7 +72,12 @@ export type BendLengths =
 /** Where K (or a measured deduction) comes from for one bend, when a person overrules the usual order of sources. */
 export type BendOverride =
   | { readonly kind: 'kFactor'; readonly kFactor: number; readonly reason: string }
-  | { readonly kind: 'deduction'; readonly deductionMm: number; readonly reference: LengthReference; readonly reason: string };
+  | {
+      readonly kind: 'deduction';
+      readonly deductionMm: number;
+      readonly reference: LengthReference;
+      readonly reason: string;
+    };
 
 export interface BendDeclaration {
   readonly id: string;

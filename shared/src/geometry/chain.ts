@@ -50,7 +50,10 @@ function leavingCurvature(segment: Segment): number {
  * one piece is taken, so that the loops are the boundaries of the connected pieces. Segments of no length must be gone.
  * @returns null when a segment leads nowhere: the segments do not close.
  */
-export function closeLoops(segments: readonly Segment[], toleranceMm: number): readonly Loop[] | null {
+export function closeLoops<S extends Segment>(
+  segments: readonly S[],
+  toleranceMm: number,
+): readonly (readonly S[])[] | null {
   const idOf = pointNumbers(toleranceMm);
   const leaving = new Map<number, number[]>();
   const ends = segments.map((segment, index) => {
@@ -59,10 +62,10 @@ export function closeLoops(segments: readonly Segment[], toleranceMm: number): r
     return idOf(segment.to);
   });
   const used = new Set<number>();
-  const loops: Loop[] = [];
+  const loops: (readonly S[])[] = [];
   for (let start = 0; start < segments.length; start += 1) {
     if (used.has(start)) continue;
-    const chain: Segment[] = [];
+    const chain: S[] = [];
     let current = start;
     do {
       const segment = segments[current];
@@ -103,7 +106,7 @@ function firstClockwise(incoming: Segment, options: readonly number[], segments:
 }
 
 /** Makes every segment start exactly where the one before ended. */
-function sealed(chain: readonly Segment[]): Loop {
+export function sealed<S extends Segment>(chain: readonly S[]): readonly S[] {
   return chain.map((segment, index) => {
     const before = chain[(index + chain.length - 1) % chain.length];
     return before === undefined ? segment : { ...segment, from: before.to };
@@ -142,7 +145,9 @@ export function joinPieces(pieces: readonly Loop[], toleranceMm: number): readon
   const straight = all.filter((segment) => segment.kind === 'line');
   const cutPoints = straight.flatMap((segment) => [segment.from, segment.to]);
   const split = all.flatMap((segment) =>
-    segment.kind === 'line' ? splitSegment(segment, nearbyPoints(segment, cutPoints, toleranceMm), toleranceMm) : [segment],
+    segment.kind === 'line'
+      ? splitSegment(segment, nearbyPoints(segment, cutPoints, toleranceMm), toleranceMm)
+      : [segment],
   );
   const idOf = pointNumbers(toleranceMm);
   const keyed = split.map((segment) => ({ segment, from: idOf(segment.from), to: idOf(segment.to) }));
@@ -179,12 +184,18 @@ export function mergeStraightRuns(loop: Loop, toleranceMm: number): Loop {
   const continues = (first: Segment | undefined, second: Segment): boolean => {
     if (first?.kind !== 'line' || second.kind !== 'line') return false;
     const isForward =
-      (first.to.x - first.from.x) * (second.to.x - second.from.x) + (first.to.y - first.from.y) * (second.to.y - second.from.y) > 0;
-    return isForward && nearestOnSegment({ kind: 'line', from: first.from, to: second.to }, first.to).distanceMm <= toleranceMm;
+      (first.to.x - first.from.x) * (second.to.x - second.from.x) +
+        (first.to.y - first.from.y) * (second.to.y - second.from.y) >
+      0;
+    return (
+      isForward &&
+      nearestOnSegment({ kind: 'line', from: first.from, to: second.to }, first.to).distanceMm <= toleranceMm
+    );
   };
   for (const segment of loop) {
     const last = merged.at(-1);
-    if (last !== undefined && continues(last, segment)) merged[merged.length - 1] = { kind: 'line', from: last.from, to: segment.to };
+    if (last !== undefined && continues(last, segment))
+      merged[merged.length - 1] = { kind: 'line', from: last.from, to: segment.to };
     else merged.push(segment);
   }
   const first = merged[0];

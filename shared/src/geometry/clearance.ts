@@ -17,7 +17,8 @@ export function pointToLoop(point: Point, loop: Loop): Clearance | null {
   let best: Clearance | null = null;
   for (const segment of loop) {
     const near = nearestOnSegment(segment, point);
-    if (best === null || near.distanceMm < best.distanceMm) best = { distanceMm: near.distanceMm, from: point, to: near.point };
+    if (best === null || near.distanceMm < best.distanceMm)
+      best = { distanceMm: near.distanceMm, from: point, to: near.point };
   }
   return best;
 }

@@ -1,4 +1,4 @@
-import { splitSegment } from './chain';
+import { sealed, splitSegment } from './chain';
 import type { Loop, Segment } from './path';
 import type { Point } from './point';
 import { arcRadius, pointAt } from './segment';
@@ -58,7 +58,9 @@ export function clipRegion(loops: readonly Loop[], half: HalfPlane, toleranceMm:
   const whole: Loop[] = [];
   const chains: Segment[][] = [];
   for (const loop of loops) {
-    const pieces = loop.flatMap((segment) => splitSegment(segment, edgeCrossings(segment, half, toleranceMm), toleranceMm));
+    const pieces = loop.flatMap((segment) =>
+      splitSegment(segment, edgeCrossings(segment, half, toleranceMm), toleranceMm),
+    );
     const isKept = pieces.map((piece) => deepest(piece, half) > toleranceMm);
     const firstDropped = isKept.indexOf(false);
     if (firstDropped === -1) {
@@ -86,7 +88,11 @@ function deepest(piece: Segment, half: HalfPlane): number {
 }
 
 /** Closes chains along the cut: each end runs on to the next start. */
-function linkChains(chains: readonly Segment[][], placeOf: (point: Point) => number, toleranceMm: number): readonly Loop[] {
+function linkChains(
+  chains: readonly Segment[][],
+  placeOf: (point: Point) => number,
+  toleranceMm: number,
+): readonly Loop[] {
   const starts = chains
     .map((chain, index) => ({ index, at: chain[0] === undefined ? 0 : placeOf(chain[0].from) }))
     .sort((a, b) => a.at - b.at);
@@ -117,16 +123,9 @@ function linkChains(chains: readonly Segment[][], placeOf: (point: Point) => num
       if (from === undefined || to === undefined) continue;
       if (Math.hypot(to.x - from.x, to.y - from.y) > toleranceMm) loop.push({ kind: 'line', from, to });
     }
-    loops.push(sealedLoop(loop));
+    loops.push(sealed(loop));
   }
   return loops;
-}
-
-function sealedLoop(loop: readonly Segment[]): Loop {
-  return loop.map((segment, index) => {
-    const before = loop[(index + loop.length - 1) % loop.length];
-    return before === undefined ? segment : { ...segment, from: before.to };
-  });
 }
 
 /** Signed distance by which a point lies to the left of the line through `from` and `to`, mm. */

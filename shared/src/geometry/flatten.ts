@@ -14,7 +14,8 @@ export function flattenSegment(segment: Segment, chordErrorMm: number): readonly
   if (segment.kind === 'line') return [segment.from, segment.to];
   const radius = arcRadius(segment);
   const sweepDeg = Math.abs(arcSweepDeg(segment));
-  const stepDeg = chordErrorMm >= radius ? 90 : Math.min(90, (2 * Math.acos(1 - chordErrorMm / radius) * 180) / Math.PI);
+  const stepDeg =
+    chordErrorMm >= radius ? 90 : Math.min(90, (2 * Math.acos(1 - chordErrorMm / radius) * 180) / Math.PI);
   const count = Math.max(1, Math.ceil(sweepDeg / stepDeg - COUNT_SLACK));
   return Array.from({ length: count + 1 }, (_, index) => pointAt(segment, index / count));
 }

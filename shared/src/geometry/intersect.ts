@@ -66,7 +66,8 @@ function arcArc(a: ArcSegment, b: ArcSegment, toleranceMm: number): Intersection
   if (apart <= toleranceMm && Math.abs(radiusA - radiusB) <= toleranceMm) {
     return sharedStretch(a, b, toleranceMm) ?? endContacts(a, b, toleranceMm);
   }
-  if (apart > radiusA + radiusB + toleranceMm || apart < Math.abs(radiusA - radiusB) - toleranceMm || apart === 0) return NONE;
+  if (apart > radiusA + radiusB + toleranceMm || apart < Math.abs(radiusA - radiusB) - toleranceMm || apart === 0)
+    return NONE;
   const direction = unit(subtract(b.centre, a.centre));
   const footAt = (apart * apart + radiusA * radiusA - radiusB * radiusB) / (2 * apart);
   const inside = radiusA * radiusA - footAt * footAt;
@@ -79,12 +80,22 @@ function arcArc(a: ArcSegment, b: ArcSegment, toleranceMm: number): Intersection
 }
 
 /** Keeps the candidates that lie on both segments, drawn to an end where one is near, sorted along `first`. */
-function onBoth(candidates: readonly Point[], a: Segment, b: Segment, first: Segment, toleranceMm: number): Intersection {
+function onBoth(
+  candidates: readonly Point[],
+  a: Segment,
+  b: Segment,
+  first: Segment,
+  toleranceMm: number,
+): Intersection {
   const found: Point[] = [];
   // Ends that touch the other curve count even where a grazing crossing is lost to rounding.
   const ends = [a.from, a.to, b.from, b.to];
   for (const candidate of [...ends, ...candidates]) {
-    if (nearestOnSegment(a, candidate).distanceMm > toleranceMm || nearestOnSegment(b, candidate).distanceMm > toleranceMm) continue;
+    if (
+      nearestOnSegment(a, candidate).distanceMm > toleranceMm ||
+      nearestOnSegment(b, candidate).distanceMm > toleranceMm
+    )
+      continue;
     if (!found.some((known) => coincide(known, candidate, 2 * toleranceMm))) found.push(candidate);
   }
   return asPoints(found, first);

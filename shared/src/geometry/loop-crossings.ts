@@ -41,7 +41,8 @@ export function findCrossings(loops: readonly Loop[], toleranceMm: number): read
   for (const entry of entries) {
     open = open.filter((other) => other.bounds.max.x >= entry.bounds.min.x - toleranceMm);
     for (const other of open) {
-      if (boundsMeet(other.bounds, entry.bounds, toleranceMm)) crossings.push(...crossingsOf(other, entry, toleranceMm));
+      if (boundsMeet(other.bounds, entry.bounds, toleranceMm))
+        crossings.push(...crossingsOf(other, entry, toleranceMm));
     }
     open.push(entry);
   }

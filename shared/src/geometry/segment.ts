@@ -1,7 +1,19 @@
 import type { ArcSegment, LineSegment, Segment } from './path';
 import type { Bounds, Point } from './point';
 import { COINCIDENT_MM } from './tolerance';
-import { add, between, boundsOfPoints, cosSinDeg, directionDeg, distance, subtract, turn, turnLeft, turnRight, unit } from './vector';
+import {
+  add,
+  between,
+  boundsOfPoints,
+  cosSinDeg,
+  directionDeg,
+  distance,
+  subtract,
+  turn,
+  turnLeft,
+  turnRight,
+  unit,
+} from './vector';
 
 /** A straight segment. */
 export function line(from: Point, to: Point): LineSegment {
@@ -131,7 +143,10 @@ export function segmentBounds(segment: Segment): Bounds {
 }
 
 /** Distance from a point to the segment and the nearest point on it, mm. */
-export function nearestOnSegment(segment: Segment, point: Point): { readonly distanceMm: number; readonly point: Point } {
+export function nearestOnSegment(
+  segment: Segment,
+  point: Point,
+): { readonly distanceMm: number; readonly point: Point } {
   const candidates: Point[] = [segment.from, segment.to];
   if (segment.kind === 'line') {
     const t = fractionOf(segment, point);

@@ -2,7 +2,7 @@
 export const COINCIDENT_MM = 1e-6;
 
 /** A line drawn by hand or traced may miss the edge it is meant to reach by this much and is still taken to reach it, mm. */
-export const JOIN_MM = 0.5;
+export const JOIN_MM = 1;
 
 /** Largest distance between an arc and the chords that stand for it, where an algorithm or a screen needs chords, mm. */
 export const CHORD_MM = 0.05;
