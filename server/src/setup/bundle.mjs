@@ -101,7 +101,8 @@ export function buildWeb(run) {
   return unlessBuilt('web', WEB_SOURCES, path.join(DIST, 'foldwright/browser/index.html'), () =>
     run('node_modules/.bin/ng', ['build', '--progress=false'], {
       cwd: ROOT,
-      env: { ...process.env, NG_CLI_ANALYTICS: 'false' },
+      // What it says ends up in logs and reports, where colours are noise.
+      env: { ...process.env, NG_CLI_ANALYTICS: 'false', NO_COLOR: '1', FORCE_COLOR: '0' },
     }),
   );
 }
