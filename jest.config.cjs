@@ -5,6 +5,9 @@ const paths = {
   '^@foldwright/server/(.*)$': '<rootDir>/server/src/$1',
 };
 
+// Published as ES modules only, under a plain .js name; jest requires CommonJS.
+const ES_MODULES = '(earcut|robust-predicates|clipper2-ts|flatbush|flatqueue)';
+
 const node = {
   rootDir: __dirname,
   testEnvironment: 'node',
@@ -12,7 +15,9 @@ const node = {
   transform: {
     '^.+\\.ts$': ['ts-jest', { tsconfig: '<rootDir>/tsconfig.jest.json', diagnostics: false }],
     'server/src/setup/.+\\.mjs$': '<rootDir>/test/support/esm-transform.cjs',
+    [`node_modules/${ES_MODULES}/.+\\.js$`]: '<rootDir>/test/support/esm-transform.cjs',
   },
+  transformIgnorePatterns: [`node_modules/(?!${ES_MODULES}/)`],
   moduleNameMapper: paths,
 };
 
@@ -57,7 +62,7 @@ module.exports = {
       ...createCjsPreset({ tsconfig: '<rootDir>/projects/foldwright/tsconfig.spec.json' }),
       testMatch: ['<rootDir>/projects/**/*.spec.ts'],
       setupFilesAfterEnv: ['<rootDir>/projects/foldwright/jest-setup.ts'],
-      transformIgnorePatterns: ['node_modules/(?!(.*\\.mjs$|three/|@mdi/js/|@angular/common/locales/.*\\.js$))'],
+      transformIgnorePatterns: ['node_modules/(?!(.*\\.mjs$|three/|earcut/|flatbush/|flatqueue/|clipper2-ts/|robust-predicates/|@mdi/js/|@angular/common/locales/.*\\.js$))'],
       moduleNameMapper: { ...paths, '^@foldwright/ui/(.*)$': '<rootDir>/projects/ui/src/$1' },
     },
   ],
