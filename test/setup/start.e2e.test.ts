@@ -23,15 +23,19 @@ describe('npm start', () => {
   let dataDir: string;
   let others: WatchedProcess[];
 
-  beforeEach(() => {
+  // One data folder for all: what the first test leaves is what a second start finds.
+  beforeAll(() => {
     dataDir = fs.mkdtempSync(path.join(os.tmpdir(), 'start-'));
     fs.chmodSync(dataDir, 0o755);
+  });
+  afterAll(() => fs.rmSync(dataDir, { recursive: true, force: true }));
+
+  beforeEach(() => {
     others = [];
   });
   afterEach(async () => {
     for (const { child } of others) if (child.exitCode === null && child.signalCode === null) child.kill('SIGTERM');
     await Promise.all(others.map(({ ended }) => ended));
-    fs.rmSync(dataDir, { recursive: true, force: true });
   });
 
   const watch = (command: string, args: readonly string[]): WatchedProcess => {

@@ -102,7 +102,8 @@ async function start() {
   undo.push(() => watchdog.dismiss());
   supervisor = createSupervisor({ logs: where.logs, watchdog, report: say });
   undo.push(() => supervisor.stop());
-  const run = (command, args, options) => supervisor.run(path.basename(command), command, args, { cwd: ROOT, ...options });
+  const run = (command, args, options) =>
+    supervisor.run(path.basename(command), command, args, { cwd: ROOT, ...options });
   // Only the migration may know how to sign in as the owner of the tables, so that address is not simply passed on.
   const { DATABASE_OWNER_URL: _, ...inherited } = process.env;
   const node = (program, env) => {
