@@ -9,6 +9,8 @@ export interface ListOptions<M extends Model> {
   readonly where?: WhereOptions<Attributes<M>>;
   readonly order?: Order;
   readonly limit?: number;
+  /** Columns to read, where a row has large ones that aren't needed. The others are then undefined. */
+  readonly attributes?: readonly (keyof Attributes<M> & string)[];
 }
 
 /**
@@ -56,6 +58,7 @@ export class ScopedRows<M extends WorkshopRow> {
       transaction: this.transaction,
       ...(options.order ? { order: options.order } : {}),
       ...(options.limit === undefined ? {} : { limit: options.limit }),
+      ...(options.attributes === undefined ? {} : { attributes: [...options.attributes] }),
     });
   }
 
