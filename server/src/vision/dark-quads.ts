@@ -71,16 +71,11 @@ function darkPatches(mask: Uint8Array, widthPx: number, heightPx: number): reado
       if (!row) rows.set(y, [x, x]);
       else if (x < row[0]) row[0] = x;
       else if (x > row[1]) row[1] = x;
-      const visit = (next: number): void => {
-        if (mask[next] === 1 && seen[next] !== 1) {
-          seen[next] = 1;
-          stack.push(next);
-        }
-      };
-      if (x > 0) visit(at - 1);
-      if (x + 1 < widthPx) visit(at + 1);
-      if (y > 0) visit(at - widthPx);
-      if (y + 1 < heightPx) visit(at + widthPx);
+      for (const next of [x > 0 ? at - 1 : at, x + 1 < widthPx ? at + 1 : at, at - widthPx, at + widthPx]) {
+        if (mask[next] !== 1 || seen[next] === 1) continue;
+        seen[next] = 1;
+        stack.push(next);
+      }
     }
     const width = maxX - minX + 1;
     if (Math.min(width, rows.size) < MIN_SIDE_PX || Math.max(width, rows.size) > maxSide) continue;
