@@ -64,11 +64,11 @@ function checkBend(
           ? `${name} is tight for a bend ${grain === 'along' ? 'along the grain' : 'whose grain is unknown'}`
           : `${name} is bent tighter than ${material.shortName} likes`,
       detail:
-        `Its inside radius is ${formatDecimal(radiusMm, 2)} mm (${times(radiusMm)}). ` +
-        `${material.shortName} of ${formatDecimal(thicknessMm, 2)} wants ${formatDecimal(acrossMm, 2)} across the grain` +
+        `Its inside radius is ${formatDecimal(radiusMm, 2)} mm (${times(radiusMm)}). At ${formatDecimal(thicknessMm, 2)} mm ` +
+        `thick, ${material.shortName} wants ${formatDecimal(acrossMm, 2)} across the grain` +
         (grain === 'across'
           ? '.'
-          : `, ${formatDecimal(requiredMm, 2)} ${grain === 'along' ? 'along it, as here' : 'along it; the grain is unknown'}.`),
+          : ` and ${formatDecimal(requiredMm, 2)} along it${grain === 'along' ? ', as here.' : '; the grain is unknown.'}`),
       foundMm: radiusMm,
       requiredMm,
       why: ruleFrom(
