@@ -16,9 +16,10 @@ const TESTS = ['test', 'spec', 'bench'];
  * @param {string[]} files globs
  * @param {string[]} allowed beginnings of paths, as regular expressions; everything else is refused
  * @param {string} why said when something is refused
- * @param {{regex: string, message: string}[]} [refused] exceptions from what is allowed
+ * @param {{regex: string, message: string}[]} [more.refused] exceptions from what is allowed
+ * @param {string[]} [more.forTests] what tests may import besides
  */
-function row(files, allowed, why, refused = []) {
+function row(files, allowed, why, { refused = [], forTests = [] } = {}) {
   const rules = (list) => ({
     'no-restricted-imports': [
       'error',
@@ -28,7 +29,7 @@ function row(files, allowed, why, refused = []) {
   const tests = files.flatMap((glob) => TESTS.map((kind) => glob.replace(/\*\.ts$/, `*.${kind}.ts`)));
   return [
     { files, rules: rules(allowed) },
-    { files: tests, rules: rules([...allowed, ...FOR_TESTS]) },
+    { files: tests, rules: rules([...allowed, ...FOR_TESTS, ...forTests]) },
   ];
 }
 
@@ -44,9 +45,11 @@ const within = (depth) => ['\\./(?!\\.)', ...(depth > 0 ? [`(?:\\.\\./){1,${dept
 const beside = (depth, names) => (names.length > 0 ? [`(?:\\.\\./){${depth + 1}}(?:${names.join('|')})/`] : []);
 
 /** A row for a folder that may import itself, some of its neighbours and some packages. */
-function folderRow(folder, { neighbours = [], others = [], why }) {
+function folderRow(folder, { neighbours = [], others = [], testNeighbours = [], why }) {
   return Array.from({ length: DEEPEST + 1 }, (_, depth) =>
-    row(atDepth(folder, depth), [...within(depth), ...beside(depth, neighbours), ...others], why),
+    row(atDepth(folder, depth), [...within(depth), ...beside(depth, neighbours), ...others], why, {
+      forTests: beside(depth, testNeighbours),
+    }),
   ).flat();
 }
 
@@ -65,7 +68,9 @@ function sharedRow(layer, below) {
   const why =
     `shared/${layer} may import itself, ${list}${packages.length > 0 ? ' and its own packages' : ''}: ` +
     'the kernel is layered so that a part of it can be understood and tested without the ones above.';
-  return folderRow(`shared/src/${layer}`, { neighbours: below, others: packages, why });
+  // A test may look at its layer from above: through the schema that guards it, or what is drawn from it.
+  const testNeighbours = [...LAYERS, ...UPPER, 'contracts'];
+  return folderRow(`shared/src/${layer}`, { neighbours: below, others: packages, testNeighbours, why });
 }
 
 const sharedRows = [
@@ -96,23 +101,33 @@ const NO_MODELS = {
   regex: '^(?:\\.\\./)+(?:models|migrations|database)/|^(?:sequelize|pg|pg-boss|umzug)(?:$|/)',
   message: 'Rows are the business of services: a route parses, calls one service and presents what it returns.',
 };
+/** Of what has to do with requests, services know only the values: who asks, what went wrong, which file is the answer. */
 const NO_WEB = {
-  regex: '^(?:\\.\\./)+(?:routes|http)/|^(?:express|passport)(?:$|/|-)',
+  regex: '^(?:\\.\\./)+(?:routes/|http/(?!(?:problem|visitor|file-answer)$))|^(?:express|passport)(?:$|/|-)',
   message: 'A service knows nothing of requests, so that jobs and tests can call it too.',
 };
 
+/** Who sends a request: a plain value, though requests bring it. */
+const VISITOR = '\\.\\./http/visitor$';
+/** What rows mean once they are read: names for ids, documents brought up to date. */
+const READINGS = '\\.\\./services/(?:names-of-people|stored-document)$';
+
 const serverRows = [
   ...row(['server/src/**/*.ts'], EVERYTHING, 'The server may import itself, the shared kernel and its own packages.'),
-  ...row(['server/src/routes/**/*.ts'], EVERYTHING, 'Routes may import the server’s own folders.', [NO_MODELS]),
-  ...row(['server/src/services/**/*.ts'], EVERYTHING, 'Services may import the server’s own folders.', [NO_WEB]),
-  ...row(['server/src/jobs/**/*.ts'], EVERYTHING, 'Jobs may import the server’s own folders.', [NO_WEB]),
+  ...row(['server/src/routes/**/*.ts'], EVERYTHING, 'Routes may import the server’s own folders.', {
+    refused: [NO_MODELS],
+  }),
+  ...row(['server/src/services/**/*.ts'], EVERYTHING, 'Services may import the server’s own folders.', {
+    refused: [NO_WEB],
+  }),
+  ...row(['server/src/jobs/**/*.ts'], EVERYTHING, 'Jobs may import the server’s own folders.', { refused: [NO_WEB] }),
   ...folderRow('server/src/policies', {
-    others: [SHARED],
+    others: [SHARED, VISITOR],
     why: 'Policies are pure: who may do what follows from the person, the action and the row alone.',
   }),
   ...folderRow('server/src/presenters', {
     neighbours: ['models'],
-    others: [SHARED],
+    others: [SHARED, VISITOR, READINGS, 'zod/mini$'],
     why: 'Presenters turn rows into what the contract says, and do nothing else.',
   }),
   ...folderRow('server/src/migrations', {

@@ -67,6 +67,11 @@ export default defineConfig([
     rules: { 'no-restricted-syntax': ['error', NAMED_EXPORTS, NO_DOUBLE_CAST, NAMED_TOLERANCES] },
   },
   {
+    // Joints between generic types that the compiler cannot follow; both are built so that the cast is the only hole.
+    files: ['server/src/database/scoped-rows.ts', 'server/src/http/route-call.ts'],
+    rules: { 'no-restricted-syntax': ['error', NAMED_EXPORTS] },
+  },
+  {
     files: ['**/index.ts'],
     rules: {
       'no-restricted-syntax': [
