@@ -1,9 +1,10 @@
 import { computed, signal } from '@angular/core';
-import { type Draft, type PartDetail, readDraft } from '@foldwright/shared/contracts/parts';
+import { type Draft, type PartDetail, readDraft, sendCommands } from '@foldwright/shared/contracts/parts';
 import { PROBLEMS, type ProblemSlug } from '@foldwright/shared/contracts/problems';
 import type { LiveEvent } from '@foldwright/shared/contracts/system';
 import { applyCommands } from '@foldwright/shared/part/apply-command';
 import { CommandRefusal } from '@foldwright/shared/part/command-refusal';
+import type { PartCommand } from '@foldwright/shared/part/commands';
 import type { PartDocument } from '@foldwright/shared/part/part-document';
 import { Subject } from 'rxjs';
 import type { ApiRead } from '../../api/api-client';
@@ -88,8 +89,9 @@ export class DraftServer {
   }
 
   /** Somebody else's change, told on the live stream. */
-  change(commands: CommandBatch['commands'], by = 'Imogen Harrow', clientId = 'another-tab'): void {
-    this.keep(commands, clientId, by, crypto.randomUUID());
+  change(commands: readonly PartCommand[], by = 'Imogen Harrow', clientId = 'another-tab'): void {
+    const batch = { baseRevision: this.revision, batchId: crypto.randomUUID(), clientId, commands };
+    this.keep(sendCommands.body.parse(batch).commands, clientId, by, batch.batchId);
   }
 
   private async take(batch: CommandBatch): Promise<Draft> {
