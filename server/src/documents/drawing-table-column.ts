@@ -81,7 +81,7 @@ export class TableColumn {
 
   private writeCells(table: DrawingTable, cells: readonly string[]): void {
     this.eachColumn(table, (column, x, index) => {
-      const style = column.align === 'right' || index === 0 ? CELL : WORDS;
+      const style = column.align === 'right' || (index === 0 && column.isWords !== true) ? CELL : WORDS;
       this.sheet.text(cells[index] ?? '', { x, y: this.y + 1 }, { ...style, align: column.align });
     });
   }

@@ -4,7 +4,12 @@ import type { HolePurpose, LengthReference } from '@foldwright/shared/bending/la
 /** A table of a drawing: upright figures, a second smaller line under a row for where its numbers come from. */
 export interface DrawingTable {
   readonly title: string;
-  readonly columns: readonly { readonly label: string; readonly widthMm: number; readonly align: 'left' | 'right' }[];
+  readonly columns: readonly {
+    readonly label: string;
+    readonly widthMm: number;
+    readonly align: 'left' | 'right';
+    readonly isWords?: boolean;
+  }[];
   readonly rows: readonly { readonly cells: readonly string[]; readonly note: string | null }[];
   /** Said once under the table. */
   readonly foot: string | null;
@@ -29,8 +34,15 @@ const CONFIDENCE_WORDS = {
 const bendNote = (row: BendRow): string => {
   const { text, source, confidence } = row.kProvenance;
   const parts = [`K: ${text}`, source, CONFIDENCE_WORDS[confidence], ...(row.kNote === null ? [] : [row.kNote])];
-  return parts.filter((part, index) => part !== '' && parts.indexOf(part) === index).join('; ');
+  const words = parts.filter((part, index) => part !== '' && parts.indexOf(part) === index).join('; ');
+  return `${words}. BD to the ${REFERENCE_WORDS[row.deductionReference]}.`;
 };
+
+/** A note that only repeats the row above is said in two words. */
+function noteUnlessSame(row: BendRow, above: BendRow | undefined): string {
+  const note = bendNote(row);
+  return above !== undefined && bendNote(above) === note ? `as ${above.name}` : note;
+}
 
 export function bendTable(development: Development): DrawingTable {
   const references = [...new Set(development.bendTable.map((row) => REFERENCE_WORDS[row.deductionReference]))];
@@ -48,7 +60,7 @@ export function bendTable(development: Development): DrawingTable {
       { label: 'V-die', widthMm: 16, align: 'right' },
       { label: 'Length', widthMm: 27, align: 'right' },
     ],
-    rows: development.bendTable.map((row) => ({
+    rows: development.bendTable.map((row, index, rows) => ({
       cells: [
         row.name,
         row.direction,
@@ -61,7 +73,7 @@ export function bendTable(development: Development): DrawingTable {
         row.vOpeningMm.toFixed(0),
         row.bendLengthMm.toFixed(1),
       ],
-      note: `${bendNote(row)}. BD to the ${REFERENCE_WORDS[row.deductionReference]}.`,
+      note: noteUnlessSame(row, rows[index - 1]),
     })),
     foot:
       references.length === 0
@@ -135,7 +147,7 @@ export function formedSizeTable(development: Development): DrawingTable {
   return {
     title: 'Formed sizes to check',
     columns: [
-      { label: 'Size', widthMm: 70, align: 'left' },
+      { label: 'Size', widthMm: 70, align: 'left', isWords: true },
       { label: 'mm', widthMm: 24, align: 'right' },
       { label: 'Spread', widthMm: 22, align: 'right' },
       { label: 'Mostly from', widthMm: 64, align: 'left' },

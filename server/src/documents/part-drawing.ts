@@ -1,4 +1,4 @@
-import { formedMesh } from '@foldwright/shared/bending/formed';
+import { layOutMesh, poseFormed } from '@foldwright/shared/bending/formed-mesh';
 import { projectMesh } from '@foldwright/shared/drawing/axonometric-view';
 import type { Point } from '@foldwright/shared/geometry/point';
 import { cautionsFor } from './cautions';
@@ -64,7 +64,7 @@ function drawFormed(sheet: PdfSheet, input: DocumentInput, topMm: number): void 
   const bottom = DRAWING_BORDER.otherMm + TITLE_BLOCK_HEIGHT_MM + 4;
   const height = topMm - bottom;
   if (height < 28) return;
-  const view = projectMesh(formedMesh(input.development, 1));
+  const view = projectMesh(poseFormed(layOutMesh(input.development), 1));
   if (!view.bounds) return;
   const { min, max } = view.bounds;
   const width = TITLE_BLOCK_WIDTH_MM - 10;

@@ -1,7 +1,7 @@
 import PDFDocument from 'pdfkit';
 import type { Loop } from '@foldwright/shared/geometry/path';
 import type { Point } from '@foldwright/shared/geometry/point';
-import { fontRuns, plexFile, type PlexFont } from './plex-fonts';
+import { type FontSubset, type PlexFont, fontRuns, plexFont } from './plex-fonts';
 
 declare global {
   // The published typings lack the pattern form of `dash` that pdfkit documents.
@@ -42,6 +42,7 @@ export class PdfSheet {
   private readonly document: PDFKit.PDFDocument;
   private readonly chunks: Buffer[] = [];
   private readonly finished: Promise<Buffer>;
+  private readonly fonts = new Set<string>();
   private pageHeightMm = 0;
   private pages = 0;
 
@@ -148,7 +149,7 @@ export class PdfSheet {
     this.document.fillColor(style.colour ?? '#22201D');
     let x = this.x(at) + shift * POINTS_PER_MM;
     for (const run of fontRuns(text)) {
-      this.document.font(plexFile(style.font, run.subset)).fontSize(style.sizeMm * POINTS_PER_MM);
+      this.useFont(style, run.subset);
       this.document.text(run.text, x, this.y(at), { lineBreak: false, baseline: 'alphabetic' });
       x += this.document.widthOfString(run.text);
     }
@@ -157,7 +158,7 @@ export class PdfSheet {
 
   textWidthMm(text: string, style: Pick<TextStyle, 'font' | 'sizeMm'>): number {
     return fontRuns(text).reduce((sum, run) => {
-      this.document.font(plexFile(style.font, run.subset)).fontSize(style.sizeMm * POINTS_PER_MM);
+      this.useFont(style, run.subset);
       return sum + this.document.widthOfString(run.text) / POINTS_PER_MM;
     }, 0);
   }
@@ -191,6 +192,15 @@ export class PdfSheet {
   finish(): Promise<Buffer> {
     this.document.end();
     return this.finished;
+  }
+
+  private useFont(style: Pick<TextStyle, 'font' | 'sizeMm'>, subset: FontSubset): void {
+    const name = `${style.font}-${subset}`;
+    if (!this.fonts.has(name)) {
+      this.document.registerFont(name, plexFont(style.font, subset));
+      this.fonts.add(name);
+    }
+    this.document.font(name).fontSize(style.sizeMm * POINTS_PER_MM);
   }
 
   private stroke(style: StrokeStyle, draw: () => void): void {

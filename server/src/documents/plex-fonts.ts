@@ -1,5 +1,6 @@
-import { existsSync } from 'node:fs';
+import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
+import { unpackWoff } from './unpack-woff';
 
 /** The cuts of IBM Plex that documents use. */
 export const PLEX = {
@@ -21,18 +22,26 @@ function findFontsFolder(): string {
   }
 }
 
-/** File of a cut; `extended` is the subset with the Latin letters beyond Western Europe. */
-export function plexFile(font: PlexFont, subset: 'latin' | 'extended' = 'latin'): string {
+export type FontSubset = 'latin' | 'extended';
+
+const unpacked = new Map<string, Buffer>();
+
+/**
+ * The font of a cut; `extended` is the subset with the Latin letters beyond Western Europe. From `.woff`, because the
+ * PDF library writes empty glyphs from `.woff2`. Unpacked once a process.
+ */
+export function plexFont(font: PlexFont, subset: FontSubset): Buffer {
   const name = subset === 'latin' ? PLEX[font] : PLEX[font].replace('-latin-', '-latin-ext-');
-  return path.join(
-    findFontsFolder(),
-    name.startsWith('ibm-plex-mono') ? 'ibm-plex-mono' : 'ibm-plex-sans',
-    `${name}.woff2`,
-  );
+  const known = unpacked.get(name);
+  if (known) return known;
+  const family = name.startsWith('ibm-plex-mono') ? 'ibm-plex-mono' : 'ibm-plex-sans';
+  const bytes = unpackWoff(readFileSync(path.join(findFontsFolder(), family, `${name}.woff`)));
+  unpacked.set(name, bytes);
+  return bytes;
 }
 
 export interface FontRun {
-  readonly subset: 'latin' | 'extended';
+  readonly subset: FontSubset;
   readonly text: string;
 }
 
