@@ -123,6 +123,7 @@ export const templateSchema = z.strictObject({
   kind: templateKindSchema,
   thicknessMm: z.number().check(z.gt(0), z.lte(20)),
   reading: cardReadingSchema,
+  flangesFold: z.exactOptional(z.enum(['towards', 'away'])),
 }) satisfies z.ZodMiniType<Template>;
 
 export const makingSchema = z.strictObject({
