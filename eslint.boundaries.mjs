@@ -159,8 +159,8 @@ const serverRows = [
 const BROWSER = [SHARED, '@angular/', 'rxjs(?:$|/)', '@mdi/js$'];
 const UI = '@foldwright/ui/';
 const APP = 'projects/foldwright/src/app';
+/** The steps of the open part. Folders of `part` that are not named here belong to all of them. */
 const PART_FEATURES = [
-  'board',
   'mock-up',
   'outline',
   'bends',

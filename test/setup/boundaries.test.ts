@@ -60,8 +60,8 @@ const BREACHES: readonly (readonly [string, string])[] = [
   [`${APP}/part/outline/outline-page.ts`, '../bends/bend-table'],
   [`${APP}/part/outline/panels/hole-list.ts`, '../../bends/bend-table'],
   [`${APP}/part/outline/outline-page.ts`, '../../office/orders-page'],
-  [`${APP}/part/board/tools/move-tool.ts`, '@angular/core'],
-  [`${APP}/part/board/snapping/snap.ts`, 'rxjs'],
+  [`${APP}/part/drawing-board/tools/move-tool.ts`, '@angular/core'],
+  [`${APP}/part/drawing-board/snapping/snap.ts`, 'rxjs'],
   [`${APP}/api/orders-api.ts`, '../office/orders-page'],
   ['projects/ui/src/money/money.ts', 'zod/mini'],
   ['projects/ui/src/money/money.ts', '../../../foldwright/src/app/api/orders-api'],
@@ -91,8 +91,9 @@ const LEGAL: readonly (readonly [string, string])[] = [
   [`${APP}/parts/part-list.ts`, '@foldwright/ui/money/money'],
   [`${APP}/part/outline/outline-page.ts`, '../part-store'],
   [`${APP}/part/outline/panels/hole-list.ts`, '../../part-store'],
+  [`${APP}/part/outline/outline-page.ts`, '../drawing-board/viewport'],
   [`${APP}/part/outline/panels/hole-list.ts`, '../../../api/parts-api'],
-  [`${APP}/part/board/tools/move-tool.ts`, '../viewport'],
+  [`${APP}/part/drawing-board/tools/move-tool.ts`, '../viewport'],
   ['projects/ui/src/part-viewer/part-viewer.ts', 'three'],
 ];
 

@@ -4,14 +4,21 @@ import { readJson, writeJson } from './places.mjs';
 import { isPortFree, portNear } from './ports.mjs';
 import { DEFAULT_PORT, keptSecrets, SettingsError } from './settings.mjs';
 
+/** The name of the product's database. */
+export const DATABASE = 'foldwright';
+
+const portsFile = ({ dataDir }) => path.join(dataDir, 'ports.json');
+
+/** The ports of the last start, by name; none before the first. */
+export const portsOfLastStart = (where) => readJson(portsFile(where)) ?? {};
+
 /**
  * Choose the ports. Those of the last start are taken again where free, so that addresses stored by the local services
  * stay good.
  * @throws {SettingsError} when the port that was asked for is taken
  */
-export async function choosePorts(given, { dataDir }) {
-  const file = path.join(dataDir, 'ports.json');
-  const last = readJson(file) ?? {};
+export async function choosePorts(given, where) {
+  const last = portsOfLastStart(where);
   const wish = given.FOLDWRIGHT_PORT;
   if (wish !== undefined && !(await isPortFree(Number(wish)))) {
     throw new SettingsError([`FOLDWRIGHT_PORT is ${wish}, but something else listens on that port.`]);
@@ -24,7 +31,7 @@ export async function choosePorts(given, { dataDir }) {
     taken.add(port);
     ports[name] = port;
   }
-  writeJson(file, ports);
+  writeJson(portsFile(where), ports);
   return ports;
 }
 

@@ -4,7 +4,7 @@ import path from 'node:path';
 import { buildServer, buildWeb, programPath } from './bundle.mjs';
 import { startCluster } from './cluster.mjs';
 import { ensureDebianPackages, MissingPackagesError } from './debian.mjs';
-import { choosePorts, ownAddress, productEnvironment, standIns } from './installation.mjs';
+import { choosePorts, DATABASE, ownAddress, productEnvironment, standIns } from './installation.mjs';
 import { ensurePackages } from './packages.mjs';
 import { ensureDirectory, readJson, ROOT, writeJson } from './places.mjs';
 import { isRunning, pause, processIdentity } from './processes.mjs';
@@ -12,7 +12,6 @@ import { places, readSettings, SettingsError } from './settings.mjs';
 import { CommandError, createSupervisor, StoppedError } from './supervisor.mjs';
 import { startWatchdog } from './watchdog.mjs';
 
-const DATABASE = 'foldwright';
 const HEALTH_PATIENCE_MS = 60_000;
 const PARENT_LOOK_MS = 500;
 
