@@ -206,16 +206,27 @@ export function pointInLoop(point: Point, loop: Loop, toleranceMm: number): Poin
 /** Contribution of a chord to the winding number, by the crossing rule that counts each height once. */
 function chordWinding(segment: Segment, point: Point): number {
   const { from, to } = segment;
-  if (from.y <= point.y && to.y > point.y) return orientation(from, to, point) > 0 ? 1 : 0;
-  if (from.y > point.y && to.y <= point.y) return orientation(from, to, point) < 0 ? -1 : 0;
+  if (from.y <= point.y && to.y > point.y) return sideOf(from, to, point) > 0 ? 1 : 0;
+  if (from.y > point.y && to.y <= point.y) return sideOf(from, to, point) < 0 ? -1 : 0;
   return 0;
+}
+
+/**
+ * Side of a chord that a point lies on: 1 left, -1 right. A point exactly on the chord counts as if it lay a touch up and,
+ * less, to the left, so that two arcs on one chord, as in a circle of two halves, agree about it.
+ */
+function sideOf(from: Point, to: Point, point: Point): 1 | -1 {
+  const side = orientation(from, to, point);
+  if (side !== 0) return side;
+  const isUpward = to.y === from.y ? to.x > from.x : to.y > from.y;
+  return isUpward ? 1 : -1;
 }
 
 /** Whether a point lies between an arc and its chord. */
 function isInsideCap(arc: ArcSegment, point: Point): boolean {
   if (distance(point, arc.centre) >= arcRadius(arc)) return false;
   if (Math.abs(arcSweepDeg(arc)) >= 360) return true;
-  const side = orientation(arc.from, arc.to, point);
+  const side = sideOf(arc.from, arc.to, point);
   // A counter-clockwise arc bulges to the right of its chord.
   return arc.clockwise ? side > 0 : side < 0;
 }
