@@ -1,10 +1,12 @@
 import type passport from 'passport';
 import type { Logger } from 'pino';
+import type { CuttingService } from './cutting/cutting-service';
 import type { Database } from './database/database';
 import type { LiveHub } from './events/live-hub';
 import type { FileStore } from './files/file-store';
 import type { RateLimits } from './http/rate-limit';
 import type { Queue } from './jobs/queue';
+import type { PaymentHost } from './payments/payment-host';
 
 /** What the routes work with. Made once by the process, handed down; nothing below reaches for a global. */
 export interface AppDependencies {
@@ -12,6 +14,8 @@ export interface AppDependencies {
   readonly queue: Queue;
   readonly files: FileStore;
   readonly hub: LiveHub;
+  readonly payments: PaymentHost;
+  readonly cutting: CuttingService;
   readonly logger: Logger;
   readonly limits: RateLimits;
   readonly authenticator: passport.Authenticator;

@@ -5,6 +5,7 @@ import type { Express } from 'express';
 import pino from 'pino';
 import type { AppOptions } from '@foldwright/server/app';
 import { buildApp } from '@foldwright/server/app';
+import { HttpCuttingService } from '@foldwright/server/cutting/http-cutting-service';
 import type { Database } from '@foldwright/server/database/database';
 import { connectDatabase } from '@foldwright/server/database/database';
 import { openLiveHub } from '@foldwright/server/events/live-hub';
@@ -12,9 +13,13 @@ import type { FileStore } from '@foldwright/server/files/file-store';
 import { openFileStore } from '@foldwright/server/files/file-store';
 import type { Queue } from '@foldwright/server/jobs/queue';
 import { openQueue } from '@foldwright/server/jobs/queue';
+import { StripePaymentHost } from '@foldwright/server/payments/stripe-payment-host';
 import { createTestDatabase } from './database';
 
 export const TEST_SESSION_SECRET = 'a secret that only tests use, long enough';
+
+/** An address where nothing listens: outside services are away unless a test brings its own. */
+const NOBODY_THERE = 'http://127.0.0.1:1';
 
 /** The web application on a database and a folder of its own, ready for supertest. */
 export interface TestApp {
@@ -53,6 +58,8 @@ export async function startTestApp(overrides: Partial<AppOptions> & { poolSize?:
     queue,
     files,
     hub,
+    payments: new StripePaymentHost({ apiKey: 'sk_test', hostUrl: NOBODY_THERE, webhookSecret: 'secret', retries: 0 }),
+    cutting: new HttpCuttingService({ url: NOBODY_THERE, key: 'key', callbackSecret: 'secret', now: () => new Date() }),
     logger,
     publicUrl: 'http://127.0.0.1:4310',
     now: () => new Date(),

@@ -132,7 +132,7 @@ describe('HttpCuttingService', () => {
     ['lines that do not add up', { ...PRICED, breaks: [{ ...row, totalMinor: 1201 }] }],
     ['a price for another quantity', { ...PRICED, breaks: [{ ...row, quantity: 2 }] }],
     ['a price in another currency', { ...PRICED, currency: 'USD' }],
-    ['fractions of a cent', { ...PRICED, breaks: [{ ...row, eachMinor: 0.5 }] }],
+    ['fractions of a cent', { ...PRICED, breaks: [{ ...row, totalMinor: 1200.5 }] }],
   ])('does not believe %s', async (_name, body) => {
     await expect(ask(answers(201, body))).rejects.toBeInstanceOf(CuttingServiceNonsense);
   });

@@ -1,3 +1,4 @@
+import { eachMinor, sumOfLines } from '@foldwright/shared/pricing/price-lines';
 import * as z from 'zod/mini';
 import type { CutOrder, CuttingProgress, CuttingService, PriceAnswer, PriceQuestion } from './cutting-service';
 import {
@@ -32,7 +33,6 @@ const quoteAnswer = z.discriminatedUnion('state', [
     breaks: z.array(
       z.object({
         quantity: z.int(),
-        eachMinor: minor,
         totalMinor: minor,
         leadTimeDays: z.int(),
         lines: z.array(z.object({ label: z.string(), amountMinor: minor })),
@@ -71,17 +71,13 @@ export class HttpCuttingService implements CuttingService {
     const money = (amountMinor: number) => ({ amountMinor, currency: answer.currency });
     const breaks = question.quantities.map((quantity) => {
       const row = answer.breaks.find((candidate) => candidate.quantity === quantity);
-      const sum = row?.lines.reduce((total, line) => total + line.amountMinor, 0);
+      const lines = row?.lines.map((line) => ({ label: line.label, amount: money(line.amountMinor) })) ?? [];
+      const sum = lines.length === 0 ? 0 : sumOfLines(lines).amountMinor;
       if (row === undefined || answer.currency !== question.currency || sum !== row.totalMinor || sum <= 0) {
         throw new CuttingServiceNonsense(`The prices for ${quantity} do not add up or are missing.`);
       }
-      return {
-        quantity,
-        each: money(row.eachMinor),
-        total: money(row.totalMinor),
-        lines: row.lines.map((line) => ({ label: line.label, amount: money(line.amountMinor) })),
-        leadTimeDays: row.leadTimeDays,
-      };
+      const total = money(row.totalMinor);
+      return { quantity, each: money(eachMinor({ quantity, total })), total, lines, leadTimeDays: row.leadTimeDays };
     });
     return { kind: 'priced', quoteReference: answer.id, validUntil: new Date(answer.validUntil), breaks };
   }

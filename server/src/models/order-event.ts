@@ -1,5 +1,5 @@
 import type { Order } from '@foldwright/shared/contracts/orders';
-import type { CreationOptional, InferAttributes, InferCreationAttributes, ModelStatic, Sequelize } from 'sequelize';
+import type { InferAttributes, InferCreationAttributes, ModelStatic, Sequelize } from 'sequelize';
 import { DataTypes, Model } from 'sequelize';
 
 /** Something that happened to an order. One row for each `key` of an order, however often it was told. */

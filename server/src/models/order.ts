@@ -34,7 +34,6 @@ export class Order extends Model<InferAttributes<Order>, InferCreationAttributes
   declare placedByName: string;
   declare placedByEmail: string;
   declare placedAt: Date;
-  declare idempotencyKey: string;
 }
 
 /** The table `orders` on one connection. */
@@ -72,7 +71,6 @@ export function defineOrder(sequelize: Sequelize): ModelStatic<Order> {
       placedByName: { type: DataTypes.TEXT, allowNull: false },
       placedByEmail: { type: DataTypes.TEXT, allowNull: false },
       placedAt: { type: DataTypes.DATE, allowNull: false },
-      idempotencyKey: { type: DataTypes.TEXT, allowNull: false },
     },
     { sequelize, modelName: 'Order', tableName: 'orders', underscored: true, timestamps: false },
   );

@@ -13,7 +13,7 @@ export class Quote extends Model<InferAttributes<Quote>, InferCreationAttributes
   declare statement: 'cut-and-bend-to-our-flat' | 'formed-sizes-rule';
   declare quantities: number[];
   declare state: 'asked' | 'priced' | 'refused' | 'unreachable';
-  declare breaks: CreationOptional<unknown>;
+  declare breaks: CreationOptional<readonly object[]>;
   declare refusal: CreationOptional<string | null>;
   declare quoteReference: CreationOptional<string | null>;
   declare validUntil: CreationOptional<Date | null>;

@@ -1,9 +1,16 @@
 import type { AppDependencies } from '../app-dependencies';
 import type { BoundRoute } from '../http/route-call';
+import { officeMailRoutes } from './office-mails';
+import { orderRoutes } from './orders';
 import { partRoutes } from './parts';
 import { sessionRoutes } from './session';
 
 /** Every route of the product. `serveRoutes` refuses to start when one of the registry is missing here. */
 export function allRoutes(dependencies: AppDependencies): BoundRoute[] {
-  return [...sessionRoutes(dependencies), ...partRoutes(dependencies)];
+  return [
+    ...sessionRoutes(dependencies),
+    ...partRoutes(dependencies),
+    ...orderRoutes(dependencies),
+    ...officeMailRoutes(dependencies),
+  ];
 }

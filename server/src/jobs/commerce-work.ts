@@ -1,0 +1,39 @@
+import * as z from 'zod/mini';
+import type { CuttingService } from '../cutting/cutting-service';
+import type { FileStore } from '../files/file-store';
+import type { PaymentHost } from '../payments/payment-host';
+import type { SendMailTools } from '../services/send-mail';
+import { sendMail } from '../services/send-mail';
+import { closeCheckout, refundPayment } from '../services/settle-payment';
+import { submitCuttingOrder } from '../services/submit-cutting-order';
+import type { QueueName } from './queue';
+
+/** What the work after commit of orders needs. */
+export interface CommerceTools extends SendMailTools {
+  readonly files: FileStore;
+  readonly cutting: CuttingService;
+  readonly payments: PaymentHost;
+}
+
+/** Does one piece of work of a queue; a thrown error has the queue try again. */
+export type WorkHandler = (data: unknown) => Promise<void>;
+
+const mailWork = z.object({ workshopId: z.uuid(), mailId: z.uuid() });
+const orderWork = z.object({ workshopId: z.uuid(), orderId: z.uuid() });
+const paymentWork = z.discriminatedUnion('task', [
+  z.object({ task: z.literal('refund'), ...orderWork.shape, paymentId: z.string() }),
+  z.object({ task: z.literal('close-checkout'), ...orderWork.shape }),
+]);
+
+/** The handlers of everything that follows an order: mail, the cutting service, the payment host. */
+export function commerceWork(tools: CommerceTools): Readonly<Record<Exclude<QueueName, 'trace'>, WorkHandler>> {
+  return {
+    mail: (data) => sendMail(tools, mailWork.parse(data)),
+    'cutting-order': (data) => submitCuttingOrder(tools, orderWork.parse(data)),
+    payment: async (data) => {
+      const work = paymentWork.parse(data);
+      if (work.task === 'refund') await refundPayment(tools.payments, work);
+      else await closeCheckout(tools, work);
+    },
+  };
+}

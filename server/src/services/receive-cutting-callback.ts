@@ -1,0 +1,58 @@
+import type { AppDependencies } from '../app-dependencies';
+import type { CuttingProgress } from '../cutting/cutting-service';
+import { UnprovenCallback } from '../cutting/cutting-service';
+import type { OrderFact } from './order-state';
+import { refuseMessage, takeMessage } from './take-message';
+
+/**
+ * Take a signed callback of the cutting service, from its bytes as they came.
+ * @param header value of a header of the message, by its lower-case name
+ * @throws Problem `invalid-input` for one that does not prove where it comes from; nothing of it is stored
+ */
+export async function receiveCuttingCallback(
+  tools: Pick<AppDependencies, 'database' | 'queue' | 'publicUrl' | 'now' | 'cutting'>,
+  body: Buffer,
+  header: (name: string) => string | undefined,
+): Promise<void> {
+  const progress = await provenProgress(tools, body, header);
+  if (progress === null) return;
+  const { id, at, step, orderReference } = progress;
+  const message = {
+    provider: 'cutting',
+    eventId: id,
+    kind: step,
+    orderId: orderReference,
+    happenedAt: at,
+    body,
+  } as const;
+  await takeMessage(tools, 'find the workshop of a cutting callback', message, () =>
+    Promise.resolve([factOf(progress)]),
+  );
+}
+
+async function provenProgress(
+  tools: Pick<AppDependencies, 'database' | 'now' | 'cutting'>,
+  body: Buffer,
+  header: (name: string) => string | undefined,
+): Promise<CuttingProgress | null> {
+  try {
+    return tools.cutting.readCallback(body, header);
+  } catch (error) {
+    // Only a missing proof is foreseen here.
+    if (error instanceof UnprovenCallback) return refuseMessage(tools, 'cutting', error);
+    throw error;
+  }
+}
+
+function factOf({ id, at, step, trackingCode, reason }: CuttingProgress): OrderFact {
+  return {
+    key: step,
+    kind: step,
+    at,
+    source: id,
+    details: {
+      ...(step === 'shipped' && trackingCode !== null ? { trackingCode } : {}),
+      ...(step === 'refused' && reason !== null ? { reason } : {}),
+    },
+  };
+}
