@@ -14,7 +14,6 @@ import { scopeOf } from './workshop-scope';
 export type SystemReason =
   | 'find the workshop of a payment event'
   | 'find the workshop of a cutting callback'
-  | 'list work left by a dead worker'
   | 'list mails that wait'
   | 'show the installation to its operator';
 

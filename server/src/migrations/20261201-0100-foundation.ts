@@ -97,6 +97,14 @@ const TABLES = `
     beat_at timestamptz NOT NULL DEFAULT now()
   );
 
+  -- Work that a worker has taken from the queue; what a dead one leaves here goes back.
+  CREATE TABLE work_in_hand (
+    queue_job_id uuid PRIMARY KEY,
+    queue text NOT NULL,
+    worker_id uuid NOT NULL,
+    taken_at timestamptz NOT NULL DEFAULT now()
+  );
+
   -- Runs with the owner's rights, since old rows of every workshop go; it takes no input, so it can do nothing else.
   CREATE FUNCTION foldwright_prune() RETURNS void LANGUAGE sql SECURITY DEFINER SET search_path = public, pg_temp AS $$
     DELETE FROM live_events WHERE created_at < now() - interval '1 day';
@@ -145,7 +153,7 @@ export const foundation: Migration = {
     await query(`
       DROP SCHEMA pgboss CASCADE;
       DROP FUNCTION foldwright_prune;
-      DROP TABLE worker_heartbeats, idempotency_keys, audit_entries, live_events, rate_limits, http_sessions;
+      DROP TABLE work_in_hand, worker_heartbeats, idempotency_keys, audit_entries, live_events, rate_limits, http_sessions;
       DROP POLICY workshops_own ON workshops;
       DROP TABLE memberships, users, workshops;
       DROP FUNCTION announce_live_event, foldwright_reads_all, foldwright_user, foldwright_workshop;

@@ -8,7 +8,7 @@ export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job
   declare kind: 'trace';
   declare state: 'waiting' | 'running' | 'done' | 'failed' | 'stopped';
   declare stages: unknown;
-  declare failure: CreationOptional<unknown>;
+  declare failure: CreationOptional<object | null>;
   declare attempt: CreationOptional<number>;
   declare photoId: string | null;
   declare partId: string | null;

@@ -18,8 +18,8 @@ export class Photo extends Model<InferAttributes<Photo>, InferCreationAttributes
   declare originalStoredAs: string;
   declare displayStoredAs: string;
   declare rectifiedStoredAs: CreationOptional<string | null>;
-  declare rectified: CreationOptional<unknown>;
-  declare trace: CreationOptional<unknown>;
+  declare rectified: CreationOptional<object | null>;
+  declare trace: CreationOptional<object | null>;
   declare uploadedBy: string;
   declare uploadedAt: CreationOptional<Date>;
 }
