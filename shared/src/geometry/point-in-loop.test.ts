@@ -5,15 +5,19 @@ import { moveLoop, movePoint } from './transform';
 describe('pointInLoop on the chords of arcs', () => {
   it('finds every point of a circle of two halves, those on its chord too', () => {
     fc.assert(
-      fc.property(fc.integer({ min: 0, max: 359 }), fc.double({ min: -1.5, max: 1.5, noNaN: true }), (turnDeg, reach) => {
-        fc.pre(Math.abs(Math.abs(reach) - 1) > 1e-6);
-        const motion = { turnDeg, shift: { x: 3, y: -2 } };
-        const circle = moveLoop(motion, circleLoop({ x: 0, y: 0 }, 10));
-        const onChord = movePoint(motion, { x: 10 * reach, y: 0 });
-        const expected = Math.abs(reach) < 1 ? 'inside' : 'outside';
-        expect(pointInLoop(onChord, circle, 0)).toBe(expected);
-        expect(pointInLoop(onChord, reverseLoop(circle), 0)).toBe(expected);
-      }),
+      fc.property(
+        fc.integer({ min: 0, max: 359 }),
+        fc.double({ min: -1.5, max: 1.5, noNaN: true }),
+        (turnDeg, reach) => {
+          fc.pre(Math.abs(Math.abs(reach) - 1) > 1e-6);
+          const motion = { turnDeg, shift: { x: 3, y: -2 } };
+          const circle = moveLoop(motion, circleLoop({ x: 0, y: 0 }, 10));
+          const onChord = movePoint(motion, { x: 10 * reach, y: 0 });
+          const expected = Math.abs(reach) < 1 ? 'inside' : 'outside';
+          expect(pointInLoop(onChord, circle, 0)).toBe(expected);
+          expect(pointInLoop(onChord, reverseLoop(circle), 0)).toBe(expected);
+        },
+      ),
     );
   });
 

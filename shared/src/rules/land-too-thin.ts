@@ -3,6 +3,7 @@ import { loopBounds, pointInLoop } from '../geometry/loop';
 import type { Loop } from '../geometry/path';
 import type { Bounds, Point } from '../geometry/point';
 import { moveLoop, shiftBy } from '../geometry/transform';
+import { segmentBounds } from '../geometry/segment';
 import { boundsMeet, magnitude, scale, subtract } from '../geometry/vector';
 import { formatDecimal } from '../units/length';
 import { type CutOpening, type CutSheet, cutSheet } from './cut-openings';
@@ -18,9 +19,13 @@ export function checkLandTooThin(context: RuleContext): readonly Finding[] {
   const sheet = cutSheet(context);
   const requiredMm = Math.max(LAND.overT * context.sheet.thicknessMm, LAND.smallestMm);
   const boxes = sheet.openings.map(({ loop }) => loopBounds(loop));
+  const edges = sheet.outer.map((segment) => ({ segment, bounds: segmentBounds(segment) }));
   const findings: Finding[] = [];
   sheet.openings.forEach((opening, index) => {
-    findings.push(...checkToEdge(context, sheet, opening, requiredMm));
+    const box = boxes[index];
+    // Most openings are far from most edges; only the near ones are measured.
+    const near = edges.filter(({ bounds }) => couldMeet(box, bounds, requiredMm)).map(({ segment }) => segment);
+    findings.push(...checkToEdge(context, sheet, opening, near, requiredMm));
     for (let other = index + 1; other < sheet.openings.length; other += 1) {
       const second = sheet.openings[other];
       if (second === undefined || !couldMeet(boxes[index], boxes[other], requiredMm)) continue;
@@ -34,21 +39,26 @@ function couldMeet(a: Bounds | null | undefined, b: Bounds | null | undefined, m
   return a != null && b != null && boundsMeet(a, b, marginMm);
 }
 
-/** Shortest land between an opening and the sheet's edge; 0 when it reaches over the edge. */
-function landToEdge(outer: Loop, loop: Loop): Clearance | null {
-  const clearance = loopClearance(loop, outer);
+/**
+ * Shortest land between an opening and the sheet's edge; 0 when it reaches over the edge or lies off the sheet.
+ * @param near the pieces of the edge to measure to; null when there are none and the opening is on the sheet
+ */
+function landToEdge(outer: Loop, near: Loop, loop: Loop): Clearance | null {
   const start = loop[0]?.from;
-  if (clearance === null || start === undefined) return null;
-  return pointInLoop(start, outer, 0) === 'outside' ? { ...clearance, distanceMm: 0 } : clearance;
+  if (start === undefined) return null;
+  const clearance = loopClearance(loop, near);
+  if (pointInLoop(start, outer, 0) !== 'outside') return clearance;
+  return { from: start, to: start, ...clearance, distanceMm: 0 };
 }
 
 function checkToEdge(
   context: RuleContext,
   sheet: CutSheet,
   opening: CutOpening,
+  near: Loop,
   requiredMm: number,
 ): readonly Finding[] {
-  const land = landToEdge(sheet.outer, opening.loop);
+  const land = landToEdge(sheet.outer, near, opening.loop);
   if (land === null || land.distanceMm >= requiredMm - LIMIT_SLACK_MM) return [];
   const foundMm = land.distanceMm;
   const isBlocker = foundMm <= LIMIT_SLACK_MM;
@@ -89,7 +99,7 @@ function moveIn(
   const missingMm = requiredMm - land.distanceMm;
   const by: Point = scale(inward, missingMm / magnitude(inward));
   const moved = moveLoop(shiftBy(by), opening.loop);
-  const toEdge = landToEdge(sheet.outer, moved);
+  const toEdge = landToEdge(sheet.outer, sheet.outer, moved);
   const isClear =
     toEdge !== null &&
     toEdge.distanceMm >= requiredMm - LIMIT_SLACK_MM &&
