@@ -6,7 +6,12 @@ import { SignIn } from './sign-in';
 
 const NOBODY = { user: null, memberships: [], current: null, csrfToken: 'first' };
 const TOMASZ = {
-  user: { id: '5f0c6c0e-5d7c-4a68-9d49-0b8a7f1f2c11', name: 'Tomasz Wren', email: 'tomasz@example.test', isOperator: false },
+  user: {
+    id: '5f0c6c0e-5d7c-4a68-9d49-0b8a7f1f2c11',
+    name: 'Tomasz Wren',
+    email: 'tomasz@example.test',
+    isOperator: false,
+  },
   memberships: [],
   current: null,
   csrfToken: 'second',
@@ -69,7 +74,13 @@ describe('SignIn', () => {
     http
       .expectOne({ method: 'POST', url: '/api/session' })
       .flush(
-        { type: '/problems/wrong-sign-in', title: 'E-mail or password is wrong', status: 401, detail: 'Try again.', instance: '/' },
+        {
+          type: '/problems/wrong-sign-in',
+          title: 'E-mail or password is wrong',
+          status: 401,
+          detail: 'Try again.',
+          instance: '/',
+        },
         { status: 401, statusText: '' },
       );
     await settled();

@@ -17,7 +17,16 @@ import { ThemeChoice } from './theme-choice';
 /** The frame around every page of somebody signed in: mark, areas, workshop, theme, the person, and notices. */
 @Component({
   selector: 'fw-frame',
-  imports: [BrandMark, MatButtonModule, MatMenuModule, NoticeCard, Pictogram, RouterLink, RouterLinkActive, RouterOutlet],
+  imports: [
+    BrandMark,
+    MatButtonModule,
+    MatMenuModule,
+    NoticeCard,
+    Pictogram,
+    RouterLink,
+    RouterLinkActive,
+    RouterOutlet,
+  ],
   templateUrl: './frame.html',
   styleUrl: './frame.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -10,12 +10,16 @@ import type { Notice } from '../api/notices';
   template: `
     <fw-finding-sign [severity]="severity()" />
     <div class="words">
-      <p><b>{{ notice().title }}.</b> {{ notice().detail }}</p>
+      <p>
+        <b>{{ notice().title }}.</b> {{ notice().detail }}
+      </p>
       @if (more()) {
         <p>{{ more() }}</p>
       }
       @if (notice().requestId; as id) {
-        <p class="fw-note">Tell the operator this number: <span class="fw-figure">{{ id }}</span></p>
+        <p class="fw-note">
+          Tell the operator this number: <span class="fw-figure">{{ id }}</span>
+        </p>
       }
     </div>
     <button type="button" aria-label="Put this notice away" title="Put this notice away" (click)="dismissed.emit()">
@@ -32,5 +36,7 @@ export class NoticeCard {
   readonly dismissed = output<void>();
 
   protected readonly severity = computed(() => (this.notice().tone === 'stop' ? 'blocker' : 'hint'));
-  protected readonly more = computed(() => [this.notice().kept, this.notice().next].filter((part) => part !== null).join(' '));
+  protected readonly more = computed(() =>
+    [this.notice().kept, this.notice().next].filter((part) => part !== null).join(' '),
+  );
 }

@@ -49,6 +49,8 @@ export class ThemeChoice {
 
   private mediaQuery(): MediaQueryList | null {
     const view = this.document.defaultView;
-    return view !== null && typeof view.matchMedia === 'function' ? view.matchMedia('(prefers-color-scheme: dark)') : null;
+    return view !== null && typeof view.matchMedia === 'function'
+      ? view.matchMedia('(prefers-color-scheme: dark)')
+      : null;
   }
 }

@@ -12,7 +12,10 @@ import { localAddress } from '../api/local-address';
   template: `
     <section>
       <h1>{{ problem()?.details?.title ?? 'The server doesn’t answer' }}</h1>
-      <p>{{ problem()?.details?.detail ?? 'Foldwright could not find out who is signed in.' }} What was stored before is kept.</p>
+      <p>
+        {{ problem()?.details?.detail ?? 'Foldwright could not find out who is signed in.' }} What was stored before is
+        kept.
+      </p>
       <p>{{ problem()?.details?.next ?? 'Wait a moment, then try again.' }}</p>
       <div class="go">
         <button matButton="filled" type="button" [disabled]="isTrying()" (click)="tryAgain()">Try again</button>

@@ -1,0 +1,58 @@
+import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { MatButtonModule } from '@angular/material/button';
+import type { Mail } from '@foldwright/shared/contracts/office';
+import { momentWords } from '@foldwright/ui/date-text/date-words';
+import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
+import { auditTime, filter, merge } from 'rxjs';
+import { LiveEvents } from '../api/live-events';
+import { OfficeApi } from '../api/office-api';
+import { SessionApi } from '../api/session-api';
+
+const REREAD_AFTER_MS = 400;
+
+const MAIL_STATE_WORDS: Readonly<Record<Mail['state'], string>> = {
+  waiting: 'waiting to be sent',
+  sent: 'sent',
+  failed: 'could not be sent',
+};
+
+/** The office: who belongs to the workshop, what mail went out, who did what. Each is shown to the roles it is for. */
+@Component({
+  selector: 'fw-office-page',
+  imports: [MatButtonModule, Pictogram],
+  templateUrl: './office-page.html',
+  styleUrl: './office-page.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+  host: { class: 'fw-page' },
+})
+export class OfficePage {
+  private readonly office = inject(OfficeApi);
+  private readonly session = inject(SessionApi);
+  private readonly live = inject(LiveEvents);
+
+  protected readonly seesMails = this.session.canMake;
+  protected readonly seesAudit = computed(() => this.session.role() === 'owner');
+  protected readonly members = this.office.members();
+  protected readonly mails = this.office.mails(this.seesMails);
+  protected readonly audit = this.office.auditTrail(this.seesAudit);
+  protected readonly me = this.session.user;
+
+  private readonly now = new Date();
+  protected readonly mailRows = computed(() =>
+    (this.mails.value()?.mails ?? []).map((mail) => ({
+      mail,
+      state: MAIL_STATE_WORDS[mail.state],
+      when: momentWords(mail.sentAt ?? mail.createdAt, this.now),
+    })),
+  );
+  protected readonly auditRows = computed(() =>
+    (this.audit.value()?.entries ?? []).map((entry) => ({ entry, when: momentWords(entry.at, this.now) })),
+  );
+
+  constructor() {
+    merge(this.live.events.pipe(filter(({ kind }) => kind === 'mail-changed')), this.live.resumed)
+      .pipe(auditTime(REREAD_AFTER_MS), takeUntilDestroyed())
+      .subscribe(() => this.mails.reload());
+  }
+}
