@@ -1,5 +1,5 @@
 import connectPgSimple from 'connect-pg-simple';
-import type { RequestHandler } from 'express';
+import type { Request, RequestHandler } from 'express';
 import session from 'express-session';
 import type { Pool } from 'pg';
 import './session-types';
@@ -31,5 +31,15 @@ export function sessions({ pool, secret, isSecure, onStoreError }: SessionOption
       pruneSessionInterval: 15 * 60,
       errorLog: (...parts: unknown[]) => onStoreError(new Error(parts.map(String).join(' '))),
     }),
+  });
+}
+
+/** Whether the session a request came with has not been ended since, by whichever process. */
+export function isSessionAlive(request: Request): Promise<boolean> {
+  return new Promise((resolve, reject) => {
+    request.sessionStore.get(request.sessionID, (error: unknown, stored) => {
+      if (error) reject(error);
+      else resolve(stored !== null && stored !== undefined);
+    });
   });
 }

@@ -3,14 +3,20 @@ import type { BoundRoute } from '../http/route-call';
 import { officeMailRoutes } from './office-mails';
 import { orderRoutes } from './orders';
 import { partRoutes } from './parts';
+import { photoRoutes } from './photos';
+import { revisionRoutes } from './revisions';
 import { sessionRoutes } from './session';
+import { systemRoutes } from './system';
 
 /** Every route of the product. `serveRoutes` refuses to start when one of the registry is missing here. */
 export function allRoutes(dependencies: AppDependencies): BoundRoute[] {
   return [
     ...sessionRoutes(dependencies),
     ...partRoutes(dependencies),
+    ...photoRoutes(dependencies),
+    ...revisionRoutes(dependencies),
     ...orderRoutes(dependencies),
     ...officeMailRoutes(dependencies),
+    ...systemRoutes(dependencies),
   ];
 }
