@@ -190,13 +190,17 @@ export async function startCluster({ home: wish, port: wishedPort, isDisposable 
   }
 }
 
-/** Stop the server of a cluster; one that does not run is left alone. */
+/**
+ * Stop the server of a cluster; one that does not run is left alone.
+ * @returns {Promise<boolean>} whether there was one to stop
+ */
 export async function stopCluster({ home: wish, mode = 'fast' }) {
   const home = clusterHome(wish);
   const data = path.join(home, 'data');
-  if ((await portOfRunningServer(data)) === undefined) return;
+  if ((await portOfRunningServer(data)) === undefined) return false;
   const context = { account: serverAccount(), home };
   runProgram(path.join(findPrograms(), 'pg_ctl'), ['-D', data, '-w', '-t', '30', '-m', mode, 'stop'], context);
+  return true;
 }
 
 function clusterAt(context) {

@@ -6,6 +6,7 @@ import { isRunning, pause, signalGroup } from './processes.mjs';
 import { releaseTestCluster } from './test-cluster.mjs';
 
 const GRACE_MS = 4000;
+const LATE_START_MS = 2000;
 
 const groups = new Set();
 const clusters = new Set();
@@ -25,7 +26,12 @@ async function stopEverything() {
   const deadline = Date.now() + GRACE_MS;
   while (Date.now() < deadline && [...groups].some(isRunning)) await pause(100);
   for (const group of groups) signalGroup(group, 'SIGKILL');
-  for (const home of clusters) await stopCluster({ home });
+  for (const home of clusters) {
+    if (await stopCluster({ home })) continue;
+    // The supervisor may have been killed while it was starting this one, which then comes up a moment later.
+    await pause(LATE_START_MS);
+    await stopCluster({ home });
+  }
   for (const use of testClusterUses) await releaseTestCluster(use);
 }
 
