@@ -1,9 +1,11 @@
 import { loopReach } from '../geometry/loop';
-import type { Point3 } from '../geometry/point';
+import type { LineSegment } from '../geometry/path';
+import type { Point, Point3 } from '../geometry/point';
 import { pointAt } from '../geometry/segment';
+import { dot, subtract } from '../geometry/vector';
 import { dot3 } from '../geometry/vector3';
 import type { BendZone, FormedBox, Panel } from './development';
-import { panelPoses, placeInZone } from './fold';
+import { direction3, panelPoses, placeInZone } from './fold';
 import type { Pose } from './fold';
 
 const AXES: readonly Point3[] = [
@@ -48,10 +50,50 @@ function zoneReach(zone: BendZone, parent: Pose | undefined, axis: Point3, thick
     for (const height of [0, thicknessMm]) {
       const reach = (t: number): number =>
         dot3(placeInZone(zone, parent, thicknessMm, 1, pointAt(segment, t), height).at, axis);
-      best = Math.max(best, largest(reach));
+      if (segment.kind === 'arc') best = Math.max(best, largest(reach));
+      else
+        for (const t of turningFractions(zone, parent, axis, segment, height, thicknessMm))
+          best = Math.max(best, reach(t));
     }
   }
   return best;
+}
+
+/**
+ * Fractions of a straight edge of a zone at which it can lie farthest along an axis: its ends, and where its image on the
+ * cylinder runs across the axis. On the image the height over the axis is linear in the turn plus a sine of it.
+ */
+function turningFractions(
+  zone: BendZone,
+  parent: Pose,
+  axis: Point3,
+  edge: LineSegment,
+  heightMm: number,
+  thicknessMm: number,
+): readonly number[] {
+  const turnAt = (point: Point): number =>
+    (dot(subtract(point, zone.origin), zone.towardsChild) / zone.bendAllowanceMm) *
+    ((zone.bendAngleDeg * Math.PI) / 180);
+  const start = turnAt(edge.from);
+  const turned = turnAt(edge.to) - start;
+  if (turned === 0) return [0, 1];
+  const isTowards = zone.direction === 'towards';
+  const radius = zone.insideRadiusMm + (isTowards ? thicknessMm - heightMm : heightMm);
+  const sine = (isTowards ? 1 : -1) * dot3(parent.uz, axis);
+  const cosine = dot3(direction3(parent, zone.towardsChild), axis);
+  const size = Math.hypot(sine, cosine) * radius * turned;
+  const drift = dot3(direction3(parent, zone.along), axis) * dot(subtract(edge.to, edge.from), zone.along);
+  const fractions = [0, 1];
+  if (Math.abs(drift) > Math.abs(size)) return fractions;
+  const middle = Math.atan2(sine, cosine);
+  const half = size === 0 ? 0 : Math.acos(-drift / size);
+  for (const turn of [middle - half, middle + half]) {
+    for (const whole of [-1, 0, 1]) {
+      const t = (turn + 2 * Math.PI * whole - start) / turned;
+      if (t > 0 && t < 1) fractions.push(t);
+    }
+  }
+  return fractions;
 }
 
 /** Largest value of a smooth function on 0..1: samples, then thirds around the best. */

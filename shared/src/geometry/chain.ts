@@ -10,25 +10,35 @@ import { directionDeg, distance, scale } from './vector';
  */
 export function pointNumbers(toleranceMm: number): (point: Point) => number {
   const cellMm = 4 * toleranceMm;
-  const cells = new Map<string, { readonly point: Point; readonly id: number }[]>();
+  const cells = new Map<number, { readonly point: Point; readonly id: number }[]>();
   let count = 0;
   return (point) => {
     const column = Math.floor(point.x / cellMm);
     const row = Math.floor(point.y / cellMm);
     for (let dx = -1; dx <= 1; dx += 1) {
       for (let dy = -1; dy <= 1; dy += 1) {
-        for (const known of cells.get(`${String(column + dx)} ${String(row + dy)}`) ?? []) {
-          if (distance(known.point, point) <= toleranceMm) return known.id;
-        }
+        const known = cells
+          .get(cellKey(column + dx, row + dy))
+          ?.find((one) => distance(one.point, point) <= toleranceMm);
+        if (known !== undefined) return known.id;
       }
     }
-    const key = `${String(column)} ${String(row)}`;
+    const key = cellKey(column, row);
+    const crowd = cells.get(key);
     const entry = { point, id: count };
-    cells.set(key, [...(cells.get(key) ?? []), entry]);
+    if (crowd === undefined) cells.set(key, [entry]);
+    else crowd.push(entry);
     count += 1;
     return entry.id;
   };
 }
+
+/** One number for a cell of the plane. Different cells may share one; distances decide in the end. */
+function cellKey(column: number, row: number): number {
+  return column * CELL_STRIDE + row;
+}
+
+const CELL_STRIDE = 1_000_003;
 
 /** Direction in which a segment leaves its start, degrees. */
 function departureDeg(segment: Segment): number {
