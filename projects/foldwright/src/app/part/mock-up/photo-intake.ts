@@ -16,7 +16,7 @@ const TAKEN_TYPES: readonly string[] = ['image/jpeg', 'image/png', 'image/webp']
 
 /** Where a photo comes in: what to print and lay out first, what the template is made of, then drop, choose or take one. */
 @Component({
-  selector: 'app-photo-intake',
+  selector: 'fw-photo-intake',
   imports: [LengthInput, MatButtonModule, MatFormFieldModule, MatSelectModule, Pictogram, ReactiveFormsModule],
   templateUrl: './photo-intake.html',
   styleUrl: './photo-intake.scss',

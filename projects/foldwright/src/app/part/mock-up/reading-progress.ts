@@ -14,7 +14,7 @@ const STAGE_WORDS: Readonly<Record<TraceStage, string>> = {
 
 /** The stages of a reading as they happen, each with what it found; a reading that is under way can be stopped. */
 @Component({
-  selector: 'app-reading-progress',
+  selector: 'fw-reading-progress',
   imports: [MatButtonModule],
   template: `
     <h2>Reading the photo</h2>

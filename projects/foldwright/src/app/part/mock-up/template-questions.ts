@@ -100,7 +100,7 @@ const QUESTIONS: readonly PicturedQuestion[] = [
 
 /** Three pictured questions about the template. Each answer is one click and may be changed until the outline is taken. */
 @Component({
-  selector: 'app-template-questions',
+  selector: 'fw-template-questions',
   templateUrl: './template-questions.html',
   styleUrl: './template-questions.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -18,7 +18,7 @@ interface Spot {
  * drag, or the arrow keys.
  */
 @Component({
-  selector: 'app-trace-board',
+  selector: 'fw-trace-board',
   templateUrl: './trace-board.html',
   styleUrl: './trace-board.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
