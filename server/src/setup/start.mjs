@@ -77,7 +77,7 @@ async function untilHealthy(url, web) {
     await pause(100);
   }
   if (isEnding) throw new StoppedError();
-  throw new Error(`The product does not answer at ${url}/api/health (${last}).\n${web.lastWords()}`);
+  throw new CommandError(`The product does not answer at ${url}/api/health (${last}).\n${web.lastWords()}`);
 }
 
 function saySignIns() {
