@@ -61,7 +61,7 @@ export class TraceBoard {
     return `Outline over the photo: ${parts.join(', ')}. Arrow keys move the loupe.`;
   });
 
-  protected look(event: PointerEvent, board: SVGSVGElement): void {
+  protected look(event: PointerEvent, board: Element): void {
     if (event.type === 'pointermove' && event.buttons === 0) return;
     const frame = board.getBoundingClientRect();
     const { widthMm, heightMm } = this.sheet();
