@@ -1,4 +1,4 @@
-import sharp from 'sharp';
+import sharp, { type Metadata } from 'sharp';
 import { focalLength35Mm } from './exif-focal';
 import type { Picture } from './picture';
 import { TraceRefusal } from './trace-refusal';
@@ -16,7 +16,7 @@ export interface DecodedPhoto {
 
 const NOT_A_PICTURE = 'The file is not a JPEG, PNG or WebP picture, or it is damaged.';
 
-async function readMetadata(bytes: Buffer): Promise<sharp.Metadata> {
+async function readMetadata(bytes: Buffer): Promise<Metadata> {
   try {
     return await sharp(bytes, { limitInputPixels: false, failOn: 'error' }).metadata();
   } catch {

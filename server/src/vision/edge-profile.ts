@@ -64,11 +64,11 @@ interface Fit {
 function fitLevels(request: ProfileRequest, firstS: number, count: number, edge: number): Fit {
   const { wallMm, blurMm } = request;
   const matrix = [0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0];
-  const right = [
+  const right: readonly [number[], number[], number[]] = [
     [0, 0, 0, 0],
     [0, 0, 0, 0],
     [0, 0, 0, 0],
-  ] as const;
+  ];
   const total = [0, 0, 0];
   for (let k = 0; k < count; k++) {
     const s = firstS + k * STEP_MM - edge;
@@ -82,7 +82,7 @@ function fitLevels(request: ProfileRequest, firstS: number, count: number, edge:
       for (let j = 0; j <= i; j++) matrix[i * 4 + j] = (matrix[i * 4 + j] ?? 0) + (basis[i] ?? 0) * (basis[j] ?? 0);
       for (let c = 0; c < 3; c++) {
         const column = right[c as 0 | 1 | 2];
-        column[i as 0 | 1 | 2 | 3] += (basis[i] ?? 0) * (samples[k * 3 + c] ?? 0);
+        column[i] = (column[i] ?? 0) + (basis[i] ?? 0) * (samples[k * 3 + c] ?? 0);
       }
     }
     for (let c = 0; c < 3; c++) total[c] = (total[c] ?? 0) + (samples[k * 3 + c] ?? 0) ** 2;

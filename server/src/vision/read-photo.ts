@@ -104,29 +104,31 @@ export async function readPhoto(
   const timingsMs: Record<string, number> = {};
   const began = performance.now();
   let lap = began;
-  const enter = (stage: TraceStage): void => {
-    isStopped(signal);
+  const enter = async (stage: TraceStage): Promise<void> => {
     onStage(stage);
+    // A breath between stages: the message goes out, and a stop comes in.
+    await new Promise((resolve) => setImmediate(resolve));
+    isStopped(signal);
     lap = performance.now();
   };
   const leave = (stage: TraceStage): void => {
     timingsMs[stage] = Math.round(performance.now() - lap);
   };
-  enter('decode');
+  await enter('decode');
   const { picture, focal35Mm } = await decodePhoto(bytes);
   leave('decode');
-  enter('markers');
+  await enter('markers');
   const scale = options.scale ?? { kind: 'markers' };
   const scene = scale.kind === 'markers' ? sceneOfScaleSheet(picture, focal35Mm, options) : plainView(picture, focal35Mm, scale);
   leave('markers');
-  enter('square-up');
+  await enter('square-up');
   const raster = rectify(picture, scene.view, scene.widthMm, scene.heightMm, RASTER_PER_MM);
   leave('square-up');
-  enter('template');
+  await enter('template');
   const template = findTemplate(raster, scene.ground(raster));
   const contours = traceContours(template.mask, raster);
   leave('template');
-  enter('outline');
+  await enter('outline');
   const boundaries = contours.map((contour, index) =>
     refineBoundary(picture, scene.view, contour, {
       thicknessMm: scene.view.eye ? options.thicknessMm : 0,
@@ -135,7 +137,7 @@ export async function readPhoto(
     }),
   );
   leave('outline');
-  enter('holes');
+  await enter('holes');
   const sizeMm = Math.hypot(...spanMm(boundaries[0] ?? []));
   const shapes = fitShapes(boundaries, {
     ...scene.doubt,
