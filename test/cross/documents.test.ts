@@ -13,9 +13,20 @@ import { makeDxf } from '@foldwright/server/documents/dxf';
 import { makeFullSizePrint } from '@foldwright/server/documents/full-size-print';
 import { makeDrawing } from '@foldwright/server/documents/part-drawing';
 
-const PARTS = path.resolve(__dirname, '../fixtures/parts');
+// Rendering pages at 300 dpi on a busy machine takes its time.
+jest.setTimeout(60_000);
+
+/** The documented example and the demo's parts: one to four bends, openings of every kind. */
+const PART_FOLDERS = ['../fixtures/parts', '../../server/src/setup/demo/parts'].map((one) =>
+  path.resolve(__dirname, one),
+);
 const READER = path.resolve(__dirname, '../support/read_dxf.py');
-const partFiles = readdirSync(PARTS).filter((name) => name.endsWith('.json') && !name.endsWith('expected.json'));
+const partPaths = new Map(
+  PART_FOLDERS.flatMap((folder) => readdirSync(folder).map((name) => [name, path.join(folder, name)] as const)).filter(
+    ([name]) => name.endsWith('.json') && !name.endsWith('expected.json'),
+  ),
+);
+const partFiles = [...partPaths.keys()];
 
 interface ReadEntity {
   readonly kind: string;
@@ -33,7 +44,7 @@ interface ReadDxf {
 }
 
 function inputFor(fileName: string): DocumentInput {
-  const document = partDocumentSchema.parse(JSON.parse(readFileSync(path.join(PARTS, fileName), 'utf8')));
+  const document = partDocumentSchema.parse(JSON.parse(readFileSync(partPaths.get(fileName) ?? fileName, 'utf8')));
   const result = developPart(document, 'production');
   if (!result.ok) throw new Error(`${fileName}: ${result.problems.map((problem) => problem.message).join('; ')}`);
   return {
@@ -98,7 +109,9 @@ describe.each(partFiles)('the cut file of %s, read by ezdxf', (fileName) => {
     const of = (layer: string): number[] =>
       read.entities.filter((entity) => entity.layer === layer).map((entity) => entity.areaMm2 ?? NaN);
     const area = sum(of('OUTLINE')) - sum(of('OPENING'));
-    expect(Math.abs(area - development.flat.areaMm2)).toBeLessThan(1e-6 * Math.max(1, Math.sqrt(development.flat.areaMm2)));
+    expect(Math.abs(area - development.flat.areaMm2)).toBeLessThan(
+      1e-6 * Math.max(1, Math.sqrt(development.flat.areaMm2)),
+    );
     const length = sum(
       read.entities
         .filter((entity) => entity.layer === 'OUTLINE' || entity.layer === 'OPENING')
@@ -131,7 +144,10 @@ describe.each(partFiles)('the cut file of %s, read by ezdxf', (fileName) => {
 describe.each(partFiles)('the PDFs of %s', (fileName) => {
   const checked = (file: string): void => {
     expect(tool('qpdf', ['--check', file])).toMatch(/No syntax or stream encoding errors/);
-    const fonts = tool('pdffonts', [file]).split('\n').slice(2).filter((line) => line.trim() !== '');
+    const fonts = tool('pdffonts', [file])
+      .split('\n')
+      .slice(2)
+      .filter((line) => line.trim() !== '');
     expect(fonts.length).toBeGreaterThan(1);
     for (const line of fonts) expect(line).toMatch(/Plex.* yes +yes +(yes|no) /);
   };
@@ -153,15 +169,18 @@ describe.each(partFiles)('the PDFs of %s', (fileName) => {
     expect(text).not.toMatch(/\bsafe\b|\bapproved\b/i);
   });
 
-  it.each(['A4', 'Letter'] as const)('prints full size on %s: valid, a sheet a tile, equal input gives equal bytes', async (paper) => {
-    const input = inputFor(fileName);
-    const bytes = await makeFullSizePrint(input, { paper });
-    const file = saved(`${fileName}.${paper}.pdf`, bytes);
-    checked(file);
-    const pages = Number(/Pages:\s+(\d+)/.exec(tool('pdfinfo', [file]))?.[1]);
-    expect(pages).toBe(planPrintTiles(input.development.flat.bounds, paper).tiles.length);
-    expect((await makeFullSizePrint(input, { paper })).equals(bytes)).toBe(true);
-  });
+  it.each(['A4', 'Letter'] as const)(
+    'prints full size on %s: valid, a sheet a tile, equal input gives equal bytes',
+    async (paper) => {
+      const input = inputFor(fileName);
+      const bytes = await makeFullSizePrint(input, { paper });
+      const file = saved(`${fileName}.${paper}.pdf`, bytes);
+      checked(file);
+      const pages = Number(/Pages:\s+(\d+)/.exec(tool('pdfinfo', [file]))?.[1]);
+      expect(pages).toBe(planPrintTiles(input.development.flat.bounds, paper).tiles.length);
+      expect((await makeFullSizePrint(input, { paper })).equals(bytes)).toBe(true);
+    },
+  );
 });
 
 /** Length in mm of the longest dark run in one row (or column) of pixels of a page rendered at 300 dpi. */
@@ -189,7 +208,9 @@ it('prints bars that measure 100 mm within 0.1 at 300 dpi, both ways, on both pa
     const plan = planPrintTiles(input.development.flat.bounds, paper);
     const pixels = (mm: number): number => Math.round((mm * 300) / 25.4);
     const near = [-2, -1, 0, 1, 2];
-    const across = await Promise.all(near.map((off) => longestRun(`${file}.png`, { row: pixels(plan.pageHeightMm - 16) + off })));
+    const across = await Promise.all(
+      near.map((off) => longestRun(`${file}.png`, { row: pixels(plan.pageHeightMm - 16) + off })),
+    );
     const up = await Promise.all(near.map((off) => longestRun(`${file}.png`, { column: pixels(8.5) + off })));
     expect(Math.abs(Math.max(...across) - 100)).toBeLessThan(0.1);
     expect(Math.abs(Math.max(...up) - 100)).toBeLessThan(0.1);
