@@ -97,6 +97,12 @@ const TABLES = `
     beat_at timestamptz NOT NULL DEFAULT now()
   );
 
+  -- Facts about the installation itself, for the programs that set it up.
+  CREATE TABLE installation_facts (
+    name text PRIMARY KEY,
+    value jsonb NOT NULL
+  );
+
   -- Work that a worker has taken from the queue; what a dead one leaves here goes back.
   CREATE TABLE work_in_hand (
     queue_job_id uuid PRIMARY KEY,
@@ -125,6 +131,7 @@ const POLICIES = `
   CREATE POLICY workshops_system ON workshops FOR SELECT USING (foldwright_reads_all());
 
   REVOKE UPDATE, DELETE ON audit_entries FROM foldwright_app;
+  REVOKE ALL ON installation_facts FROM foldwright_app;
 `;
 
 /** The queue's own plan, without its transaction: the migration has one. Queues are made here because only the owner may. */
@@ -153,7 +160,7 @@ export const foundation: Migration = {
     await query(`
       DROP SCHEMA pgboss CASCADE;
       DROP FUNCTION foldwright_prune;
-      DROP TABLE work_in_hand, worker_heartbeats, idempotency_keys, audit_entries, live_events, rate_limits, http_sessions;
+      DROP TABLE installation_facts, work_in_hand, worker_heartbeats, idempotency_keys, audit_entries, live_events, rate_limits, http_sessions;
       DROP POLICY workshops_own ON workshops;
       DROP TABLE memberships, users, workshops;
       DROP FUNCTION announce_live_event, foldwright_reads_all, foldwright_user, foldwright_workshop;
