@@ -38,10 +38,11 @@ const bendNote = (row: BendRow): string => {
   return `${words}. BD to the ${REFERENCE_WORDS[row.deductionReference]}.`;
 };
 
-/** A note that only repeats the row above is said in two words. */
-function noteUnlessSame(row: BendRow, above: BendRow | undefined): string {
+/** A note that an earlier row carries already is said in two words. */
+function noteUnlessSame(row: BendRow, earlier: readonly BendRow[]): string {
   const note = bendNote(row);
-  return above !== undefined && bendNote(above) === note ? `as ${above.name}` : note;
+  const same = earlier.find((one) => bendNote(one) === note);
+  return same === undefined ? note : `as ${same.name}`;
 }
 
 export function bendTable(development: Development): DrawingTable {
@@ -73,7 +74,7 @@ export function bendTable(development: Development): DrawingTable {
         row.vOpeningMm.toFixed(0),
         row.bendLengthMm.toFixed(1),
       ],
-      note: noteUnlessSame(row, rows[index - 1]),
+      note: noteUnlessSame(row, rows.slice(0, index)),
     })),
     foot:
       references.length === 0
