@@ -1,191 +1,21 @@
 import * as fc from 'fast-check';
-import type { BendDeclaration } from '../bending/layout';
 import { partCommandSchema } from '../contracts/part-document-schema';
 import { applyCommand, applyCommands } from './apply-command';
 import { canonicalJson, isSameJson } from './canonical-json';
-import { CommandRefusal } from './command-refusal';
 import type { PartCommand } from './commands';
 import { describeCommand } from './describe-command';
 import { checkInvariants } from './invariants';
 import type { PartDocument } from './part-document';
 import { diffDocuments, redoCommand, undoCommand } from './slices';
-import { starterDocument } from './starter-document';
-
-const start: PartDocument = applyCommands(
-  starterDocument({
-    shape: 'u-bracket',
-    baseMm: 80,
-    leftFlangeMm: 30,
-    rightFlangeMm: 25,
-    widthMm: 60,
-    bendAngleDeg: 90,
-  }),
-  [
-    { kind: 'roundCorner', edgeId: 'e1', radiusMm: 6, newEdgeId: 'r1' },
-    {
-      kind: 'addCutout',
-      loop: {
-        id: 'c1',
-        edges: [
-          { id: 'c1a', start: { x: 60, y: 20 }, bulge: 0 },
-          { id: 'c1b', start: { x: 60, y: 40 }, bulge: 0 },
-          { id: 'c1c', start: { x: 80, y: 30 }, bulge: -0.3 },
-        ],
-      },
-    },
-    {
-      kind: 'addFeature',
-      feature: { kind: 'hole', id: 'h1', centre: { x: 40, y: 20 }, purpose: { kind: 'tapped', thread: 'M6' } },
-    },
-    {
-      kind: 'addFeature',
-      feature: { kind: 'slot', id: 's1', from: { x: 95, y: 20 }, to: { x: 105, y: 20 }, widthMm: 6 },
-    },
-    {
-      kind: 'addFeature',
-      feature: { kind: 'hole', id: 'h2', centre: { x: 45, y: 40 }, purpose: { kind: 'plain', diameterMm: 8 } },
-    },
-  ],
-);
-
-const edgeId = fc.constantFrom('e1', 'e2', 'e3', 'e4', 'r1', 'c1a', 'c1b', 'c1c', 'n1', 'n2', 'missing');
-const newId = fc.constantFrom('n1', 'n2', 'n3', 'n4', 'h1');
-const featureId = fc.constantFrom('h1', 'h2', 's1', 'n1', 'n3');
-const bendId = fc.constantFrom('b1', 'b2', 'n2');
-const lengthMm = fc.double({ min: 0.1, max: 120, noNaN: true });
-const offsetMm = fc.double({ min: -60, max: 60, noNaN: true });
-const point = fc.record({
-  x: fc.double({ min: -20, max: 160, noNaN: true }),
-  y: fc.double({ min: -20, max: 90, noNaN: true }),
-});
-const bulge = fc.constantFrom(0, 0.2, -0.4, 1);
-const stock = fc.record({
-  materialId: fc.constantFrom('dc01', 'ss304', 'al6061t6'),
-  thicknessMm: fc.constantFrom(0.8, 1.5, 3),
-  grainDirectionDeg: fc.constantFrom(null, 0, 90),
-  vOpeningMm: fc.constantFrom(null, 16),
-});
-const purpose = fc.oneof(
-  fc.record({
-    kind: fc.constant('clearance' as const),
-    thread: fc.constantFrom('M3', 'M6', 'M9'),
-    fit: fc.constantFrom('close', 'medium', 'coarse'),
-  }),
-  fc.record({ kind: fc.constant('plain' as const), diameterMm: lengthMm }),
-);
-const bend = fc
-  .record({ id: bendId, x: fc.double({ min: 5, max: 130, noNaN: true }), angle: fc.constantFrom(30, 90, 135, 180) })
-  .map(({ id, x, angle }): BendDeclaration => ({
-    id,
-    line: { from: { x, y: 0 }, to: { x, y: 60 } },
-    bendAngleDeg: angle,
-    direction: 'away',
-    lengths: { from: 'reference', reference: 'tangent' },
-    insideRadiusMm: null,
-    override: null,
-    sideEdges: 'trimmed',
-  }));
-const role = fc.constantFrom('trial' as const, 'production' as const);
-
-/** Every kind of command but revert, with ids that may or may not be there. */
-const command: fc.Arbitrary<PartCommand> = fc.oneof(
-  fc.record({ kind: fc.constant('setStock' as const), role, stock }),
-  fc.record({
-    kind: fc.constant('setTemplate' as const),
-    template: fc.constantFrom(null, {
-      kind: 'card',
-      thicknessMm: 0.5,
-      reading: { readOn: 'crease', bearingFace: 'A', hinge: { kind: 'middle' } },
-    } as const),
-  }),
-  fc.record({
-    kind: fc.constant('setCalibration' as const),
-    scaleX: fc.constantFrom(1, 1.01),
-    scaleY: fc.constantFrom(1, 0.99),
-  }),
-  fc.record({
-    kind: fc.constant('replaceLayout' as const),
-    layout: fc.constant(start.layout),
-    origin: fc.constantFrom('trace' as const, 'starter' as const),
-  }),
-  fc.record({ kind: fc.constant('moveVertex' as const), edgeId, to: point }),
-  fc.record({
-    kind: fc.constant('insertVertex' as const),
-    edgeId,
-    newEdge: fc.record({ id: newId, start: point, bulge }),
-  }),
-  fc.record({ kind: fc.constant('removeVertex' as const), edgeId }),
-  fc.record({
-    kind: fc.constant('setEdgeLength' as const),
-    edgeId,
-    lengthMm,
-    hold: fc.constantFrom('start' as const, 'end' as const),
-  }),
-  fc.record({ kind: fc.constant('slideEdge' as const), edgeId, byMm: offsetMm }),
-  fc.record({ kind: fc.constant('setEdgeBulge' as const), edgeId, bulge }),
-  fc.record({ kind: fc.constant('roundCorner' as const), edgeId, radiusMm: lengthMm, newEdgeId: newId }),
-  fc.record({
-    kind: fc.constant('addCutout' as const),
-    loop: fc.record({ id: newId }).map(({ id }) => ({
-      id,
-      edges: [
-        { id: `${id}x`, start: { x: 50, y: 10 }, bulge: 1 },
-        { id: `${id}y`, start: { x: 55, y: 10 }, bulge: 1 },
-      ],
-    })),
-  }),
-  fc.record({ kind: fc.constant('removeCutout' as const), loopId: fc.constantFrom('c1', 'n1') }),
-  fc.record({
-    kind: fc.constant('addFeature' as const),
-    feature: fc.record({ kind: fc.constant('hole' as const), id: newId, centre: point, purpose }),
-  }),
-  fc.record({ kind: fc.constant('moveFeature' as const), featureId, by: point }),
-  fc.record({ kind: fc.constant('setHolePurpose' as const), featureId, purpose }),
-  fc.record({ kind: fc.constant('setSlotSize' as const), featureId, lengthMm, widthMm: lengthMm }),
-  fc.record({ kind: fc.constant('removeFeature' as const), featureId }),
-  fc.record({ kind: fc.constant('addBend' as const), bend }),
-  bend.map((changed): PartCommand => ({ kind: 'changeBend', bendId: changed.id, bend: changed })),
-  fc.record({ kind: fc.constant('removeBend' as const), bendId }),
-  fc.record({
-    kind: fc.constant('setReliefs' as const),
-    reliefs: fc.record({
-      mode: fc.constantFrom('automatic' as const, 'none' as const),
-      widthMm: fc.constantFrom(null, 2),
-      depthMm: fc.constant(null),
-      shape: fc.constant('obround' as const),
-    }),
-  }),
-  fc.record({ kind: fc.constant('setBaseAnchor' as const), to: point }),
-  fc.record({
-    kind: fc.constant('setMaking' as const),
-    making: fc.record({
-      bender: fc.constantFrom('own-brake' as const, 'outside' as const),
-      statement: fc.constant('formed-sizes-rule' as const),
-    }),
-  }),
-  fc.record({
-    kind: fc.constant('setDeclaredUses' as const),
-    uses: fc.subarray(['vehicle', 'heat', 'seat'] as const),
-  }),
-);
-
-/** Applies what can be applied; a refusal leaves the document as it is, anything else fails the test. */
-function tryApply(document: PartDocument, next: PartCommand): PartDocument {
-  try {
-    return applyCommand(document, next);
-  } catch (error) {
-    if (error instanceof CommandRefusal) return document;
-    throw error;
-  }
-}
+import { anyCommand, furnishedBracket, tryApply } from './testing/any-command';
 
 describe('any sequence of commands', () => {
   it('keeps the invariants and the old document', () => {
-    const before = canonicalJson(start);
+    const before = canonicalJson(furnishedBracket);
     fc.assert(
-      fc.property(fc.array(command, { maxLength: 12 }), (commands) => {
-        expect(checkInvariants(commands.reduce(tryApply, start))).toEqual([]);
-        expect(canonicalJson(start)).toBe(before);
+      fc.property(fc.array(anyCommand, { maxLength: 12 }), (commands) => {
+        expect(checkInvariants(commands.reduce(tryApply, furnishedBracket))).toEqual([]);
+        expect(canonicalJson(furnishedBracket)).toBe(before);
       }),
       { numRuns: 500 },
     );
@@ -193,9 +23,11 @@ describe('any sequence of commands', () => {
 
   it('replays to the letter, also after a journey as JSON', () => {
     fc.assert(
-      fc.property(fc.array(command, { maxLength: 12 }), (commands) => {
+      fc.property(fc.array(anyCommand, { maxLength: 12 }), (commands) => {
         const sent = commands.map((one): PartCommand => partCommandSchema.parse(JSON.parse(JSON.stringify(one))));
-        expect(canonicalJson(sent.reduce(tryApply, start))).toBe(canonicalJson(commands.reduce(tryApply, start)));
+        expect(canonicalJson(sent.reduce(tryApply, furnishedBracket))).toBe(
+          canonicalJson(commands.reduce(tryApply, furnishedBracket)),
+        );
       }),
       { numRuns: 300 },
     );
@@ -203,16 +35,16 @@ describe('any sequence of commands', () => {
 
   it('is undone and done again exactly, order of lists included', () => {
     fc.assert(
-      fc.property(fc.array(command, { minLength: 1, maxLength: 8 }), (commands) => {
-        const after = commands.reduce(tryApply, start);
-        const undo = undoCommand(start, after, 'several edits');
+      fc.property(fc.array(anyCommand, { minLength: 1, maxLength: 8 }), (commands) => {
+        const after = commands.reduce(tryApply, furnishedBracket);
+        const undo = undoCommand(furnishedBracket, after, 'several edits');
         if (undo === null) {
-          expect(isSameJson(start, after)).toBe(true);
+          expect(isSameJson(furnishedBracket, after)).toBe(true);
           return;
         }
         const undone = applyCommand(after, partCommandSchema.parse(JSON.parse(JSON.stringify(undo))));
-        expect(undone).toEqual(start);
-        const redo = redoCommand(start, after, 'several edits');
+        expect(undone).toEqual(furnishedBracket);
+        const redo = redoCommand(furnishedBracket, after, 'several edits');
         expect(redo === null ? null : applyCommand(undone, redo)).toEqual(after);
       }),
       { numRuns: 500 },
@@ -221,7 +53,7 @@ describe('any sequence of commands', () => {
 
   it('can be named for the history', () => {
     fc.assert(
-      fc.property(command, (one) => {
+      fc.property(anyCommand, (one) => {
         expect(describeCommand(one)).toMatch(/^[A-Z].{3,60}$/u);
       }),
     );
@@ -229,8 +61,8 @@ describe('any sequence of commands', () => {
 });
 
 describe('undo beside somebody else’s edits', () => {
-  const removed = applyCommand(start, { kind: 'removeFeature', featureId: 'h1' });
-  const undo = undoCommand(start, removed, 'Take hole away');
+  const removed = applyCommand(furnishedBracket, { kind: 'removeFeature', featureId: 'h1' });
+  const undo = undoCommand(furnishedBracket, removed, 'Take hole away');
 
   it('leaves alone what another person changed elsewhere', () => {
     const theirs = applyCommand(removed, { kind: 'moveFeature', featureId: 'h2', by: { x: 3, y: 0 } });
@@ -240,9 +72,9 @@ describe('undo beside somebody else’s edits', () => {
   });
 
   it('refuses to overwrite what another person changed in the same place', () => {
-    const moved = applyCommand(start, { kind: 'moveFeature', featureId: 'h1', by: { x: 1, y: 0 } });
+    const moved = applyCommand(furnishedBracket, { kind: 'moveFeature', featureId: 'h1', by: { x: 1, y: 0 } });
     const movedOn = applyCommand(moved, { kind: 'moveFeature', featureId: 'h1', by: { x: 0, y: 1 } });
-    const undoMove = undoCommand(start, moved, 'Move hole');
+    const undoMove = undoCommand(furnishedBracket, moved, 'Move hole');
     if (undoMove === null) throw new Error('a move is a change');
     expect(() => applyCommand(movedOn, undoMove)).toThrow(
       expect.objectContaining({ code: 'changedSince', ids: ['h1'] }) as Error,
@@ -250,19 +82,19 @@ describe('undo beside somebody else’s edits', () => {
   });
 
   it('names every kind of slice that differs', () => {
-    const other: PartDocument = applyCommands(start, [
-      { kind: 'setStock', role: 'trial', stock: { ...start.stocks.trial, thicknessMm: 2 } },
+    const other: PartDocument = applyCommands(furnishedBracket, [
+      { kind: 'setStock', role: 'trial', stock: { ...furnishedBracket.stocks.trial, thicknessMm: 2 } },
       { kind: 'removeBend', bendId: 'b1' },
       { kind: 'removeCutout', loopId: 'c1' },
       { kind: 'setDeclaredUses', uses: ['heat'] },
     ]);
-    expect(diffDocuments(start, other).map(({ before }) => before.slice)).toEqual([
+    expect(diffDocuments(furnishedBracket, other).map(({ before }) => before.slice)).toEqual([
       'stock',
       'cutout',
       'bend',
       'declaredUses',
     ]);
-    expect(diffDocuments(start, start)).toEqual([]);
+    expect(diffDocuments(furnishedBracket, furnishedBracket)).toEqual([]);
   });
 });
 
