@@ -1,17 +1,24 @@
 import * as z from 'zod/mini';
 
 const text = z.string().check(z.minLength(1));
-const url = z.url();
-const secret = z.string().check(z.minLength(32, 'must be at least 32 characters long'));
-const port = z.coerce.number('must be a number').check(z.int(), z.gte(0), z.lte(65535));
+const url = z.url('it is not an address such as http://127.0.0.1:4310');
+const secret = z.string().check(z.minLength(32, 'it has to be at least 32 characters long'));
+const PORT_WORDS = 'it is not a port from 0 to 65535';
+const port = z.coerce.number(PORT_WORDS).check(z.int(PORT_WORDS), z.gte(0, PORT_WORDS), z.lte(65535, PORT_WORDS));
+const COUNT_WORDS = 'it is not a whole number from 1';
+const LEVELS = ['fatal', 'error', 'warn', 'info', 'debug', 'silent'] as const;
+const oneOf = <const T extends readonly string[]>(values: T) => z.enum(values, `it is none of ${values.join(', ')}`);
 
 const environmentSchema = z.object({
-  NODE_ENV: z._default(z.enum(['development', 'production', 'test']), 'production'),
-  LOG_LEVEL: z._default(z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']), 'info'),
+  NODE_ENV: z._default(oneOf(['development', 'production', 'test']), 'production'),
+  LOG_LEVEL: z._default(oneOf(LEVELS), 'info'),
   FOLDWRIGHT_HOST: z._default(text, '127.0.0.1'),
   FOLDWRIGHT_PORT: z._default(port, 4310),
   FOLDWRIGHT_PUBLIC_URL: z.optional(url),
-  FOLDWRIGHT_REQUESTS_PER_MINUTE: z._default(z.coerce.number().check(z.int(), z.gte(1)), 3000),
+  FOLDWRIGHT_REQUESTS_PER_MINUTE: z._default(
+    z.coerce.number(COUNT_WORDS).check(z.int(COUNT_WORDS), z.gte(1, COUNT_WORDS)),
+    3000,
+  ),
   DATABASE_URL: url,
   SESSION_SECRET: secret,
   FILES_DIR: z._default(text, '.data/files'),
@@ -27,11 +34,11 @@ const environmentSchema = z.object({
 });
 
 const migrationSchema = z.object({
-  LOG_LEVEL: z._default(z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']), 'info'),
+  LOG_LEVEL: z._default(oneOf(LEVELS), 'info'),
   DATABASE_OWNER_URL: url,
   DATABASE_URL: url,
   FILES_DIR: z._default(text, '.data/files'),
-  FOLDWRIGHT_SEED_DEMO: z._default(z.enum(['yes', 'no']), 'yes'),
+  FOLDWRIGHT_SEED_DEMO: z._default(oneOf(['yes', 'no']), 'yes'),
 });
 
 /** Everything the web process and the worker take from outside. Names say what they are; see DEVELOPERS.md. */

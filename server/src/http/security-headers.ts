@@ -43,6 +43,7 @@ export function securityHeaders(isSecure: boolean): RequestHandler[] {
         },
       },
       strictTransportSecurity: isSecure ? { maxAge: 15552000 } : false,
+      xFrameOptions: { action: 'deny' },
       referrerPolicy: { policy: 'same-origin' },
       crossOriginEmbedderPolicy: false,
       // Browsers ignore it over plain http and warn about it on every page.

@@ -1,7 +1,7 @@
 import type { Job as JobAnswer } from '@foldwright/shared/contracts/photos';
-import { jobSchema } from '@foldwright/shared/contracts/photos';
-import type { TraceStage } from '@foldwright/shared/fitting/trace';
+import type { Trace, TraceStage } from '@foldwright/shared/fitting/trace';
 import { TRACE_STAGES } from '@foldwright/shared/fitting/trace';
+import { formatDecimal } from '@foldwright/shared/units/length';
 import type { WorkshopScope } from '../database/workshop-scope';
 import { recordEvent } from '../events/record-event';
 import type { Job } from '../models/job';
@@ -12,17 +12,31 @@ export type JobFailure = NonNullable<JobAnswer['failure']>;
 
 export const freshStages = (): JobStages => TRACE_STAGES.map((stage) => ({ stage, state: 'to-come', note: '' }));
 
-/** Stages after one of them began: all before it are done, and the last of those has the note. */
-export function stagesAt(stages: JobStages, begun: TraceStage, note: string): JobStages {
+/** Stages after one of them began: all before it are done. */
+export function stagesAt(begun: TraceStage): JobStages {
   const at = TRACE_STAGES.indexOf(begun);
-  return stages.map((entry, index) => {
-    if (index < at) return { ...entry, state: 'done', note: index === at - 1 && note !== '' ? note : entry.note };
-    return { ...entry, state: index === at ? 'running' : 'to-come' };
-  });
+  return TRACE_STAGES.map((stage, index) => ({
+    stage,
+    state: index < at ? 'done' : index === at ? 'running' : 'to-come',
+    note: '',
+  }));
 }
 
-export const stagesDone = (stages: JobStages): JobStages => stages.map((entry) => ({ ...entry, state: 'done' }));
-export const readStages = (stored: unknown): JobStages => jobSchema.shape.stages.parse(stored);
+const counted = (count: number, one: string, many: string): string => `${count} ${count === 1 ? one : many}`;
+
+/** All stages done, each with what was found in it. */
+export function stagesDone(trace: Trace): JobStages {
+  const shapes = [...trace.outer, ...trace.cutouts.flat()];
+  const openings = trace.holes.length + trace.slots.length + trace.cutouts.length;
+  const notes: Readonly<Partial<Record<TraceStage, string>>> = {
+    markers: counted(trace.markersUsed, 'marker', 'markers'),
+    'square-up': `tilted by ${Math.round(trace.tiltDeg)}°`,
+    template: `${formatDecimal(trace.pixelsPerMm, 1)} pixels for each mm`,
+    outline: `${counted(shapes.length, 'line or arc', 'lines and arcs')}, ± ${formatDecimal(trace.uncertaintyMm, 2)} mm`,
+    holes: counted(openings, 'opening', 'openings'),
+  };
+  return TRACE_STAGES.map((stage) => ({ stage, state: 'done', note: notes[stage] ?? '' }));
+}
 
 /** Tell the pages that show this job. */
 export const tellJob = (scope: WorkshopScope, job: Job): Promise<void> =>

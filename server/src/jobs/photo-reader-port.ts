@@ -22,8 +22,8 @@ export interface PhotoReading {
 }
 
 export interface ReadingOptions {
-  /** Called when a stage begins; its note says what the one before has found. */
-  readonly onStage: (stage: TraceStage, note?: string) => void;
+  /** Called when a stage begins. */
+  readonly onStage: (stage: TraceStage) => void;
   readonly signal: AbortSignal;
 }
 

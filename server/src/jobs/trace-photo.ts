@@ -10,7 +10,7 @@ import type { Job } from '../models/job';
 import type { Photo } from '../models/photo';
 import { TraceRefusal } from '../vision/trace-refusal';
 import type { JobFailure } from './job-rows';
-import { freshStages, readStages, stagesAt, stagesDone, tellJob } from './job-rows';
+import { freshStages, stagesAt, stagesDone, tellJob } from './job-rows';
 import type { PhotoReading, ReadsPhotos } from './photo-reader-port';
 import { FAILURE_ON_OUR_SIDE, failureOf } from './trace-failure';
 import type { WorkHandler } from './work-handler';
@@ -110,9 +110,9 @@ async function read(
   // Reports are written one after the other beside the reading, which doesn't wait for them.
   let reports: Promise<void> = Promise.resolve();
   let lost: unknown;
-  const report = async (stage: TraceStage, note: string): Promise<void> => {
+  const report = async (stage: TraceStage): Promise<void> => {
     const isMine = await whileMine(dependencies, attempt, async (scope, job) => {
-      await scope.rows.jobs.change(job, { stages: stagesAt(readStages(job.stages), stage, note), updatedAt: now() });
+      await scope.rows.jobs.change(job, { stages: stagesAt(stage), updatedAt: now() });
       await tellJob(scope, job);
     });
     if (!isMine) stop.abort(new Error('The job was stopped or given to another worker.'));
@@ -123,8 +123,8 @@ async function read(
     printScaleX: photo.rulerXMm / 100,
     printScaleY: photo.rulerYMm / 100,
   };
-  const onStage = (stage: TraceStage, note = ''): void => {
-    reports = reports.then(() => report(stage, note)).catch((error: unknown) => void (lost ??= error));
+  const onStage = (stage: TraceStage): void => {
+    reports = reports.then(() => report(stage)).catch((error: unknown) => void (lost ??= error));
   };
   try {
     return await reader.read(bytes, facts, { onStage, signal });
@@ -143,7 +143,7 @@ async function conclude(dependencies: TraceDependencies, attempt: Attempt, readi
     const photo = await scope.rows.photos.get(attempt.photo.id, { lock: true });
     replaced = photo.rectifiedStoredAs;
     await scope.rows.photos.change(photo, { trace: reading.trace, rectified, rectifiedStoredAs });
-    const stages = stagesDone(readStages(job.stages));
+    const stages = stagesDone(reading.trace);
     await scope.rows.jobs.change(job, { state: 'done', stages, workerId: null, updatedAt: now() });
     await tellJob(scope, job);
     await recordEvent(scope, { kind: 'part-changed', partId: photo.partId });
