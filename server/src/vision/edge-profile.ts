@@ -1,4 +1,3 @@
-import { solveSymmetric } from '@foldwright/shared/fitting/least-squares';
 import type { Point } from '@foldwright/shared/geometry/point';
 import { isInside, type Picture, sampleLinear } from './picture';
 import type { View } from './view';
@@ -25,12 +24,12 @@ export interface ProfileRequest {
   readonly reachMm: number;
 }
 
-const STEP_MM = 0.07;
+const STEP_MM = 0.08;
 const GROUND_SPAN_MM = 0.6;
 const FACE_SPAN_MM = 0.45;
 /** Walls are followed inwards only so far: what lies deeper does not move the foot. */
 const MAX_WALL_MM = 0.5;
-const FINE_STEPS = 10;
+const FINE_STEPS = 7;
 const MAX_SAMPLES = 96;
 
 const NORMAL_TABLE = Float64Array.from({ length: 801 }, (_, k) => gaussianShare((k - 400) / 100));
@@ -52,24 +51,51 @@ function blurredStep(s: number, blurMm: number): number {
   return NORMAL_TABLE[Math.round(z * 100) + 400] ?? 0;
 }
 
-const samples = new Float32Array(MAX_SAMPLES * 3);
-const basis = new Float64Array(4);
+const LEVELS = 4;
+const CHANNELS = 3;
+const RIDGE = 1e-4;
 
-interface Fit {
-  readonly error: number;
-  readonly levels: readonly (readonly number[])[];
+// One photo is read at a time and this runs some hundred thousand times for it: its working space is laid out once.
+const samples = new Float32Array(MAX_SAMPLES * CHANNELS);
+const basis = new Float64Array(LEVELS);
+const lower = new Float64Array(LEVELS * LEVELS);
+const right = new Float64Array(CHANNELS * LEVELS);
+/** Ground, its slope, wall and face, for each channel. */
+const levels = new Float64Array(CHANNELS * LEVELS);
+
+/** Turns the lower half of a positive matrix into its Cholesky factor, in place. */
+function factorise(matrix: Float64Array): void {
+  for (let row = 0; row < LEVELS; row++) {
+    for (let column = 0; column <= row; column++) {
+      let sum = matrix[row * LEVELS + column] ?? 0;
+      for (let k = 0; k < column; k++) sum -= (matrix[row * LEVELS + k] ?? 0) * (matrix[column * LEVELS + k] ?? 0);
+      matrix[row * LEVELS + column] = row === column ? Math.sqrt(Math.max(sum, 1e-12)) : sum / (matrix[column * LEVELS + column] ?? 1);
+    }
+  }
 }
 
-/** Least squares of ground, its slope, wall and face for an edge at `edge`, all three channels. */
-function fitLevels(request: ProfileRequest, firstS: number, count: number, edge: number): Fit {
-  const { wallMm, blurMm } = request;
-  const matrix = [0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0];
-  const right: readonly [number[], number[], number[]] = [
-    [0, 0, 0, 0],
-    [0, 0, 0, 0],
-    [0, 0, 0, 0],
-  ];
-  const total = [0, 0, 0];
+/** Solves for one channel's levels and answers how much of its sum of squares they explain. */
+function solveChannel(channel: number): number {
+  const base = channel * LEVELS;
+  for (let row = 0; row < LEVELS; row++) {
+    let sum = right[base + row] ?? 0;
+    for (let k = 0; k < row; k++) sum -= (lower[row * LEVELS + k] ?? 0) * (levels[base + k] ?? 0);
+    levels[base + row] = sum / (lower[row * LEVELS + row] ?? 1);
+  }
+  let explained = 0;
+  for (let row = 0; row < LEVELS; row++) explained += (levels[base + row] ?? 0) ** 2;
+  for (let row = LEVELS - 1; row >= 0; row--) {
+    let sum = levels[base + row] ?? 0;
+    for (let k = row + 1; k < LEVELS; k++) sum -= (lower[k * LEVELS + row] ?? 0) * (levels[base + k] ?? 0);
+    levels[base + row] = sum / (lower[row * LEVELS + row] ?? 1);
+  }
+  return explained;
+}
+
+/** Least squares of the levels for an edge at `edge`; answers how much of all channels' sum of squares they explain. */
+function fitLevels(wallMm: number, blurMm: number, firstS: number, count: number, edge: number): number {
+  lower.fill(0);
+  right.fill(0);
   for (let k = 0; k < count; k++) {
     const s = firstS + k * STEP_MM - edge;
     const ground = blurredStep(s, blurMm);
@@ -78,28 +104,24 @@ function fitLevels(request: ProfileRequest, firstS: number, count: number, edge:
     basis[1] = ground * s;
     basis[2] = 1 - ground - face;
     basis[3] = face;
-    for (let i = 0; i < 4; i++) {
-      for (let j = 0; j <= i; j++) matrix[i * 4 + j] = (matrix[i * 4 + j] ?? 0) + (basis[i] ?? 0) * (basis[j] ?? 0);
-      for (let c = 0; c < 3; c++) {
-        const column = right[c as 0 | 1 | 2];
-        column[i] = (column[i] ?? 0) + (basis[i] ?? 0) * (samples[k * 3 + c] ?? 0);
+    for (let i = 0; i < LEVELS; i++) {
+      const value = basis[i] ?? 0;
+      if (value === 0) continue;
+      for (let j = 0; j <= i; j++) lower[i * LEVELS + j] = (lower[i * LEVELS + j] ?? 0) + value * (basis[j] ?? 0);
+      for (let c = 0; c < CHANNELS; c++) {
+        right[c * LEVELS + i] = (right[c * LEVELS + i] ?? 0) + value * (samples[k * CHANNELS + c] ?? 0);
       }
     }
-    for (let c = 0; c < 3; c++) total[c] = (total[c] ?? 0) + (samples[k * 3 + c] ?? 0) ** 2;
   }
-  for (let i = 0; i < 4; i++) {
-    matrix[i * 5] = (matrix[i * 5] ?? 0) + 1e-4;
-    for (let j = 0; j < i; j++) matrix[j * 4 + i] = matrix[i * 4 + j] ?? 0;
-  }
-  let error = 0;
-  const levels: (readonly number[])[] = [];
-  for (let c = 0; c < 3; c++) {
-    const column = right[c as 0 | 1 | 2];
-    const level = solveSymmetric(matrix, column) ?? [0, 0, 0, 0];
-    levels.push(level);
-    error += (total[c] ?? 0) - level.reduce((sum, value, i) => sum + value * (column[i] ?? 0), 0);
-  }
-  return { error, levels };
+  for (let i = 0; i < LEVELS; i++) lower[i * LEVELS + i] = (lower[i * LEVELS + i] ?? 0) + RIDGE;
+  factorise(lower);
+  return solveChannel(0) + solveChannel(1) + solveChannel(2);
+}
+
+function sumOfSquares(count: number): number {
+  let sum = 0;
+  for (let k = 0; k < count * CHANNELS; k++) sum += (samples[k] ?? 0) ** 2;
+  return sum;
 }
 
 function variation(count: number): number {
@@ -131,22 +153,42 @@ export function findProfileEdge(picture: Picture, view: View, request: ProfileRe
   }
   const seen = variation(count);
   if (seen < 1e-6) return null;
-  let best = { edge: 0, error: Number.POSITIVE_INFINITY };
+  const explainedAt = (edge: number): number => fitLevels(wall, request.blurMm, firstS, count, edge);
+  let best = 0;
+  let bestExplained = Number.NEGATIVE_INFINITY;
   for (let edge = -reachMm; edge <= reachMm + 1e-9; edge += STEP_MM) {
-    const { error } = fitLevels(request, firstS, count, edge);
-    if (error < best.error) best = { edge, error };
+    const explained = explainedAt(edge);
+    if (explained > bestExplained) {
+      best = edge;
+      bestExplained = explained;
+    }
   }
   // Golden section between the neighbours of the best grid place.
-  let low = best.edge - STEP_MM;
-  let high = best.edge + STEP_MM;
+  const golden = 0.618034;
+  let low = best - STEP_MM;
+  let high = best + STEP_MM;
+  let a = high - (high - low) * golden;
+  let b = low + (high - low) * golden;
+  let atA = explainedAt(a);
+  let atB = explainedAt(b);
   for (let k = 0; k < FINE_STEPS; k++) {
-    const a = high - (high - low) * 0.618034;
-    const b = low + (high - low) * 0.618034;
-    if (fitLevels(request, firstS, count, a).error < fitLevels(request, firstS, count, b).error) high = b;
-    else low = a;
+    if (atA > atB) {
+      [high, b, atB] = [b, a, atA];
+      a = high - (high - low) * golden;
+      atA = explainedAt(a);
+    } else {
+      [low, a, atA] = [a, b, atB];
+      b = low + (high - low) * golden;
+      atB = explainedAt(b);
+    }
   }
   const edge = (low + high) / 2;
-  const fit = fitLevels(request, firstS, count, edge);
-  const steps = fit.levels.map((level) => Math.abs((level[0] ?? 0) - (request.wallMm > request.blurMm ? (level[2] ?? 0) : (level[3] ?? 0))));
-  return { offsetMm: edge, unexplained: Math.max(fit.error, 0) / seen, step: Math.max(...steps) };
+  const explained = explainedAt(edge);
+  // What lies behind the ground's edge: the wall where enough of it shows, else the face.
+  const behind = wall > request.blurMm ? 2 : 3;
+  let step = 0;
+  for (let c = 0; c < CHANNELS; c++) {
+    step = Math.max(step, Math.abs((levels[c * LEVELS] ?? 0) - (levels[c * LEVELS + behind] ?? 0)));
+  }
+  return { offsetMm: edge, unexplained: Math.max(sumOfSquares(count) - explained, 0) / seen, step };
 }

@@ -13,7 +13,7 @@ export interface TemplateMask {
   readonly contrast: number;
 }
 
-/** Steps over four cells, a millimetre, that a soft shadow can make and an edge cannot (logarithms). */
+/** Steps over four cells, more than a millimetre, that a soft shadow can make and an edge cannot (logarithms). */
 const MAX_LIGHT_STEP = 0.1;
 const MAX_TINT_STEP = 0.06;
 /** Tint that still counts as the ground's own. */

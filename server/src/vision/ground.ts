@@ -1,4 +1,4 @@
-import { cellCentre, type PageRaster } from './rectify';
+import type { PageRaster } from './rectify';
 import { MARKER_SIDE_MM, type PageBox, QUIET_ZONE_MM, type ScaleSheetLayout } from './scale-sheet-layout';
 
 /** What is known about the ground before anything is looked at. */
@@ -15,37 +15,40 @@ export interface GroundPlan {
 const RIM_INSET_MM = 1.5;
 const SEED_BAND_MM = 2;
 
-function covers(box: PageBox, x: number, y: number, marginMm: number): boolean {
-  return (
-    x >= box.x - marginMm && x <= box.x + box.widthMm + marginMm && y >= box.y - marginMm && y <= box.y + box.heightMm + marginMm
-  );
+/** Writes `value` into every cell whose centre lies in the box. */
+function paint(mask: Uint8Array, raster: PageRaster, box: PageBox, scale: readonly [number, number], value: 0 | 1): void {
+  const { columns, rows, perMm, heightMm } = raster;
+  const firstColumn = Math.max(0, Math.ceil(box.x * scale[0] * perMm - 0.5));
+  const lastColumn = Math.min(columns - 1, Math.floor((box.x + box.widthMm) * scale[0] * perMm - 0.5));
+  const firstRow = Math.max(0, Math.ceil((heightMm - (box.y + box.heightMm) * scale[1]) * perMm - 0.5));
+  const lastRow = Math.min(rows - 1, Math.floor((heightMm - box.y * scale[1]) * perMm - 0.5));
+  for (let row = firstRow; row <= lastRow; row++) {
+    mask.fill(value, row * columns + firstColumn, row * columns + Math.max(lastColumn + 1, firstColumn));
+  }
 }
 
 function plan(
   raster: PageRaster,
-  region: PageBox,
-  seeds: readonly PageBox[],
-  printed: readonly PageBox[],
+  area: PageBox,
+  bare: readonly PageBox[],
+  print: readonly PageBox[],
   scale: readonly [number, number],
 ): GroundPlan {
-  const result = {
-    region: new Uint8Array(raster.columns * raster.rows),
-    seeds: new Uint8Array(raster.columns * raster.rows),
-    printed: new Uint8Array(raster.columns * raster.rows),
-  };
-  for (let row = 0; row < raster.rows; row++) {
-    for (let column = 0; column < raster.columns; column++) {
-      const cell = row * raster.columns + column;
-      const centre = cellCentre(raster, column, row);
-      const x = centre.x / scale[0];
-      const y = centre.y / scale[1];
-      if (raster.isSeen[cell] !== 1 || !covers(region, x, y, 0)) continue;
-      result.region[cell] = 1;
-      if (printed.some((box) => covers(box, x, y, 0))) result.printed[cell] = 1;
-      else if (!covers(region, x, y, -SEED_BAND_MM) || seeds.some((box) => covers(box, x, y, 0))) result.seeds[cell] = 1;
-    }
+  const cells = raster.columns * raster.rows;
+  const region = new Uint8Array(cells);
+  const seeds = new Uint8Array(cells);
+  const printed = new Uint8Array(cells);
+  paint(region, raster, area, scale, 1);
+  paint(seeds, raster, area, scale, 1);
+  paint(seeds, raster, inset(area, SEED_BAND_MM), scale, 0);
+  for (const box of bare) paint(seeds, raster, box, scale, 1);
+  for (const box of print) paint(printed, raster, box, scale, 1);
+  for (let cell = 0; cell < cells; cell++) {
+    if (raster.isSeen[cell] !== 1) region[cell] = 0;
+    if (region[cell] !== 1) printed[cell] = 0;
+    if (region[cell] !== 1 || printed[cell] === 1) seeds[cell] = 0;
   }
-  return result;
+  return { region, seeds, printed };
 }
 
 function inset(box: PageBox, by: number): PageBox {

@@ -1,5 +1,4 @@
 import type { Trace, TraceStage } from '@foldwright/shared/fitting/trace';
-import sharp from 'sharp';
 import { cameraCentre, cameraTiltDeg, projectPoint } from './camera';
 import { traceContours } from './contours';
 import { decodePhoto, encodeForDisplay } from './decode-photo';
@@ -10,7 +9,7 @@ import { groundOfScaleSheet, type GroundPlan } from './ground';
 import type { PhotoReading } from './photo-reading';
 import { type Picture, shrinkToGrey } from './picture';
 import type { ReadingOptions } from './reading-options';
-import { type PageRaster, rasterToSrgb, rectify } from './rectify';
+import { type PageRaster, rectify, rectifyForDisplay } from './rectify';
 import { refineBoundary } from './refine-boundary';
 import { plainView } from './plain-view';
 import { squareUp } from './square-up';
@@ -20,8 +19,11 @@ import { pixelsPerMmAt, type View } from './view';
 
 export type StageListener = (stage: TraceStage) => void;
 
-const RASTER_PER_MM = 4;
+/** Fine enough for the smallest hole; edges are found on the photo itself. */
+const RASTER_PER_MM = 3;
+const DISPLAY_PER_MM = 6;
 const DISPLAY_SIDE_PX = 2400;
+const MAX_RASTER_SIDE = 2400;
 /** Long side of the picture in which markers are looked for, pixels. */
 const SEARCH_SIDE_PX = 1340;
 const MAX_BLUR_PX = 4.5;
@@ -122,7 +124,9 @@ export async function readPhoto(
   const scene = scale.kind === 'markers' ? sceneOfScaleSheet(picture, focal35Mm, options) : plainView(picture, focal35Mm, scale);
   leave('markers');
   await enter('square-up');
-  const raster = rectify(picture, scene.view, scene.widthMm, scene.heightMm, RASTER_PER_MM);
+  const longMm = Math.max(scene.widthMm, scene.heightMm);
+  const raster = rectify(picture, scene.view, scene.widthMm, scene.heightMm, Math.min(RASTER_PER_MM, MAX_RASTER_SIDE / longMm));
+  const displayPerMm = Math.min(DISPLAY_PER_MM, DISPLAY_SIDE_PX / longMm);
   leave('square-up');
   await enter('template');
   const template = findTemplate(raster, scene.ground(raster));
@@ -148,9 +152,10 @@ export async function readPhoto(
   if (!shapes) throw new TraceRefusal('noTemplate', "The template's edge cannot be followed all round.");
   leave('holes');
   const display = await encodeForDisplay(picture, DISPLAY_SIDE_PX);
-  const rectifiedJpeg = await sharp(rasterToSrgb(raster), { raw: { width: raster.columns, height: raster.rows, channels: 3 } })
-    .jpeg({ quality: 84 })
-    .toBuffer();
+  const rectified = await encodeForDisplay(
+    rectifyForDisplay(picture, scene.view, scene.widthMm, scene.heightMm, displayPerMm),
+    DISPLAY_SIDE_PX,
+  );
   isStopped(signal);
   timingsMs['total'] = Math.round(performance.now() - began);
   const toDisplay = display.widthPx / picture.widthPx;
@@ -166,7 +171,12 @@ export async function readPhoto(
       warnings: scene.warnings,
       timingsMs,
     },
-    rectified: { jpeg: rectifiedJpeg, pixelsPerMm: raster.perMm, widthMm: scene.widthMm, heightMm: scene.heightMm },
+    rectified: {
+      jpeg: rectified.jpeg,
+      pixelsPerMm: rectified.widthPx / scene.widthMm,
+      widthMm: scene.widthMm,
+      heightMm: scene.heightMm,
+    },
     display,
     photoOutline: boundaries.map((points) =>
       points.map(({ seen }) => {

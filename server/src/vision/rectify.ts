@@ -23,7 +23,7 @@ export function cellCentre(raster: PageRaster, column: number, row: number): Poi
   return { x: (column + 0.5) / raster.perMm, y: raster.heightMm - (row + 0.5) / raster.perMm };
 }
 
-/** Squares up the page at `perMm` cells a millimetre, each cell the mean of four samples. */
+/** Squares up the page at `perMm` cells a millimetre, each cell the mean of two samples across its diagonal. */
 export function rectify(picture: Picture, view: View, widthMm: number, heightMm: number, perMm: number): PageRaster {
   const columns = Math.max(1, Math.round(widthMm * perMm));
   const rows = Math.max(1, Math.round(heightMm * perMm));
@@ -32,7 +32,6 @@ export function rectify(picture: Picture, view: View, widthMm: number, heightMm:
   const sample = new Float32Array(3);
   const at = (c: number, r: number): { x: number; y: number } =>
     view.toPixel((c + 0.5) / perMm, heightMm - (r + 0.5) / perMm);
-  const offsets = [-0.25, 0.25];
   for (let blockRow = 0; blockRow < rows; blockRow += BLOCK) {
     for (let blockColumn = 0; blockColumn < columns; blockColumn += BLOCK) {
       // Over eight cells a bilinear map misses the true one by less than a tenth of a cell.
@@ -46,23 +45,21 @@ export function rectify(picture: Picture, view: View, widthMm: number, heightMm:
           let green = 0;
           let blue = 0;
           let isInside = true;
-          for (const dv of offsets) {
-            for (const du of offsets) {
-              const u = (c - blockColumn + du) / BLOCK;
-              const v = (r - blockRow + dv) / BLOCK;
-              const x = (p00.x * (1 - u) + p10.x * u) * (1 - v) + (p01.x * (1 - u) + p11.x * u) * v;
-              const y = (p00.y * (1 - u) + p10.y * u) * (1 - v) + (p01.y * (1 - u) + p11.y * u) * v;
-              isInside &&= x >= 0 && y >= 0 && x <= picture.widthPx - 1 && y <= picture.heightPx - 1;
-              sampleLinear(picture, x, y, sample, 0);
-              red += sample[0] ?? 0;
-              green += sample[1] ?? 0;
-              blue += sample[2] ?? 0;
-            }
+          for (let k = 0; k < 2; k++) {
+            const u = (c - blockColumn + k * 0.5 - 0.25) / BLOCK;
+            const v = (r - blockRow + k * 0.5 - 0.25) / BLOCK;
+            const x = (p00.x * (1 - u) + p10.x * u) * (1 - v) + (p01.x * (1 - u) + p11.x * u) * v;
+            const y = (p00.y * (1 - u) + p10.y * u) * (1 - v) + (p01.y * (1 - u) + p11.y * u) * v;
+            isInside &&= x >= 0 && y >= 0 && x <= picture.widthPx - 1 && y <= picture.heightPx - 1;
+            sampleLinear(picture, x, y, sample, 0);
+            red += sample[0] ?? 0;
+            green += sample[1] ?? 0;
+            blue += sample[2] ?? 0;
           }
           const cell = r * columns + c;
-          logRgb[cell * 3] = Math.log(red / 4 + DARK_FLOOR);
-          logRgb[cell * 3 + 1] = Math.log(green / 4 + DARK_FLOOR);
-          logRgb[cell * 3 + 2] = Math.log(blue / 4 + DARK_FLOOR);
+          logRgb[cell * 3] = Math.log(red / 2 + DARK_FLOOR);
+          logRgb[cell * 3 + 1] = Math.log(green / 2 + DARK_FLOOR);
+          logRgb[cell * 3 + 2] = Math.log(blue / 2 + DARK_FLOOR);
           isSeen[cell] = isInside ? 1 : 0;
         }
       }
@@ -71,17 +68,40 @@ export function rectify(picture: Picture, view: View, widthMm: number, heightMm:
   return { columns, rows, perMm, heightMm, logRgb, isSeen };
 }
 
-/** The raster as sRGB bytes, three a cell. */
-export function rasterToSrgb(raster: PageRaster): Uint8Array {
-  const table = new Uint8Array(4096);
-  for (let k = 0; k < table.length; k++) {
-    const light = k / (table.length - 1);
-    table[k] = Math.round(255 * (light <= 0.0031308 ? light * 12.92 : 1.055 * light ** (1 / 2.4) - 0.055));
+/** The page squared up for the eye: sRGB bytes, bilinear. */
+export function rectifyForDisplay(picture: Picture, view: View, widthMm: number, heightMm: number, perMm: number): Picture {
+  const widthPx = Math.max(1, Math.round(widthMm * perMm));
+  const heightPx = Math.max(1, Math.round(heightMm * perMm));
+  const rgb = new Uint8Array(widthPx * heightPx * 3);
+  const stride = picture.widthPx * 3;
+  for (let blockRow = 0; blockRow < heightPx; blockRow += BLOCK) {
+    for (let blockColumn = 0; blockColumn < widthPx; blockColumn += BLOCK) {
+      const x0 = (blockColumn + 0.5) / perMm;
+      const x1 = (blockColumn + BLOCK + 0.5) / perMm;
+      const y0 = heightMm - (blockRow + 0.5) / perMm;
+      const y1 = heightMm - (blockRow + BLOCK + 0.5) / perMm;
+      const [p00, p10, p01, p11] = [view.toPixel(x0, y0), view.toPixel(x1, y0), view.toPixel(x0, y1), view.toPixel(x1, y1)];
+      for (let r = blockRow; r < Math.min(blockRow + BLOCK, heightPx); r++) {
+        const v = (r - blockRow) / BLOCK;
+        for (let c = blockColumn; c < Math.min(blockColumn + BLOCK, widthPx); c++) {
+          const u = (c - blockColumn) / BLOCK;
+          const x = (p00.x * (1 - u) + p10.x * u) * (1 - v) + (p01.x * (1 - u) + p11.x * u) * v;
+          const y = (p00.y * (1 - u) + p10.y * u) * (1 - v) + (p01.y * (1 - u) + p11.y * u) * v;
+          if (!(x >= 0 && y >= 0 && x < picture.widthPx - 1 && y < picture.heightPx - 1)) continue;
+          const column = Math.floor(x);
+          const row = Math.floor(y);
+          const fx = x - column;
+          const fy = y - row;
+          const from = row * stride + column * 3;
+          const to = (r * widthPx + c) * 3;
+          for (let k = from; k < from + 3; k++) {
+            const upper = (picture.rgb[k] ?? 0) * (1 - fx) + (picture.rgb[k + 3] ?? 0) * fx;
+            const lower = (picture.rgb[k + stride] ?? 0) * (1 - fx) + (picture.rgb[k + stride + 3] ?? 0) * fx;
+            rgb[to + k - from] = upper * (1 - fy) + lower * fy + 0.5;
+          }
+        }
+      }
+    }
   }
-  const bytes = new Uint8Array(raster.logRgb.length);
-  for (let k = 0; k < bytes.length; k++) {
-    const light = Math.min(Math.max(Math.exp(raster.logRgb[k] ?? 0) - DARK_FLOOR, 0), 1);
-    bytes[k] = table[Math.round(light * (table.length - 1))] ?? 0;
-  }
-  return bytes;
+  return { widthPx, heightPx, rgb };
 }

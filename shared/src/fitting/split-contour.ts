@@ -29,7 +29,7 @@ export const DEFAULT_SPLIT: SplitOptions = {
   minSagittaMm: 0.2,
 };
 
-const MAX_NODES = 700;
+const MAX_NODES = 450;
 const MIN_POINTS = 4;
 
 function chordMm(a: Point | undefined, b: Point | undefined): number {
