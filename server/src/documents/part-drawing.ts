@@ -1,5 +1,7 @@
 import { layOutMesh, poseFormed } from '@foldwright/shared/bending/formed-mesh';
-import { projectMesh } from '@foldwright/shared/drawing/axonometric-view';
+import { type ScreenPoint, TO_LIGHT, project } from '@foldwright/shared/drawing/axonometry';
+import { paintSolid } from '@foldwright/shared/drawing/solid-view';
+import { dot3 } from '@foldwright/shared/geometry/vector3';
 import type { Point } from '@foldwright/shared/geometry/point';
 import { cautionsFor } from './cautions';
 import { type DocumentInput, documentDate, revisionWords } from './document-input';
@@ -64,19 +66,25 @@ function drawFormed(sheet: PdfSheet, input: DocumentInput, topMm: number): void 
   const bottom = DRAWING_BORDER.otherMm + TITLE_BLOCK_HEIGHT_MM + 4;
   const height = topMm - bottom;
   if (height < 28) return;
-  const view = projectMesh(poseFormed(layOutMesh(input.development), 1));
-  if (!view.bounds) return;
-  const { min, max } = view.bounds;
-  const width = TITLE_BLOCK_WIDTH_MM - 10;
-  const scale = Math.min(width / (max.x - min.x), (height - 4) / (max.y - min.y), 1.2);
+  const items = paintSolid(poseFormed(layOutMesh(input.development), 1));
+  const seen = items.flatMap((item) => (item.kind === 'face' ? item.points.map(project) : []));
+  if (seen.length === 0) return;
+  const [minX, minY] = [Math.min(...seen.map(({ x }) => x)), Math.min(...seen.map(({ y }) => y))];
+  const [maxX, maxY] = [Math.max(...seen.map(({ x }) => x)), Math.max(...seen.map(({ y }) => y))];
+  const scale = Math.min((TITLE_BLOCK_WIDTH_MM - 10) / (maxX - minX), (height - 4) / (maxY - minY), 1.2);
   const centre = { x: RIGHT_COLUMN_LEFT_MM + TITLE_BLOCK_WIDTH_MM / 2, y: bottom + height / 2 };
-  const place = (point: Point): Point => ({
-    x: centre.x + (point.x - (min.x + max.x) / 2) * scale,
-    y: centre.y + (point.y - (min.y + max.y) / 2) * scale,
+  // The projection counts y down, as screens do; the sheet counts it up.
+  const place = ({ x, y }: ScreenPoint): Point => ({
+    x: centre.x + (x - (minX + maxX) / 2) * scale,
+    y: centre.y - (y - (minY + maxY) / 2) * scale,
   });
-  for (const item of view.items) {
-    if (item.kind === 'face') sheet.polygon(item.corners.map(place), grey(item.brightness));
-    else sheet.line(place(item.from), place(item.to), { widthMm: 0.2 });
+  for (const item of items) {
+    if (item.kind === 'line') sheet.line(place(project(item.from)), place(project(item.to)), { widthMm: 0.2 });
+    else
+      sheet.polygon(
+        item.points.map((point) => place(project(point))),
+        grey(dot3(item.normal, TO_LIGHT)),
+      );
   }
   sheet.text(
     'Formed, face A up in the base panel; not to scale',
@@ -85,8 +93,9 @@ function drawFormed(sheet: PdfSheet, input: DocumentInput, topMm: number): void 
   );
 }
 
-function grey(brightness: number): string {
-  const level = Math.round(150 + 95 * Math.min(1, brightness));
+/** Printed grey of a face: light where it looks at the light, never so dark that edges drown. */
+function grey(light: number): string {
+  const level = Math.round(185 + 60 * Math.max(0, Math.min(1, light)));
   const hex = level.toString(16).padStart(2, '0');
   return `#${hex}${hex}${hex}`;
 }

@@ -3,6 +3,7 @@ import { developPart } from '@foldwright/shared/part/develop-part';
 import type { PartDocument, StockRole } from '@foldwright/shared/part/part-document';
 import { drawSolid } from './draw-solid';
 import { drawTemplate } from './draw-template';
+import { bestFacing, turned } from './facing';
 import type { PartDrawing } from './part-drawing';
 
 /** What a part is made of today: decides its colour and whether it lies flat as card or stands formed. */
@@ -37,5 +38,6 @@ function drawAnew(document: PartDocument, madeOf: MadeOf): PartDrawing {
   const role = sheetOf(madeOf);
   const result = developPart(document, role);
   if (!result.ok) return drawTemplate(document.layout, document.stocks[role].thicknessMm);
-  return drawSolid(poseFormed(layOutMesh(result.development, CHORD_MM), 1));
+  const mesh = poseFormed(layOutMesh(result.development, CHORD_MM), 1);
+  return drawSolid(turned(mesh, bestFacing(mesh)));
 }

@@ -1,23 +1,21 @@
 import type { Mesh } from '@foldwright/shared/bending/development';
 import type { Point3 } from '@foldwright/shared/geometry/point';
-import { cross3, dot3, subtract3, unit3 } from '@foldwright/shared/geometry/vector3';
-import { type ScreenPoint, TO_EYE, TO_LIGHT, project, throwOnGround } from './axonometry';
-import { type PaintFace, type PaintItem, paintOrder } from './paint-order';
+import { dot3 } from '@foldwright/shared/geometry/vector3';
+import { type ScreenPoint, TO_LIGHT, project, throwOnGround } from '@foldwright/shared/drawing/axonometry';
+import type { PaintFace, PaintItem } from '@foldwright/shared/drawing/paint-order';
+import { faces, meshFaces, paintSolid } from '@foldwright/shared/drawing/solid-view';
 import { type PaintedPiece, type PartDrawing, SHADE_COUNT } from './part-drawing';
 
-/** Faces seen this edge-on cover less than a line's width. */
-const EDGE_ON = 0.002;
 /** Shade of a face turned away from the light, and how much the light adds. */
 const DARKEST = 3.2;
 const LIT = 7.6;
 
 /** Draws a closed mesh as the list shows it: faces that look at the eye, their scribed edges, its shadow. */
 export function drawSolid(mesh: Mesh): PartDrawing {
-  const triangles = trianglesOf(mesh);
-  const seen = triangles.filter((face) => dot3(face.normal, TO_EYE) > EDGE_ON);
+  const triangles = meshFaces(mesh);
   const points = triangles.flatMap((face) => face.points);
   return {
-    pieces: pieces(paintOrder([...seen, ...linesOf(mesh)])),
+    pieces: pieces(paintSolid(mesh)),
     shadow: shadowOf(triangles),
     ...extent(points.map(project)),
   };
@@ -49,29 +47,6 @@ export function rounded(value: number): number {
   return Math.round(value * 20) / 20;
 }
 
-function trianglesOf(mesh: Mesh): readonly PaintFace[] {
-  const faces: PaintFace[] = [];
-  for (let index = 0; index + 2 < mesh.indices.length; index += 3) {
-    const [a, b, c] = [0, 1, 2].map((corner) => vertex(mesh.positions, mesh.indices[index + corner] ?? 0));
-    if (a === undefined || b === undefined || c === undefined) continue;
-    const normal = unit3(cross3(subtract3(b, a), subtract3(c, a)));
-    if (dot3(normal, normal) > 0.5) faces.push({ kind: 'face', points: [a, b, c], normal });
-  }
-  return faces;
-}
-
-function linesOf(mesh: Mesh): readonly PaintItem[] {
-  const lines: PaintItem[] = [];
-  for (let index = 0; index + 5 < mesh.edges.length; index += 6) {
-    lines.push({ kind: 'line', from: vertex(mesh.edges, index / 3), to: vertex(mesh.edges, index / 3 + 1) });
-  }
-  return lines;
-}
-
-function vertex(values: readonly number[], at: number): Point3 {
-  return { x: values[at * 3] ?? 0, y: values[at * 3 + 1] ?? 0, z: values[at * 3 + 2] ?? 0 };
-}
-
 /** Neighbours in order of the same kind and shade become one path: fewer elements, no seams between them. */
 function pieces(items: readonly PaintItem[]): readonly PaintedPiece[] {
   const done: PaintedPiece[] = [];
@@ -93,10 +68,10 @@ function pieces(items: readonly PaintItem[]): readonly PaintedPiece[] {
 }
 
 /** Every face turned to the light throws its own shadow; all wound the same way, so that overlaps don't cancel. */
-function shadowOf(faces: readonly PaintFace[]): string {
-  const groundMm = Math.min(...faces.flatMap((face) => face.points.map((point) => point.z)));
-  return faces
-    .filter((face) => dot3(face.normal, TO_LIGHT) > EDGE_ON)
+function shadowOf(triangles: readonly PaintFace[]): string {
+  const groundMm = Math.min(...triangles.flatMap((face) => face.points.map((point) => point.z)));
+  return triangles
+    .filter((face) => faces(face, TO_LIGHT))
     .map((face) => polygonPath(face.points.map((point) => project(throwOnGround(point, groundMm)))))
     .join('');
 }

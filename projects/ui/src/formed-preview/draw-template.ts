@@ -4,7 +4,7 @@ import { circleLoop, clockwise, counterClockwise, loopFromBulges, slotLoop } fro
 import type { Loop } from '@foldwright/shared/geometry/path';
 import type { Point } from '@foldwright/shared/geometry/point';
 import { findHoleDiameterMm } from '@foldwright/shared/stock/hole-diameter';
-import { project, throwOnGround } from './axonometry';
+import { project, throwOnGround } from '@foldwright/shared/drawing/axonometry';
 import { extent, polygonPath, rounded } from './draw-solid';
 import type { PartDrawing } from './part-drawing';
 

@@ -1,5 +1,5 @@
-import type { Point3 } from '@foldwright/shared/geometry/point';
-import { cross3, dot3, subtract3 } from '@foldwright/shared/geometry/vector3';
+import type { Point3 } from '../geometry/point';
+import { cross3, dot3, subtract3 } from '../geometry/vector3';
 
 /** A flat convex face that looks towards the eye. */
 export interface PaintFace {

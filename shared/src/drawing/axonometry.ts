@@ -1,5 +1,5 @@
-import type { Point3 } from '@foldwright/shared/geometry/point';
-import { unit3 } from '@foldwright/shared/geometry/vector3';
+import type { Point3 } from '../geometry/point';
+import { unit3 } from '../geometry/vector3';
 
 /** A point on the screen at 1 px per mm; x to the right, y down. */
 export interface ScreenPoint {
