@@ -71,18 +71,16 @@ describe('SignIn', () => {
     await submit();
     http.expectOne({ method: 'GET', url: '/api/session' }).flush(NOBODY);
     await settled();
-    http
-      .expectOne({ method: 'POST', url: '/api/session' })
-      .flush(
-        {
-          type: '/problems/wrong-sign-in',
-          title: 'E-mail or password is wrong',
-          status: 401,
-          detail: 'Try again.',
-          instance: '/',
-        },
-        { status: 401, statusText: '' },
-      );
+    http.expectOne({ method: 'POST', url: '/api/session' }).flush(
+      {
+        type: '/problems/wrong-sign-in',
+        title: 'E-mail or password is wrong',
+        status: 401,
+        detail: 'Try again.',
+        instance: '/',
+      },
+      { status: 401, statusText: '' },
+    );
     await settled();
     await fixture.whenStable();
     expect(host.querySelector('[role=alert]')?.textContent).toContain('E-mail or password is wrong');

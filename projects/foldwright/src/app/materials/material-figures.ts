@@ -57,9 +57,9 @@ export function kFromWords(material: SheetMaterial): string {
 
 /** Thicknesses it is usually sold in, mm; empty when the tables list none. */
 export function soldIn(material: SheetMaterial): string {
-  return stockThicknessesMm(material.id)
-    .map((thicknessMm) => formatDecimal(thicknessMm, 2))
-    .join(', ');
+  const written = stockThicknessesMm(material.id).map((thicknessMm) => formatDecimal(thicknessMm, 2));
+  // An inch size and a metric one can read the same.
+  return [...new Set(written)].join(', ');
 }
 
 function figure(label: string, { value, source, confidence }: Figure, unit: string): MaterialFigure {

@@ -2,7 +2,6 @@ import { type PART_STEPS, type PartSummary } from '@foldwright/shared/contracts/
 import type { SheetStock } from '@foldwright/shared/part/part-document';
 import type { Severity } from '@foldwright/shared/rules/finding';
 import { findMaterial } from '@foldwright/shared/stock/materials';
-import { formatDecimal } from '@foldwright/shared/units/length';
 import { dayWords } from '@foldwright/ui/date-text/date-words';
 import type { PictogramName } from '@foldwright/ui/pictogram/pictogram-paths';
 
@@ -127,5 +126,5 @@ function sheetsOf(stocks: { readonly trial: SheetStock; readonly production: She
 /** "Mild steel 1.5". */
 function sheetWords(stock: SheetStock): string {
   const name = findMaterial(stock.materialId)?.shortName ?? stock.materialId;
-  return `${name} ${formatDecimal(stock.thicknessMm, 2)}`;
+  return `${name} ${stock.thicknessMm.toFixed(Number.isInteger(stock.thicknessMm * 10) ? 1 : 2)}`;
 }

@@ -52,7 +52,7 @@ describe('part facts', () => {
     expect(facts.revision).toEqual({ icon: 'scribe', strong: 'C in draft', soft: 'at Bends' });
     expect(facts.finding).toEqual({ severity: 'caution', text: '1 to check' });
     expect(facts.before).toEqual({ icon: 'punched', strong: 'B released', soft: '4 March' });
-    expect(facts.sheets).toMatch(/^Mild steel 1.5, then .+ 3$/);
+    expect(facts.sheets).toMatch(/^Mild steel 1.5, then .+ 3\.0$/);
   });
 
   it('names what can’t be made before what is to check', () => {

@@ -43,6 +43,10 @@ export class Frame {
   protected readonly areas = computed(() => areasFor(this.session.role()));
   protected readonly initials = computed(() => initialsOf(this.user()?.name ?? ''));
   protected readonly roleWord = computed(() => this.session.role() ?? '');
+  /** Holds the initials too, so that somebody who speaks what they see is understood. */
+  protected readonly personLabel = computed(() =>
+    [this.initials(), this.user()?.name ?? '', this.roleWord()].filter((word) => word !== '').join(', '),
+  );
   protected readonly otherWorkshops = computed(() =>
     this.session.memberships().filter((membership) => membership.workshopId !== this.current()?.workshopId),
   );
