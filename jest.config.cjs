@@ -11,6 +11,8 @@ const ES_MODULES = '(earcut|robust-predicates|clipper2-ts|flatbush|flatqueue)';
 const node = {
   rootDir: __dirname,
   testEnvironment: 'node',
+  // Time limits of tests say what hangs, not what is slow: two busy cores make a quick test take seconds.
+  testTimeout: 30_000,
   // Types are checked by `tsc -b`; here each file is only transpiled, which keeps the suite fast.
   transform: {
     '^.+\\.ts$': ['ts-jest', { tsconfig: '<rootDir>/tsconfig.jest.json', diagnostics: false }],
