@@ -20,17 +20,18 @@ export interface ProfileRequest {
   readonly wallMm: number;
   /** Blur of the photo here, mm (standard deviation). */
   readonly blurMm: number;
-  /** How far to look both ways, mm. */
-  readonly reachMm: number;
+  /** How far to look inwards and outwards, mm. */
+  readonly inwardMm: number;
+  readonly outwardMm: number;
 }
 
 const STEP_MM = 0.08;
 const GROUND_SPAN_MM = 0.6;
 const FACE_SPAN_MM = 0.45;
 /** Walls are followed inwards only so far: what lies deeper does not move the foot. */
-const MAX_WALL_MM = 0.5;
+const MAX_WALL_MM = 3;
 const FINE_STEPS = 7;
-const MAX_SAMPLES = 96;
+const MAX_SAMPLES = 140;
 
 const NORMAL_TABLE = Float64Array.from({ length: 801 }, (_, k) => gaussianShare((k - 400) / 100));
 
@@ -141,10 +142,10 @@ function variation(count: number): number {
  * `null` where the photo does not reach or nothing changes.
  */
 export function findProfileEdge(picture: Picture, view: View, request: ProfileRequest): ProfileEdge | null {
-  const { origin, normal, reachMm } = request;
+  const { origin, normal, inwardMm, outwardMm } = request;
   const wall = Math.min(request.wallMm, MAX_WALL_MM);
-  const firstS = -(reachMm + wall + FACE_SPAN_MM);
-  const count = Math.min(MAX_SAMPLES, Math.ceil((reachMm + GROUND_SPAN_MM - firstS) / STEP_MM) + 1);
+  const firstS = -(inwardMm + wall + FACE_SPAN_MM);
+  const count = Math.min(MAX_SAMPLES, Math.ceil((outwardMm + GROUND_SPAN_MM - firstS) / STEP_MM) + 1);
   for (let k = 0; k < count; k++) {
     const s = firstS + k * STEP_MM;
     const at = view.toPixel(origin.x + normal.x * s, origin.y + normal.y * s);
@@ -156,7 +157,7 @@ export function findProfileEdge(picture: Picture, view: View, request: ProfileRe
   const explainedAt = (edge: number): number => fitLevels(wall, request.blurMm, firstS, count, edge);
   let best = 0;
   let bestExplained = Number.NEGATIVE_INFINITY;
-  for (let edge = -reachMm; edge <= reachMm + 1e-9; edge += STEP_MM) {
+  for (let edge = -inwardMm; edge <= outwardMm + 1e-9; edge += STEP_MM) {
     const explained = explainedAt(edge);
     if (explained > bestExplained) {
       best = edge;

@@ -20,6 +20,9 @@ const MAX_TINT_STEP = 0.06;
 const MAX_TINT_OFF = 0.12;
 /** Spreads that are always allowed for: light by shadows on the ground, tint by print and lamp. */
 const SHADOW_SPREAD = 0.25;
+/** Where tint alone tells template from ground, shadows of any depth are allowed for. */
+const DEEP_SHADOW_SPREAD = 1;
+const TINT_TELLS = 3;
 const LIGHT_SPREAD = 0.08;
 const TINT_SPREAD = 0.02;
 const MIN_CONTRAST = 2.2;
@@ -167,8 +170,8 @@ interface Discriminant {
 }
 
 /** Fisher's linear discriminant between the ground (about zero) and the template, scaled so that they are one apart. */
-function discriminant(ground: Spread, template: Spread): Discriminant | null {
-  const floors = [LIGHT_SPREAD ** 2 + SHADOW_SPREAD ** 2 / 2, TINT_SPREAD ** 2, TINT_SPREAD ** 2];
+function discriminant(ground: Spread, template: Spread, shadowSpread: number): Discriminant | null {
+  const floors = [LIGHT_SPREAD ** 2 + shadowSpread ** 2 / 2, TINT_SPREAD ** 2, TINT_SPREAD ** 2];
   const covariance = ground.covariance.map((value, index) => {
     const isDiagonal = index % 4 === 0;
     return (value + (template.covariance[index] ?? 0)) / 2 + (isDiagonal ? (floors[index / 4] ?? 0) : 0);
@@ -248,7 +251,9 @@ export function findTemplate(raster: PageRaster, plan: GroundPlan): TemplateMask
   const first = singleTemplate(opened, raster);
   const core = erode(first, columns, rows, Math.round(perMm));
   const template = spreadOf(soft, groundLook, core);
-  const separating = discriminant(spreadOf(soft, groundLook, flooded), template);
+  const bare = spreadOf(soft, groundLook, flooded);
+  const byTint = discriminant(bare, template, DEEP_SHADOW_SPREAD);
+  const separating = byTint && byTint.contrast > TINT_TELLS ? byTint : discriminant(bare, template, SHADOW_SPREAD);
   if (template.count < MIN_TEMPLATE_MM2 / 3 || !separating || separating.contrast < MIN_CONTRAST) {
     throw new TraceRefusal('noTemplate', 'No template stands out from the sheet. Pale card needs the dark sheet.');
   }

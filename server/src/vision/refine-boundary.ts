@@ -52,20 +52,35 @@ function median(values: readonly number[]): number {
   return sorted[sorted.length >> 1] ?? 0;
 }
 
-function refineOnce(picture: Picture, view: View, contour: Contour, options: BoundaryOptions, reachMm: number): readonly Found[] {
+/**
+ * One round along the whole chain. A rough chain may follow the upper edge where the foot is meant: with `isRough` the
+ * search goes out by the width of the wall as well.
+ */
+function refineOnce(
+  picture: Picture,
+  view: View,
+  contour: Contour,
+  options: BoundaryOptions,
+  reachMm: number,
+  isRough: boolean,
+): readonly Found[] {
   const stepMm = Math.hypot((contour[1]?.x ?? 0) - (contour[0]?.x ?? 0), (contour[1]?.y ?? 0) - (contour[0]?.y ?? 0)) || STEP_MM;
   const normals = outwardNormals(contour, Math.max(1, Math.min(Math.round(NORMAL_REACH_MM / stepMm), Math.floor(contour.length / 12))));
-  const edges = contour.map((origin, index) => {
-    const normal = normals[index] ?? { x: 1, y: 0 };
-    const { along } = lean(view.eye, origin, normal, options.thicknessMm);
-    return findProfileEdge(picture, view, {
-      origin,
-      normal,
-      wallMm: Math.max(0, -along),
-      blurMm: options.blurPx / pixelsPerMmAt(view, origin),
-      reachMm,
-    });
+  const walls = contour.map((origin, index) => {
+    const { along } = lean(view.eye, origin, normals[index] ?? { x: 1, y: 0 }, options.thicknessMm);
+    return Math.max(0, -along);
   });
+  const outwards = walls.map((wallMm) => reachMm + (isRough ? wallMm : 0));
+  const edges = contour.map((origin, index) =>
+    findProfileEdge(picture, view, {
+      origin,
+      normal: normals[index] ?? { x: 1, y: 0 },
+      wallMm: walls[index] ?? 0,
+      blurMm: options.blurPx / pixelsPerMmAt(view, origin),
+      inwardMm: reachMm,
+      outwardMm: outwards[index] ?? reachMm,
+    }),
+  );
   const steps = edges.flatMap((edge) => (edge ? [edge.step] : []));
   const leastStep = 0.2 * median(steps);
   return contour.map((origin, index) => {
@@ -82,7 +97,8 @@ function refineOnce(picture: Picture, view: View, contour: Contour, options: Bou
       edge !== undefined &&
       edge.unexplained < MAX_UNEXPLAINED &&
       edge.step > leastStep &&
-      Math.abs(edge.offsetMm) < reachMm * 0.97 &&
+      edge.offsetMm > -0.97 * reachMm &&
+      edge.offsetMm < 0.97 * (outwards[index] ?? reachMm) &&
       Math.abs(edge.offsetMm - usual) < DRAWN_IN_MM;
     const offset = isGood ? edge.offsetMm : usual;
     return { seen: { x: origin.x + normal.x * offset, y: origin.y + normal.y * offset }, normal, isGood };
@@ -135,13 +151,14 @@ export function refineBoundary(picture: Picture, view: View, rough: Contour, opt
   });
   const stepMm = Math.min(STEP_MM, length / MIN_POINTS);
   const start = smoothContour(resample(rough, stepMm), 2);
-  const first = refineOnce(picture, view, start, options, FIRST_REACH_MM);
+  const first = refineOnce(picture, view, start, options, FIRST_REACH_MM, true);
   const second = refineOnce(
     picture,
     view,
     smoothContour(resample(first.map((f) => f.seen), stepMm), 1),
     options,
     SECOND_REACH_MM,
+    false,
   );
   const heights = heightsOf(second, view.eye, options);
   return second.flatMap(({ seen, normal, isGood }, index) => {

@@ -10,6 +10,8 @@ export interface Joint {
 
 /** Directions that differ by less run into each other. */
 const TANGENT_WITHIN_DEG = 12;
+/** A crossing farther from the points than this is none: the neighbours are nearly parallel, mm. */
+const CROSS_WITHIN_MM = 4;
 /** Circles and lines that miss each other by less than this touch, mm. */
 const TOUCH_WITHIN_MM = 0.6;
 
@@ -108,7 +110,9 @@ function joint(a: FittedPrimitive, b: FittedPrimitive, near: Point, isHeld: bool
   const touching = touchPoint(a, b, near);
   const canTouch = a.kind === 'arc' || b.kind === 'arc';
   if (isHeld === true) return { at: touching, isTangent: true };
-  const crossing = nearest(crossings(a, b), near);
+  const nearestCrossing = nearest(crossings(a, b), near);
+  const isReached = nearestCrossing !== null && Math.hypot(nearestCrossing.x - near.x, nearestCrossing.y - near.y) < CROSS_WITHIN_MM;
+  const crossing = isReached ? nearestCrossing : null;
   if (isHeld === false && crossing) return { at: crossing, isTangent: false };
   if (crossing === null) return { at: canTouch ? touching : near, isTangent: canTouch };
   const bend = anglesDeg(directionAt(a, crossing), directionAt(b, crossing));
