@@ -10,7 +10,7 @@ import { ComputedParts } from '../computed-parts';
 import { BoardEditor, newEntityId } from '../drawing-board/board-editor';
 import { BoardFrame } from '../drawing-board/board-frame';
 import { DrawingBoard } from '../drawing-board/canvas/drawing-board';
-import { chainDimensions, drawingNotes, placeDimensions } from '../drawing-board/drawing/dimensions';
+import { chainDimensions, drawingNotes, layoutChain, placeDimensions } from '../drawing-board/drawing/dimensions';
 import { fieldPlace, overlayOf } from '../drawing-board/drawing/selection-overlay';
 import { drawingOfLayout } from '../drawing-board/drawing/sheet-drawing';
 import { describeEntity, listEntities } from '../drawing-board/entity-words';
@@ -26,9 +26,10 @@ import { FindingAtPlace } from '../drawing-board/panels/finding-at-place';
 import { handleOf } from '../drawing-board/tools/drag-commands';
 import { removeCommand } from '../drawing-board/tools/select-tool';
 import type { EditorEvent } from '../drawing-board/tools/tool';
+import { verbOfKey } from '../drawing-board/verb-of-key';
 import { PartStore } from '../part-store';
 import { arcRadiusCommands, placeCommands, splitCommands, squareUpCommands } from './outline-commands';
-import { type OutlineField, type OutlineVerb, outlineVerbs, usualField, verbOfKey } from './outline-verbs';
+import { type OutlineField, type OutlineVerb, outlineVerbs, usualField } from './outline-verbs';
 
 const SIDE_LISTS = [
   { id: 'list', label: 'Everything drawn' },
@@ -75,7 +76,7 @@ export class OutlinePage {
     const layout = this.layout();
     if (layout === null) return [];
     const view = this.frame.viewport();
-    return [...chainDimensions(layout, view), ...placeDimensions(layout, this.editor.selection(), view)];
+    return [...chainDimensions(layoutChain(layout), view), ...placeDimensions(layout, this.editor.selection(), view)];
   });
   protected readonly notes = computed(() => {
     const layout = this.layout();

@@ -82,8 +82,3 @@ export function outlineVerbs(
       ];
   }
 }
-
-/** The verb of a key, among those that are offered. */
-export function verbOfKey(verbs: readonly RuleVerb[], key: string): string | null {
-  return verbs.find((verb) => verb.key?.toLowerCase() === key.toLowerCase())?.id ?? null;
-}

@@ -4,12 +4,14 @@ import {
   DestroyRef,
   ElementRef,
   afterNextRender,
+  afterRenderEffect,
   computed,
   inject,
   input,
   model,
   output,
   signal,
+  untracked,
   viewChild,
 } from '@angular/core';
 import { ScaleBar } from '@foldwright/ui/scale-bar/scale-bar';
@@ -23,6 +25,8 @@ import type { BoardMark, BoardOverlay } from './board-overlay';
 const WHEEL_ZOOM = 0.0016;
 const KEY_ZOOM = 1.25;
 const KEY_PAN_PX = 60;
+const NARROW_PX = 640;
+const NARROW_INSETS: Insets = { top: 40, right: 24, bottom: 64, left: 62 };
 let nextId = 0;
 
 /**
@@ -50,7 +54,7 @@ export class DrawingBoard {
   readonly isInteractive = input(true);
   /** Whether a press puts something down. */
   readonly isPlacing = input(false);
-  /** What the metal looks like today. */
+  /** Room to keep free around the drawing on a wide board. */
   readonly insets = input<Insets>({ top: 40, right: 40, bottom: 70, left: 70 });
   /** Another value fits the drawing anew. */
   readonly fitKey = input('');
@@ -77,6 +81,9 @@ export class DrawingBoard {
 
   constructor() {
     const destroyed = inject(DestroyRef);
+    afterRenderEffect(() => {
+      if (this.fitKey() !== '') untracked(() => this.fit());
+    });
     afterNextRender(() => {
       const measure = (): void => this.measure(this.host.clientWidth, this.host.clientHeight);
       measure();
@@ -91,7 +98,9 @@ export class DrawingBoard {
   fit(): void {
     const size = this.size();
     if (size === null) return;
-    this.viewport.set(fitBounds(this.drawing().bounds, size.widthPx, size.heightPx, this.insets()));
+    // A narrow board has no room beside the drawing for anything but its dimensions.
+    const insets = size.widthPx < NARROW_PX ? NARROW_INSETS : this.insets();
+    this.viewport.set(fitBounds(this.drawing().bounds, size.widthPx, size.heightPx, insets));
   }
 
   /** Zooms about the middle of the board. */

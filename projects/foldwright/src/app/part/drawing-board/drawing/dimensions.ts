@@ -1,5 +1,6 @@
+import type { FlatPattern } from '@foldwright/shared/bending/development';
 import type { Layout } from '@foldwright/shared/bending/layout';
-import type { Point } from '@foldwright/shared/geometry/point';
+import type { Bounds, Point } from '@foldwright/shared/geometry/point';
 import { pointAt } from '@foldwright/shared/geometry/segment';
 import { findHoleDiameterMm } from '@foldwright/shared/stock/hole-diameter';
 import { formatDecimal } from '@foldwright/shared/units/length';
@@ -29,18 +30,37 @@ const EXTENSION_GAP_PX = 12;
 /** A figure needs this much room or it is left out; the list has every size. */
 const LEAST_ROOM_PX = 26;
 
+/** What chains of dimensions are hung on: the ends of a sheet, its creases and its corners, mm. */
+export interface ChainSource {
+  readonly bounds: Bounds;
+  readonly creases: readonly { readonly from: Point; readonly to: Point }[];
+  readonly corners: readonly Point[];
+}
+
+/** Ends, creases and corners of a layout; null for one without an outline. */
+export function layoutChain(layout: Layout): ChainSource | null {
+  const bounds = layoutBounds(layout);
+  if (bounds === null) return null;
+  const corners = edgesOfLoop(layout.outer).flatMap(({ segment }) => [segment.from, pointAt(segment, 0.5)]);
+  return { bounds, creases: layout.bends.map((bend) => bend.line), corners };
+}
+
+/** The same of a flat pattern: its creases are the middles of the bend zones. */
+export function flatChain(flat: FlatPattern): ChainSource {
+  const corners = flat.outer.flatMap((segment) => [segment.from, pointAt(segment, 0.5)]);
+  return { bounds: flat.bounds, creases: flat.bends.flatMap((bend) => bend.centreLines), corners };
+}
+
 /**
  * Chains along the bottom and the left of the sheet: from edge to bend to edge. Positions of bends count only where
  * they are square to the chain.
  */
-export function chainDimensions(layout: Layout, viewport: Viewport): readonly DrawnDimension[] {
-  const bounds = layoutBounds(layout);
-  if (bounds === null) return [];
-  const { min, max } = bounds;
+export function chainDimensions(source: ChainSource | null, viewport: Viewport): readonly DrawnDimension[] {
+  if (source === null) return [];
+  const { min, max } = source.bounds;
   const low = toScreen(viewport, min);
-  const high = toScreen(viewport, max);
-  const across = stations(layout, 'x', min.x, max.x);
-  const upwards = stations(layout, 'y', min.y, max.y);
+  const across = stations(source, 'x', min.x, max.x);
+  const upwards = stations(source, 'y', min.y, max.y);
   const bottom = low.yPx + CHAIN_OFFSET_PX;
   const left = low.xPx - CHAIN_OFFSET_PX;
   return [
@@ -56,7 +76,7 @@ export function chainDimensions(layout: Layout, viewport: Viewport): readonly Dr
       const starts = [a, b].map((station) => toScreen(viewport, { x: station.fromMm, y: station.at }).xPx);
       return plumb(`y${a.at}`, from.yPx, to.yPx, left, starts, b.at - a.at);
     }),
-  ].filter((dimension) => dimension.text !== '' && high.xPx > low.xPx);
+  ].filter((dimension) => dimension.text !== '');
 }
 
 /** Where a hole, slot or bend stands, from the nearest ends of the sheet: drawn while it is chosen. */
@@ -112,25 +132,24 @@ interface Station {
 }
 
 /** The ends of the sheet and the bends square to the axis, rising, with coinciding ones once. */
-function stations(layout: Layout, axis: 'x' | 'y', low: number, high: number): readonly Station[] {
+function stations(source: ChainSource, axis: 'x' | 'y', low: number, high: number): readonly Station[] {
   const other = axis === 'x' ? 'y' : 'x';
   const found: Station[] = [
-    { at: low, fromMm: nearestCorner(layout, axis, low) },
-    { at: high, fromMm: nearestCorner(layout, axis, high) },
+    { at: low, fromMm: nearestCorner(source, axis, low) },
+    { at: high, fromMm: nearestCorner(source, axis, high) },
   ];
-  for (const { line } of layout.bends) {
-    if (Math.abs(line.from[axis] - line.to[axis]) > 0.01) continue;
-    found.push({ at: line.from[axis], fromMm: Math.min(line.from[other], line.to[other]) });
+  for (const { from, to } of source.creases) {
+    if (Math.abs(from[axis] - to[axis]) > 0.01) continue;
+    found.push({ at: from[axis], fromMm: Math.min(from[other], to[other]) });
   }
   found.sort((a, b) => a.at - b.at);
   return found.filter((station, index) => index === 0 || station.at - (found[index - 1]?.at ?? -Infinity) > 0.05);
 }
 
-function nearestCorner(layout: Layout, axis: 'x' | 'y', at: number): number {
+function nearestCorner(source: ChainSource, axis: 'x' | 'y', at: number): number {
   const other = axis === 'x' ? 'y' : 'x';
-  const ends = edgesOfLoop(layout.outer).flatMap(({ segment }) => [segment.from, pointAt(segment, 0.5)]);
-  const near = ends.filter((point) => Math.abs(point[axis] - at) < 0.5).map((point) => point[other]);
-  return near.length === 0 ? 0 : Math.min(...near);
+  const near = source.corners.filter((point) => Math.abs(point[axis] - at) < 0.5).map((point) => point[other]);
+  return near.length === 0 ? source.bounds.min[other] : Math.min(...near);
 }
 
 function pairs(all: readonly Station[]): readonly (readonly [Station, Station])[] {
