@@ -72,6 +72,8 @@ type Agent = ReturnType<typeof request.agent>;
 export class TestBrowser {
   private readonly agent: Agent;
   csrfToken = '';
+  /** Header that carries the session, for requests made without this browser. */
+  cookie = '';
 
   constructor(app: Express) {
     this.agent = request.agent(app);
@@ -86,8 +88,9 @@ export class TestBrowser {
 
   async signIn(person: Pick<TestPerson, 'email'>): Promise<this> {
     await this.open();
-    const { body } = await this.post('/api/session').send({ email: person.email, password: TEST_PASSWORD }).expect(200);
-    this.csrfToken = sessionSchema.parse(body).csrfToken;
+    const answer = await this.post('/api/session').send({ email: person.email, password: TEST_PASSWORD }).expect(200);
+    this.csrfToken = sessionSchema.parse(answer.body).csrfToken;
+    this.cookie = String(answer.headers['set-cookie']).split(';')[0] ?? '';
     return this;
   }
 

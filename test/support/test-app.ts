@@ -16,6 +16,9 @@ import { openQueue } from '@foldwright/server/jobs/queue';
 import { StripePaymentHost } from '@foldwright/server/payments/stripe-payment-host';
 import { createTestDatabase } from './database';
 
+// Copying a database and hashing passwords takes seconds on a machine that is busy with other tests.
+jest.setTimeout(60_000);
+
 export const TEST_SESSION_SECRET = 'a secret that only tests use, long enough';
 
 /** An address where nothing listens: outside services are away unless a test brings its own. */
