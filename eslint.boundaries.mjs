@@ -46,11 +46,13 @@ const beside = (depth, names) => (names.length > 0 ? [`(?:\\.\\./){${depth + 1}}
 
 /** A row for a folder that may import itself, some of its neighbours and some packages. */
 function folderRow(folder, { neighbours = [], others = [], testNeighbours = [], why }) {
-  return Array.from({ length: DEEPEST + 1 }, (_, depth) =>
+  const rows = Array.from({ length: DEEPEST + 1 }, (_, depth) =>
     row(atDepth(folder, depth), [...within(depth), ...beside(depth, neighbours), ...others], why, {
       forTests: beside(depth, testNeighbours),
     }),
   ).flat();
+  const forTests = [...within(1), ...beside(1, [...neighbours, ...testNeighbours]), ...others, ...FOR_TESTS];
+  return [...rows, ...row([`${folder}/testing/*.ts`], forTests, why)];
 }
 
 /* shared: layers, each of which sees only those before it */

@@ -73,6 +73,7 @@ const LEGAL: readonly (readonly [string, string])[] = [
   ['shared/src/geometry/point.ts', '../units/length'],
   ['shared/src/geometry/polygon.ts', 'robust-predicates'],
   ['shared/src/geometry/point.test.ts', 'fast-check'],
+  ['shared/src/part/testing/any-command.ts', 'fast-check'],
   ['shared/src/part/part-document.test.ts', '../contracts/part-document-schema'],
   ['shared/src/part/upgrades/from-version-1.ts', '../part-document'],
   ['shared/src/part/upgrades/from-version-1.ts', '../../geometry/point'],
