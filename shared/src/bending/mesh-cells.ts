@@ -2,7 +2,7 @@ import { joinPieces } from '../geometry/chain';
 import { clipRegion } from '../geometry/clip';
 import { flattenLoop } from '../geometry/flatten';
 import { intersectSegments } from '../geometry/intersect';
-import { loopBounds, pointInLoop, signedArea } from '../geometry/loop';
+import { loopBounds, loopReach, pointInLoop, signedArea } from '../geometry/loop';
 import type { Loop } from '../geometry/path';
 import type { Point } from '../geometry/point';
 import { line } from '../geometry/segment';
@@ -146,7 +146,7 @@ function crossesTangent(opening: Loop, zone: BendZone, panelIndex: number): bool
   const { origin, inward } = panelSide(zone, panelIndex);
   const reach = zone.outer.map(({ from }) => dot(subtract(from, zone.origin), zone.along));
   const tangent = line(along(origin, zone.along, Math.min(...reach)), along(origin, zone.along, Math.max(...reach)));
-  const isBothSides = opening.some(({ from }) => dot(subtract(from, origin), inward) > COINCIDENT_MM);
+  const isBothSides = loopReach(opening, inward) - dot(origin, inward) > COINCIDENT_MM;
   return isBothSides && opening.some((segment) => intersectSegments(segment, tangent, COINCIDENT_MM).kind !== 'none');
 }
 

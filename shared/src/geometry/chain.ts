@@ -1,7 +1,7 @@
-import type { Loop, Segment } from './path';
+import type { LineSegment, Loop, Segment } from './path';
 import type { Point } from './point';
 import { arcRadius, nearestOnSegment, fractionOf, segmentLength, subSegment, tangentAt } from './segment';
-import { COINCIDENT_DEG } from './tolerance';
+import { COINCIDENT_DEG, COINCIDENT_MM } from './tolerance';
 import { directionDeg, distance, scale } from './vector';
 
 /**
@@ -63,7 +63,7 @@ function leavingCurvature(segment: Segment): number {
 export function closeLoops<S extends Segment>(
   segments: readonly S[],
   toleranceMm: number,
-): readonly (readonly S[])[] | null {
+): readonly (readonly (S | LineSegment)[])[] | null {
   const idOf = pointNumbers(toleranceMm);
   const leaving = new Map<number, number[]>();
   const ends = segments.map((segment, index) => {
@@ -72,7 +72,7 @@ export function closeLoops<S extends Segment>(
     return idOf(segment.to);
   });
   const used = new Set<number>();
-  const loops: (readonly S[])[] = [];
+  const loops: (readonly (S | LineSegment)[])[] = [];
   for (let start = 0; start < segments.length; start += 1) {
     if (used.has(start)) continue;
     const chain: S[] = [];
@@ -115,13 +115,19 @@ function firstClockwise(incoming: Segment, options: readonly number[], segments:
   return best === null ? null : best.index;
 }
 
-/** Makes every segment start exactly where the one before ended. */
-export function sealed<S extends Segment>(chain: readonly S[]): readonly S[] {
+/**
+ * Makes every segment start exactly where the one before ended. Arcs too short for a sure sweep after that become lines: moved
+ * ends could turn them into full circles.
+ */
+export function sealed<S extends Segment>(chain: readonly S[]): readonly (S | LineSegment)[] {
   return chain.map((segment, index) => {
-    const before = chain[(index + chain.length - 1) % chain.length];
-    return before === undefined ? segment : { ...segment, from: before.to };
+    const from = chain[(index + chain.length - 1) % chain.length]?.to ?? segment.from;
+    const isSpeck = segment.kind === 'arc' && chain.length > 1 && distance(from, segment.to) <= SPECK_MM;
+    return isSpeck ? { kind: 'line', from, to: segment.to } : { ...segment, from };
   });
 }
+
+const SPECK_MM = 8 * COINCIDENT_MM;
 
 /** Splits a segment at points that lie on it; pieces shorter than the tolerance are not made. */
 export function splitSegment(segment: Segment, at: readonly Point[], toleranceMm: number): readonly Segment[] {

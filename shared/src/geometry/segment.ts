@@ -1,6 +1,6 @@
 import type { ArcSegment, LineSegment, Segment } from './path';
 import type { Bounds, Point } from './point';
-import { COINCIDENT_MM } from './tolerance';
+import { COINCIDENT_MM, FULL_CIRCLE_MM } from './tolerance';
 import {
   add,
   between,
@@ -51,7 +51,7 @@ export function arcRadius(arc: ArcSegment): number {
 
 /** Signed sweep of an arc, degrees: positive counter-clockwise, 360 or -360 when both ends are the same point. */
 export function arcSweepDeg(arc: ArcSegment): number {
-  if (distance(arc.from, arc.to) <= COINCIDENT_MM) return arc.clockwise ? -360 : 360;
+  if (distance(arc.from, arc.to) <= FULL_CIRCLE_MM) return arc.clockwise ? -360 : 360;
   const turned = directionDeg(subtract(arc.to, arc.centre)) - directionDeg(subtract(arc.from, arc.centre));
   const positive = ((turned % 360) + 360) % 360;
   return arc.clockwise ? positive - 360 : positive;

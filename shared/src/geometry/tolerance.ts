@@ -1,6 +1,9 @@
 /** Two positions closer than this are the same point: numerical noise of double arithmetic on parts up to some metres, mm. */
 export const COINCIDENT_MM = 1e-6;
 
+/** Ends of an arc nearer than this are the same point and the arc a full circle; far below any arc that is cut off on purpose, mm. */
+export const FULL_CIRCLE_MM = 1e-9;
+
 /** A line drawn by hand or traced may miss the edge it is meant to reach by this much and is still taken to reach it, mm. */
 export const JOIN_MM = 1;
 

@@ -17,16 +17,7 @@ export function meshFacts(mesh: Mesh): MeshFacts {
     mesh.positions[3 * index + 1] ?? 0,
     mesh.positions[3 * index + 2] ?? 0,
   ];
-  const names = new Map<string, number>();
-  const nameOf = (index: number): number => {
-    const key = at(index)
-      .map((value) => String(Math.round(value * 100_000)))
-      .join(' ');
-    const known = names.get(key);
-    if (known !== undefined) return known;
-    names.set(key, names.size);
-    return names.size - 1;
-  };
+  const nameOf = cornerNames(at);
   const travelled = new Map<string, number>();
   let volume = 0;
   for (let first = 0; first + 2 < mesh.indices.length; first += 3) {
@@ -58,5 +49,39 @@ export function meshFacts(mesh: Mesh): MeshFacts {
     isFinite: [...mesh.positions, ...mesh.normals].every(Number.isFinite),
     min: extent(Math.min),
     max: extent(Math.max),
+  };
+}
+
+type Corner = readonly [number, number, number];
+
+const CELL_MM = 0.001;
+const SAME_MM = 0.00001;
+
+/** Numbers corners so that those within `SAME_MM` share one, whichever side of a cell's edge they fall on. */
+function cornerNames(at: (index: number) => Corner): (index: number) => number {
+  const cells = new Map<string, { readonly corner: Corner; readonly name: number }[]>();
+  let count = 0;
+  const steps = [-1, 0, 1];
+  return (index) => {
+    const corner = at(index);
+    const cell = corner.map((value) => Math.floor(value / CELL_MM));
+    for (const dx of steps) {
+      for (const dy of steps) {
+        for (const dz of steps) {
+          const key = `${String((cell[0] ?? 0) + dx)} ${String((cell[1] ?? 0) + dy)} ${String((cell[2] ?? 0) + dz)}`;
+          const known = cells
+            .get(key)
+            ?.find(
+              (one) =>
+                Math.hypot(one.corner[0] - corner[0], one.corner[1] - corner[1], one.corner[2] - corner[2]) <= SAME_MM,
+            );
+          if (known !== undefined) return known.name;
+        }
+      }
+    }
+    const key = cell.map(String).join(' ');
+    cells.set(key, [...(cells.get(key) ?? []), { corner, name: count }]);
+    count += 1;
+    return count - 1;
   };
 }
