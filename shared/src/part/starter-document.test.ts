@@ -41,7 +41,7 @@ describe('starterDocument', () => {
         expectSize(hat, [a + 2 * (c - thicknessOf(hat, stock)), widthMm, b]);
         expectSize({ shape: 'flat-plate', widthMm: a, heightMm: b }, [a, b, thicknessOf(z, stock)]);
       }),
-      { numRuns: 40 },
+      { numRuns: 15 },
     );
   });
 
@@ -52,7 +52,7 @@ describe('starterDocument', () => {
         const starter: StarterShape = { shape: 'l-bracket', baseMm, flangeMm: 28, widthMm: 40, bendAngleDeg };
         expect(formedSize(starter, stock)[0]).toBeCloseTo(baseMm, 6);
       }),
-      { numRuns: 40 },
+      { numRuns: 15 },
     );
   });
 

@@ -1,10 +1,13 @@
+import type { OutlineLoop } from '../bending/layout';
 import type { BendZone, Development, Panel } from '../bending/development';
-import { loopReach, pointInLoop } from '../geometry/loop';
+import { loopFromBulges, loopReach, pointInLoop, signedArea } from '../geometry/loop';
 import type { Point } from '../geometry/point';
 import { JOIN_MM } from '../geometry/tolerance';
 import { invert, moveDirection } from '../geometry/transform';
 import { along, cross, dot, scale } from '../geometry/vector';
-import { edgeAt, straightDirection } from '../part/outline-edge-sizes';
+import { CommandRefusal } from '../part/command-refusal';
+import { slideEdge } from '../part/outline-edits';
+import { edgeAt, edgeSegment, straightDirection } from '../part/outline-edge-sizes';
 import { ANGLE_FACTOR_SOURCE, V_DIE_SOURCE, minimumFlangeMm } from '../stock/v-dies';
 import { formatDecimal } from '../units/length';
 import { radiansFromDeg } from '../units/angle';
@@ -45,13 +48,7 @@ function checkSide(
   const bend = nameOf(context, zone.bendId);
   const mm = (valueMm: number) => formatDecimal(valueMm, 1);
   const edgeId = side === 'child' ? freeEdge(context, development, panel, outward) : null;
-  const mend: Mend | null =
-    edgeId === null
-      ? null
-      : {
-          label: `Lengthen the flange by ${formatDecimal(missingMm, 2)} mm`,
-          commands: [{ kind: 'slideEdge', edgeId, byMm: missingMm }],
-        };
+  const mend = edgeId === null ? null : lengthen(context, panel, outward, edgeId, missingMm);
   return [
     {
       id: `flangeTooShort-${zone.bendId}-${zone.childIndex}-${side}`,
@@ -99,6 +96,52 @@ function farSetbackMm(
     return Math.abs(dot(near, outward) - reach) < JOIN_MM;
   });
   return far === undefined ? 0 : outsideSetbackMm(far, thicknessMm);
+}
+
+/**
+ * Slides the flange's free edge out until the flange is as high as it has to be. An edge that is not quite parallel to
+ * the bend, or that ends in a bulging arc, gains another height than it slides; a few tries settle how far to slide.
+ */
+function lengthen(
+  { document: { layout } }: RuleContext,
+  panel: Panel,
+  outward: Point,
+  edgeId: string,
+  missingMm: number,
+): Mend | null {
+  const layoutOutward = moveDirection(invert(panel.placement), outward);
+  const startMm = heightAround(layout.outer, edgeId, layoutOutward);
+  const metalOn = signedArea(loopFromBulges(layout.outer.edges)) > 0 ? 'left' : 'right';
+  let byMm = missingMm;
+  try {
+    for (let attempt = 0; attempt < SLIDE_TRIES; attempt += 1) {
+      const gainedMm = heightAround(slideEdge(layout.outer, edgeId, byMm, metalOn), edgeId, layoutOutward) - startMm;
+      if (Math.abs(gainedMm - missingMm) < LIMIT_SLACK_MM / 2) {
+        return {
+          label: `Lengthen the flange by ${formatDecimal(missingMm, 2)} mm`,
+          commands: [{ kind: 'slideEdge', edgeId, byMm }],
+        };
+      }
+      if (gainedMm <= 0) return null;
+      byMm *= missingMm / gainedMm;
+    }
+    return null;
+  } catch (error) {
+    // The neighbouring edges leave no room to slide: there is nothing to offer with one click.
+    if (error instanceof CommandRefusal) return null;
+    throw error;
+  }
+}
+
+const SLIDE_TRIES = 12;
+
+/** How far an edge and its two neighbours reach in a direction, mm. */
+function heightAround(loop: OutlineLoop, edgeId: string, direction: Point): number {
+  const index = loop.edges.findIndex(({ id }) => id === edgeId);
+  return loopReach(
+    [index - 1, index, index + 1].map((at) => edgeSegment(loop, at)),
+    direction,
+  );
 }
 
 /** Straight outline edge that ends the panel, parallel to the bend, at its full height. */

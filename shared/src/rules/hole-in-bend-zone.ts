@@ -2,13 +2,14 @@ import type { BendZone, Development } from '../bending/development';
 import { loopReach } from '../geometry/loop';
 import type { Loop } from '../geometry/path';
 import type { Point } from '../geometry/point';
-import { dot, scale } from '../geometry/vector';
+import { invert, moveLoop, movePoint, shiftBy } from '../geometry/transform';
+import { add, between, dot, scale, subtract } from '../geometry/vector';
 import type { PartCommand } from '../part/commands';
 import { formatDecimal } from '../units/length';
 import { type CutOpening, cutSheet } from './cut-openings';
 import type { Finding, Severity } from './finding';
 import { DIE_MOUTH, LIMIT_SLACK_MM, TANGENT_DISTANCE } from './limits';
-import { type RuleContext, layoutShift, listNames, nameOf, placeOfFlat } from './rule-context';
+import { type RuleContext, listNames, nameOf, panelAt, placeOfFlat } from './rule-context';
 
 /** An opening that comes too near to one bend. */
 interface Intrusion {
@@ -90,7 +91,7 @@ function describe(context: RuleContext, development: Development, group: readonl
   const tangentMm = zone.bendAllowanceMm / 2 + TANGENT_DISTANCE.overT * thicknessMm;
   const whose = group.length > 1 ? 'Their rims sit' : 'Its rim sits';
   const isBlocker = severity === 'blocker';
-  const commands = group.flatMap((intrusion) => moveAway(development, intrusion));
+  const commands = group.flatMap((intrusion) => moveAway(context, development, intrusion));
   const shiftMm = requiredMm - rimFromCentreMm;
   const who = group.length === 1 ? 'it' : group.length === 2 ? 'both' : 'all';
   return {
@@ -114,10 +115,21 @@ function describe(context: RuleContext, development: Development, group: readonl
   };
 }
 
-function moveAway(development: Development, intrusion: Intrusion): readonly PartCommand[] {
+/**
+ * Straight away from the bend by what is missing, offered only when that leaves the opening clear of every bend. The
+ * target is taken back through its own panel, because the flat pattern is shorter than the layout at each bend between.
+ */
+function moveAway(context: RuleContext, development: Development, intrusion: Intrusion): readonly PartCommand[] {
   const { opening, away, requiredMm, rimFromCentreMm } = intrusion;
-  if (opening.kind === 'cutout') return [];
-  const by = layoutShift(development, opening.centre, scale(away, requiredMm - rimFromCentreMm));
+  const shift = scale(away, requiredMm - rimFromCentreMm);
+  const target = add(opening.centre, shift);
+  const moved: CutOpening = { ...opening, centre: target, loop: moveLoop(shiftBy(shift), opening.loop) };
+  const panel = panelAt(development, target);
+  const feature = context.document.layout.features.find(({ id }) => id === opening.id);
+  if (feature === undefined || panel === null) return [];
+  if (development.zones.some((zone) => intrusionOf(development, moved, zone) !== null)) return [];
+  const from = feature.kind === 'hole' ? feature.centre : between(feature.from, feature.to, 0.5);
+  const by = subtract(movePoint(invert(panel.placement), target), from);
   return [{ kind: 'moveFeature', featureId: opening.id, by }];
 }
 

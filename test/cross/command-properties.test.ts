@@ -1,13 +1,13 @@
 import * as fc from 'fast-check';
-import { partCommandSchema } from '../contracts/part-document-schema';
-import { applyCommand, applyCommands } from './apply-command';
-import { canonicalJson, isSameJson } from './canonical-json';
-import type { PartCommand } from './commands';
-import { describeCommand } from './describe-command';
-import { checkInvariants } from './invariants';
-import type { PartDocument } from './part-document';
-import { diffDocuments, redoCommand, undoCommand } from './slices';
-import { anyCommand, furnishedBracket, tryApply } from './testing/any-command';
+import { partCommandSchema } from '@foldwright/shared/contracts/part-document-schema';
+import { applyCommand, applyCommands } from '@foldwright/shared/part/apply-command';
+import { canonicalJson, isSameJson } from '@foldwright/shared/part/canonical-json';
+import type { PartCommand } from '@foldwright/shared/part/commands';
+import { describeCommand } from '@foldwright/shared/part/describe-command';
+import { checkInvariants } from '@foldwright/shared/part/invariants';
+import type { PartDocument } from '@foldwright/shared/part/part-document';
+import { diffDocuments, redoCommand, undoCommand } from '@foldwright/shared/part/slices';
+import { anyCommand, furnishedBracket, tryApply } from '../support/any-command';
 
 describe('any sequence of commands', () => {
   it('keeps the invariants and the old document', () => {
@@ -17,7 +17,7 @@ describe('any sequence of commands', () => {
         expect(checkInvariants(commands.reduce(tryApply, furnishedBracket))).toEqual([]);
         expect(canonicalJson(furnishedBracket)).toBe(before);
       }),
-      { numRuns: 500 },
+      { numRuns: 200 },
     );
   });
 
@@ -29,7 +29,7 @@ describe('any sequence of commands', () => {
           canonicalJson(commands.reduce(tryApply, furnishedBracket)),
         );
       }),
-      { numRuns: 300 },
+      { numRuns: 100 },
     );
   });
 
@@ -47,7 +47,7 @@ describe('any sequence of commands', () => {
         const redo = redoCommand(furnishedBracket, after, 'several edits');
         expect(redo === null ? null : applyCommand(undone, redo)).toEqual(after);
       }),
-      { numRuns: 500 },
+      { numRuns: 200 },
     );
   });
 

@@ -1,10 +1,10 @@
 import * as fc from 'fast-check';
-import type { BendDeclaration } from '../../bending/layout';
-import { applyCommand, applyCommands } from '../apply-command';
-import { CommandRefusal } from '../command-refusal';
-import type { PartCommand } from '../commands';
-import type { PartDocument } from '../part-document';
-import { starterDocument } from '../starter-document';
+import type { BendDeclaration } from '@foldwright/shared/bending/layout';
+import { applyCommand, applyCommands } from '@foldwright/shared/part/apply-command';
+import { CommandRefusal } from '@foldwright/shared/part/command-refusal';
+import type { PartCommand } from '@foldwright/shared/part/commands';
+import type { PartDocument } from '@foldwright/shared/part/part-document';
+import { starterDocument } from '@foldwright/shared/part/starter-document';
 
 /** A U with a rounded corner, a cut-out, two holes and a slot. */
 export const furnishedBracket: PartDocument = applyCommands(
