@@ -93,6 +93,13 @@ describe('holeInBendZone', () => {
     expect(severities(withRim(-3), 'holeInBendZone')).toEqual(['blocker']);
   });
 
+  it('means 2 T from the tangent line, which is R + 3 T from the outside face of the other leg', () => {
+    // Layout lengths run to the outside apex, so R + 3 T = 2.6 + 6 = 8.6 from the crease is the same limit.
+    const fromOutside = (rimMm: number) => add(bracket(), hole('h1', 60 + rimMm + 3, 25, plain(6)));
+    expect(severities(fromOutside(8.64), 'holeInBendZone')).toEqual(['caution']);
+    expect(severities(fromOutside(8.56), 'holeInBendZone')).toEqual(['blocker']);
+  });
+
   it('tells of holes in a row once and moves them together', () => {
     const row = add(withRim(7.5), hole('h2', 60 + 7.5 + halfDeductionMm + 3, 40, plain(6)));
     const [finding, ...rest] = found(row, 'holeInBendZone');
