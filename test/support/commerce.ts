@@ -4,7 +4,6 @@ import http from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
-import type { AppDependencies } from '@foldwright/server/app-dependencies';
 import { HttpCuttingService } from '@foldwright/server/cutting/http-cutting-service';
 import { startCuttingService } from '@foldwright/server/fakes/cutting-service/start-cutting-service';
 import type { FakeSettings } from '@foldwright/server/fakes/fake-settings';
@@ -12,18 +11,12 @@ import type { ListeningServer } from '@foldwright/server/fakes/listening-server'
 import type { LocalMailServer } from '@foldwright/server/fakes/mail-server/start-mail-server';
 import { startMailServer } from '@foldwright/server/fakes/mail-server/start-mail-server';
 import { startPaymentHost } from '@foldwright/server/fakes/payment-host/start-payment-host';
-import type { BoundRoute } from '@foldwright/server/http/route-call';
 import { commerceWork } from '@foldwright/server/jobs/commerce-work';
 import { SmtpMailer } from '@foldwright/server/mail/smtp-mailer';
 import { StripePaymentHost } from '@foldwright/server/payments/stripe-payment-host';
-import { officeMailRoutes } from '@foldwright/server/routes/office-mails';
-import { orderRoutes } from '@foldwright/server/routes/orders';
-import { partRoutes } from '@foldwright/server/routes/parts';
-import { sessionRoutes } from '@foldwright/server/routes/session';
 import type { Order, Quote } from '@foldwright/shared/contracts/orders';
 import { orderSchema, quoteSchema } from '@foldwright/shared/contracts/orders';
 import { partDetailSchema } from '@foldwright/shared/contracts/parts';
-import { ROUTE_CONTRACTS } from '@foldwright/shared/contracts/registry';
 import { revisionSummarySchema } from '@foldwright/shared/contracts/revisions';
 import type { TestBrowser } from './people';
 import { asOwner } from './people';
@@ -35,19 +28,9 @@ export const PAYMENT_SECRET = 'whsec_commerce';
 export const CUTTING_KEY = 'cutting-key';
 export const CUTTING_SECRET = 'cutting-secret';
 
-/** Only the routes that orders need, so that a fault elsewhere shows elsewhere. */
-const commerceRoutes = (dependencies: AppDependencies): BoundRoute[] => [
-  ...sessionRoutes(dependencies),
-  ...partRoutes(dependencies),
-  ...orderRoutes(dependencies),
-  ...officeMailRoutes(dependencies),
-];
-const COMMERCE_CONTRACTS = ROUTE_CONTRACTS.filter(
-  ({ tag, id }) => ['session', 'parts', 'drafts', 'orders', 'webhooks'].includes(tag) || id === 'listMails',
-);
-
 /** The web application with the three outside parties running beside it, each on a loopback port of its own. */
 export interface Commerce extends TestApp {
+  readonly publicUrl: string;
   readonly payments: ListeningServer;
   readonly cutting: ListeningServer;
   readonly mail: LocalMailServer;
@@ -72,12 +55,15 @@ export interface CommerceOptions {
   readonly isTold?: boolean;
   readonly cuttingTimeoutMs?: number;
   readonly paceMs?: number;
+  /** Connections for transactions; one makes a statement outside of its transaction wait for ever. */
+  readonly poolSize?: number;
 }
 
 export async function startCommerce({
   isTold = true,
   cuttingTimeoutMs = 2000,
   paceMs = 20,
+  poolSize,
 }: CommerceOptions = {}): Promise<Commerce> {
   const stateDirectory = await mkdtemp(path.join(tmpdir(), 'foldwright-outside-'));
   // The outside parties have to know where to call before the application is made, which has to know where they are.
@@ -129,8 +115,7 @@ export async function startCommerce({
     publicUrl,
     payments: host,
     cutting: shop,
-    routes: commerceRoutes,
-    contracts: COMMERCE_CONTRACTS,
+    ...(poolSize === undefined ? {} : { poolSize }),
   });
   answer = test.app;
   const { database, queue, files } = test;
@@ -139,6 +124,7 @@ export async function startCommerce({
 
   return {
     ...test,
+    publicUrl,
     get payments() {
       return payments;
     },

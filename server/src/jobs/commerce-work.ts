@@ -16,7 +16,7 @@ export interface CommerceTools extends SendMailTools {
 }
 
 /** Does one piece of work of a queue; a thrown error has the queue try again. */
-export type WorkHandler = (data: unknown) => Promise<void>;
+type Handle = (data: unknown) => Promise<void>;
 
 const mailWork = z.object({ workshopId: z.uuid(), mailId: z.uuid() });
 const orderWork = z.object({ workshopId: z.uuid(), orderId: z.uuid() });
@@ -26,7 +26,7 @@ const paymentWork = z.discriminatedUnion('task', [
 ]);
 
 /** The handlers of everything that follows an order: mail, the cutting service, the payment host. */
-export function commerceWork(tools: CommerceTools): Readonly<Record<Exclude<QueueName, 'trace'>, WorkHandler>> {
+export function commerceWork(tools: CommerceTools): Readonly<Record<Exclude<QueueName, 'trace'>, Handle>> {
   return {
     mail: (data) => sendMail(tools, mailWork.parse(data)),
     'cutting-order': (data) => submitCuttingOrder(tools, orderWork.parse(data)),
