@@ -78,7 +78,12 @@ describe('documentFromTrace', () => {
       reading: { readOn: 'crease', bearingFace: 'B', hinge: { kind: 'liner', face: 'A' } },
     });
     expect(usualBendDirection('inside')).toBe('towards');
-    expect(usualBendDirection('outside')).toBe('away');
+    const outside = documentFromTrace(trace, { ...answers, showing: 'outside' }, counting());
+    expect(outside.template?.flangesFold).toBe('away');
+    expect(turnDocumentOver(outside).template?.flangesFold).toBe('towards');
+    expect(outside.layout.outer.edges.map(({ start }) => start)).toEqual(
+      document.layout.outer.edges.map(({ start }) => start),
+    );
   });
 
   it('lets callipers overrule the scale of one axis', () => {

@@ -16,6 +16,8 @@ export type IdSource = (prefix: 'loop' | 'edge' | 'hole' | 'slot') => string;
 export interface TraceAnswers {
   readonly templateKind: TemplateKind;
   readonly thicknessMm: number;
+  /** Which side of the formed part showed; decides what new bends are proposed as. Absent when nobody said. */
+  readonly showing?: 'inside' | 'outside';
   /** Whether the face that showed bears on the machine, or the one that lay on the scale sheet. */
   readonly bearing: 'showing' | 'hidden';
   /** Where the creases turn; depths count from the face that showed. */
@@ -85,6 +87,7 @@ export function documentFromTrace(trace: Trace, answers: TraceAnswers, nextId: I
         bearingFace: answers.bearing === 'showing' ? 'A' : 'B',
         hinge: answers.hinge,
       },
+      ...(answers.showing === undefined ? {} : { flangesFold: usualBendDirection(answers.showing) }),
     },
     calibration: { scaleX, scaleY },
   };

@@ -1,8 +1,16 @@
-import type { BendDeclaration, CardReading, Feature, Layout, OutlineEdge, OutlineLoop } from '../bending/layout';
+import type {
+  BendDeclaration,
+  BendDirection,
+  CardReading,
+  Feature,
+  Layout,
+  OutlineEdge,
+  OutlineLoop,
+} from '../bending/layout';
 import { loopBounds, loopFromBulges } from '../geometry/loop';
 import type { Point } from '../geometry/point';
 import { edgeAt } from './outline-edge-sizes';
-import type { PartDocument, SheetStock } from './part-document';
+import type { PartDocument, SheetStock, Template } from './part-document';
 
 /**
  * The other hand of a part: the layout mirrored left to right within its own width, everything else kept. Face A stays
@@ -26,7 +34,7 @@ export function turnDocumentOver(document: PartDocument): PartDocument {
   const mirrored = mirrorDocument(document);
   return {
     ...mirrored,
-    template: mirrored.template === null ? null : { ...mirrored.template, reading: otherFace(mirrored.template) },
+    template: mirrored.template === null ? null : turnTemplateOver(mirrored.template),
     layout: { ...mirrored.layout, bends: mirrored.layout.bends.map((bend) => turnBendOver(bend, document)) },
   };
 }
@@ -64,12 +72,21 @@ function mirrorLoop(loop: OutlineLoop, mirror: (point: Point) => Point): Outline
 }
 
 function turnBendOver(bend: BendDeclaration, { template }: PartDocument): BendDeclaration {
-  const direction = bend.direction === 'towards' ? 'away' : 'towards';
+  const direction = opposite(bend.direction);
   if (bend.lengths.from !== 'template' || bend.lengths.override === null || template === null) {
     return { ...bend, direction };
   }
   const override = otherFace({ reading: bend.lengths.override, thicknessMm: template.thicknessMm });
   return { ...bend, direction, lengths: { from: 'template', override } };
+}
+
+function turnTemplateOver(template: Template): Template {
+  const turned = { ...template, reading: otherFace(template) };
+  return template.flangesFold === undefined ? turned : { ...turned, flangesFold: opposite(template.flangesFold) };
+}
+
+function opposite(direction: BendDirection): BendDirection {
+  return direction === 'towards' ? 'away' : 'towards';
 }
 
 function otherFace(card: { readonly reading: CardReading; readonly thicknessMm: number }): CardReading {
