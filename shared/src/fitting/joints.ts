@@ -106,7 +106,8 @@ function anglesDeg(a: Point, b: Point): number {
   return (Math.atan2(cross, dot) * 180) / Math.PI;
 }
 
-function joint(a: FittedPrimitive, b: FittedPrimitive, near: Point, isHeld: boolean | undefined): Joint {
+/** Where two neighbours meet near a point, and whether smoothly. `isHeld` repeats an earlier verdict on that. */
+export function joinTwo(a: FittedPrimitive, b: FittedPrimitive, near: Point, isHeld?: boolean): Joint {
   const touching = touchPoint(a, b, near);
   const canTouch = a.kind === 'arc' || b.kind === 'arc';
   if (isHeld === true) return { at: touching, isTangent: true };
@@ -135,6 +136,6 @@ export function joinPrimitives(
     const next = primitives[nextIndex] ?? primitive;
     const last = chains[index]?.at(-1) ?? { x: 0, y: 0 };
     const start = chains[nextIndex]?.[0] ?? last;
-    return joint(primitive, next, { x: (last.x + start.x) / 2, y: (last.y + start.y) / 2 }, held?.[index]);
+    return joinTwo(primitive, next, { x: (last.x + start.x) / 2, y: (last.y + start.y) / 2 }, held?.[index]);
   });
 }

@@ -1,5 +1,5 @@
 import type { Point } from '../geometry/point';
-import { joinPrimitives, type Joint } from './joints';
+import { joinPrimitives, joinTwo, type Joint } from './joints';
 import { minimise } from './least-squares';
 import { type FittedPrimitive, PrefixMoments } from './moments';
 import { DEFAULT_SPLIT, type SplitOptions, splitContour, type Stretch } from './split-contour';
@@ -16,6 +16,12 @@ export interface LoopFit {
 
 /** Points this near to a sharp corner are bent by the blur and left out of the fit, mm. */
 const CORNER_TRIM_MM = 0.6;
+/**
+ * Pieces this short beside a corner are taken for its blur when the neighbours meet this near to them, mm. The price:
+ * fillets under about 1.8 mm come out as sharp corners.
+ */
+const SLIVER_MM = 2.2;
+const SLIVER_MEETS_WITHIN_MM = 0.75;
 const HUBER_MM = 0.12;
 /** Pull of a tangent joint against one point's distance: enough to hold it within a thousandth of a millimetre. */
 const TANGENT_WEIGHT = 200;
@@ -132,23 +138,55 @@ function rmsMm(primitive: FittedPrimitive, points: readonly Point[]): number {
   return Math.sqrt(sum / Math.max(points.length, 1));
 }
 
+function fitAlone(points: readonly Point[], kind: 'line' | 'arc'): FittedPrimitive {
+  const moments = new PrefixMoments(points);
+  const circle = kind === 'arc' ? moments.circle(0, points.length) : null;
+  return circle?.primitive ?? moments.line(0, points.length).primitive;
+}
+
+/** The stretches without those that only follow the blur of a corner: their points go to both neighbours. */
+function withoutSlivers(stretches: readonly Stretch[], points: readonly Point[]): readonly Stretch[] {
+  const kept = [...stretches];
+  for (let index = 0; index < kept.length && kept.length > 3; index++) {
+    const sliver = kept[index];
+    const before = kept[(index + kept.length - 1) % kept.length];
+    const after = kept[(index + 1) % kept.length];
+    if (!sliver || !before || !after) continue;
+    const own = stretchPoints(points, sliver);
+    const first = own[0];
+    const last = own.at(-1);
+    const middle = own[own.length >> 1];
+    if (!first || !last || !middle || Math.hypot(first.x - last.x, first.y - last.y) > SLIVER_MM) continue;
+    const a = fitAlone(trimmed(stretchPoints(points, before)), before.kind);
+    const b = fitAlone(trimmed(stretchPoints(points, after)), after.kind);
+    const meeting = joinTwo(a, b, middle);
+    if (Math.hypot(meeting.at.x - middle.x, meeting.at.y - middle.y) > SLIVER_MEETS_WITHIN_MM) continue;
+    const half = sliver.count >> 1;
+    kept[(index + kept.length - 1) % kept.length] = { ...before, count: before.count + half };
+    kept[(index + 1) % kept.length] = {
+      ...after,
+      first: (sliver.first + half) % points.length,
+      count: after.count + sliver.count - half,
+    };
+    kept.splice(index, 1);
+    index--;
+  }
+  return kept;
+}
+
 /**
  * Lines and arcs through a closed chain of points: split, refitted together, neighbours that nearly touch made tangent,
  * corners set where neighbours cross. The loop runs the way the points run and is closed exactly.
  * `null` when the chain is too short or its pieces do not close.
  */
 export function fitLoop(points: readonly Point[], options: SplitOptions = DEFAULT_SPLIT): LoopFit | null {
-  const stretches = splitContour(points, options);
+  const stretches = withoutSlivers(splitContour(points, options), points);
   if (stretches.length < 2) return null;
   const groups = stretches.map((stretch): Group => {
     const all = stretchPoints(points, stretch);
     return { stretch, all, used: trimmed(all) };
   });
-  const first = groups.map((group): FittedPrimitive => {
-    const moments = new PrefixMoments(group.used);
-    const circle = group.stretch.kind === 'arc' ? moments.circle(0, group.used.length) : null;
-    return circle?.primitive ?? moments.line(0, group.used.length).primitive;
-  });
+  const first = groups.map((group) => fitAlone(group.used, group.stretch.kind));
   const free = refine(groups, first, first.map(() => false));
   const joints = joinPrimitives(free, groups.map((group) => group.all));
   const tangent = joints.map((joint) => joint.isTangent);
