@@ -144,7 +144,8 @@ async function start() {
 
   say(`\nFoldwright runs at ${env.FOLDWRIGHT_PUBLIC_URL}`);
   saySignIns();
-  say(`\nCtrl-C ends it. Logs: ${path.relative(process.cwd(), where.logs) || where.logs}`);
+  const near = path.relative(process.cwd(), where.logs);
+  say(`\nCtrl-C ends it. Logs: ${near.startsWith('..') ? where.logs : near}`);
 }
 
 /** Undo everything once, and leave. */
