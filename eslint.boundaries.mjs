@@ -105,7 +105,8 @@ const NO_MODELS = {
 };
 /** Of what has to do with requests, services know only the values: who asks, what went wrong, which file is the answer. */
 const NO_WEB = {
-  regex: '^(?:\\.\\./)+(?:routes/|http/(?!(?:problem|visitor|file-answer|uploaded-file)$))|^(?:express|passport)(?:$|/|-)',
+  regex:
+    '^(?:\\.\\./)+(?:routes/|http/(?!(?:problem|visitor|file-answer|uploaded-file)$))|^(?:express|passport)(?:$|/|-)',
   message: 'A service knows nothing of requests, so that jobs and tests can call it too.',
 };
 
