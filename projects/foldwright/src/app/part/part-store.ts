@@ -177,8 +177,16 @@ export class PartStore {
     const partId = this.partId();
     if (partId === undefined) return;
     await this.partsApi.startDraft(partId);
+    await this.reopen();
+  }
+
+  /** Reads the part anew after its draft was released or another was started; the history begins again. */
+  async reopen(): Promise<void> {
+    const partId = this.partId();
+    if (partId === undefined) return;
     this.link.close();
     this.historyState.set(EMPTY_HISTORY);
+    this.newsLine.set(null);
     await this.load(partId);
   }
 
