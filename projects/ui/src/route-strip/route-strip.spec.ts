@@ -69,6 +69,8 @@ describe('RouteStrip', () => {
     TestBed.resetTestingModule();
     const plain = await draw({ canChoose: false });
     expect(plain.host.querySelectorAll('a, button')).toHaveLength(0);
+    expect(plain.host.querySelector('ol')?.tabIndex).toBe(0);
+    expect(linked.host.querySelector('ol')?.hasAttribute('tabindex')).toBe(false);
   });
 
   it('strikes a mark once, when it becomes done', async () => {

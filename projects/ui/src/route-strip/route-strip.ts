@@ -3,6 +3,7 @@ import {
   Component,
   ElementRef,
   afterRenderEffect,
+  computed,
   inject,
   input,
   linkedSignal,
@@ -64,6 +65,9 @@ export class RouteStrip {
     },
   });
 
+  /** Without steps to go to, the strip itself takes the focus, so that a keyboard can scroll it. */
+  protected readonly isPlain = computed(() => !this.canChoose() && !this.steps().some((step) => step.link));
+
   constructor() {
     afterRenderEffect(() => {
       const index = this.steps().findIndex((step) => step.mark === 'ring');
@@ -86,9 +90,10 @@ export class RouteStrip {
 
   private bringIntoView(index: number): void {
     const bar = this.host.querySelector('ol');
-    const step = bar?.children.item(index);
+    // The step before stays in view with it: where one comes from says where one is.
+    const step = bar?.children.item(Math.max(0, index - 1));
     if (!(bar instanceof HTMLElement) || !(step instanceof HTMLElement)) return;
     // Only the strip scrolls, never the page around it.
-    if (bar.scrollWidth > bar.clientWidth) bar.scrollLeft = step.offsetLeft - 24;
+    if (bar.scrollWidth > bar.clientWidth) bar.scrollLeft = step.offsetLeft;
   }
 }
