@@ -207,6 +207,15 @@ describe('orders', () => {
       await eventually('paid', async () => (await readOrder(owner, order.id)).paymentState === 'paid');
     });
 
+    it('opens a new page when the payment host has forgotten the old one', async () => {
+      const order = await orderFor(owner, (await quoteFor(owner, revisionId)).id, 1);
+      const url = await checkoutFor(owner, order.id);
+      await rowsOf("UPDATE orders SET checkout_id = 'cs_forgotten' WHERE id = $1", [order.id]);
+      const next = await checkoutFor(owner, order.id);
+      expect(next).not.toBe(url);
+      expect(await checkoutFor(owner, order.id)).toBe(next);
+    });
+
     it('keeps the order when the payment host is down, and opens the page when it is back', async () => {
       await shop.stopPayments();
       const order = await orderFor(owner, (await quoteFor(owner, revisionId)).id, 1);

@@ -57,7 +57,10 @@ export class PaymentHostRefused extends Error {
 export interface PaymentHost {
   /** @throws PaymentHostUnreachable, PaymentHostRefused */
   openCheckout(request: CheckoutRequest): Promise<CheckoutSession>;
-  /** @throws PaymentHostUnreachable, PaymentHostRefused */
+  /**
+   * A page that the host doesn't know any more counts as expired.
+   * @throws PaymentHostUnreachable, PaymentHostRefused
+   */
   readCheckout(sessionId: string): Promise<CheckoutSession>;
   /**
    * Close an open page, so that nobody can pay there any more; one that is closed already stays as it is.

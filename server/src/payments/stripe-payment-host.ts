@@ -62,7 +62,15 @@ export class StripePaymentHost implements PaymentHost {
   }
 
   async readCheckout(sessionId: string): Promise<CheckoutSession> {
-    return sessionOf(await this.ask(() => this.stripe.checkout.sessions.retrieve(sessionId)));
+    try {
+      return sessionOf(await this.ask(() => this.stripe.checkout.sessions.retrieve(sessionId)));
+    } catch (error) {
+      // A host that has forgotten the page can't take money on it: the next one may be opened.
+      if (error instanceof PaymentHostRefused && error.code === 'resource_missing') {
+        return { id: sessionId, state: 'expired', url: null };
+      }
+      throw error;
+    }
   }
 
   async closeCheckout(sessionId: string): Promise<CheckoutSession> {

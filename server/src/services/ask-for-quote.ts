@@ -44,17 +44,14 @@ export async function askForQuote(
 
   const question = await writeQuestion(files, kept);
   const outcome = await ask(cutting, question);
-  return database
-    .inWorkshop(actor.workshopId, async ({ rows }) => {
-      const row = await rows.quotes.get(quote.id, { lock: true });
-      // Asked twice at once: the first answer counts.
-      const isOpen = row.state === 'asked' || row.state === 'unreachable';
-      return presentQuote(isOpen ? await rows.quotes.change(row, outcome.changes) : row, now());
-    })
-    .then((presented) => {
-      if (outcome.problem !== null) throw outcome.problem;
-      return presented;
-    });
+  const presented = await database.inWorkshop(actor.workshopId, async ({ rows }) => {
+    const row = await rows.quotes.get(quote.id, { lock: true });
+    // Asked twice at once: the first answer counts.
+    const isOpen = row.state === 'asked' || row.state === 'unreachable';
+    return presentQuote(isOpen ? await rows.quotes.change(row, outcome.changes) : row, now());
+  });
+  if (outcome.problem !== null) throw outcome.problem;
+  return presented;
 }
 
 interface Kept {

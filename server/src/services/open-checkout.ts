@@ -57,31 +57,23 @@ async function beginNextRound(
 }
 
 async function keepSession(tools: Tools, { id, workshopId }: Order, session: CheckoutSession): Promise<string> {
-  return tools.database
-    .inWorkshop(workshopId, async (scope) => {
-      const order = await scope.rows.orders.get(id, { lock: true });
-      if (order.checkoutId === null) await scope.rows.orders.change(order, { checkoutId: session.id });
-      if (order.state === 'cancelled') {
-        await tools.queue.enqueue(scope.transaction, 'payment', { task: 'close-checkout', workshopId, orderId: id });
-        return null;
-      }
-      const opened = {
-        key: `checkout-opened:${session.id}`,
-        kind: 'checkout-opened',
-        at: tools.now(),
-        source: session.id,
-        details: {},
-      } as const;
-      await tellOrder(scope, order, [opened], tools);
-      return session.url;
-    })
-    .then((url) => {
-      if (url !== null) return url;
-      throw new Problem('wrong-state', {
-        detail: 'The order was cancelled while its payment page was being opened, or the page is closed already.',
-        kept: 'Nothing was charged.',
-      });
-    });
+  const isWanted = await tools.database.inWorkshop(workshopId, async (scope) => {
+    const order = await scope.rows.orders.get(id, { lock: true });
+    if (order.checkoutId === null) await scope.rows.orders.change(order, { checkoutId: session.id });
+    if (order.state === 'cancelled') {
+      await tools.queue.enqueue(scope.transaction, 'payment', { task: 'close-checkout', workshopId, orderId: id });
+      return false;
+    }
+    const at = tools.now();
+    const opened = { kind: 'checkout-opened', key: `checkout-opened:${session.id}`, at, source: session.id } as const;
+    await tellOrder(scope, order, [{ ...opened, details: {} }], tools);
+    return true;
+  });
+  if (isWanted && session.url !== null) return session.url;
+  throw new Problem('wrong-state', {
+    detail: 'The order was cancelled while its payment page was being opened, or the page is closed already.',
+    kept: 'Nothing was charged.',
+  });
 }
 
 function payable(order: Order): Order {
