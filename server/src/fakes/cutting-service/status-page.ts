@@ -25,5 +25,5 @@ export const SHOP_STYLE = `
 main { max-width: 60rem; margin: 2rem auto; padding: 0 1rem; }
 table { border-collapse: collapse; width: 100%; }
 th, td { text-align: left; padding: .4rem .6rem .4rem 0; border-bottom: 1px solid; }
-.number { text-align: right; }
+.number { text-align: right; padding-left: 1rem; white-space: nowrap; }
 `;

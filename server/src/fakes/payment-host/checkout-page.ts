@@ -59,7 +59,7 @@ h1 { font-size: 1.5rem; }
 table { width: 100%; border-collapse: collapse; }
 caption { text-align: left; }
 th, td { text-align: left; padding: .35rem 0; border-bottom: 1px solid light-dark(#8a8a86, #6f6f73); }
-.number { text-align: right; }
+.number { text-align: right; padding-left: 1rem; white-space: nowrap; }
 label { display: block; font-weight: 600; }
 input { font: inherit; width: 100%; box-sizing: border-box; padding: .6rem; }
 button { font: inherit; font-weight: 600; padding: .8rem 1.2rem; width: 100%; border: 0; background: light-dark(#43346f, #c7b8f2); color: light-dark(#ffffff, #1b1c1e); }
