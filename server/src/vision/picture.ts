@@ -26,12 +26,12 @@ export function isInside(picture: Picture, x: number, y: number): boolean {
   return x >= 0 && y >= 0 && x < picture.widthPx - 1 && y < picture.heightPx - 1;
 }
 
-/** Linear red, green and blue at a fractional pixel, bilinear, into `out` at `at`; the caller keeps it inside. */
+/** Linear red, green and blue at a fractional pixel, bilinear, into `out` at `at`; beyond the rim, the rim's. */
 export function sampleLinear(picture: Picture, x: number, y: number, out: Float32Array, at: number): void {
   const column = Math.min(Math.max(Math.floor(x), 0), picture.widthPx - 2);
   const row = Math.min(Math.max(Math.floor(y), 0), picture.heightPx - 2);
-  const fx = x - column;
-  const fy = y - row;
+  const fx = Math.min(Math.max(x - column, 0), 1);
+  const fy = Math.min(Math.max(y - row, 0), 1);
   const first = (row * picture.widthPx + column) * 3;
   const below = first + picture.widthPx * 3;
   const rgb = picture.rgb;
