@@ -135,7 +135,7 @@ export class TurntableScene {
     const radius = Math.max(1, this.discRadiusMm) * 1.06;
     const rise = RISE_DEG * DEG;
     // The disc is an ellipse on the screen; the part stands up from it.
-    const halfHeight = radius * (Math.sin(rise) + 0.42);
+    const halfHeight = radius * (Math.sin(rise) + 0.24);
     const half = Math.max(radius / aspect, halfHeight);
     this.camera.left = -half * aspect;
     this.camera.right = half * aspect;
@@ -144,7 +144,7 @@ export class TurntableScene {
     this.camera.near = -20 * radius;
     this.camera.far = 20 * radius;
     this.camera.up.set(0, 0, 1);
-    const lift = radius * 0.22 + this.disc.position.z;
+    const lift = radius * 0.16 + this.disc.position.z;
     this.camera.position.set(0, -Math.cos(rise) * radius, Math.sin(rise) * radius + lift);
     this.camera.lookAt(0, 0, lift);
     this.camera.updateProjectionMatrix();
@@ -185,11 +185,8 @@ function discOf(radius: number, colours: TurntableColours): Group {
     new MeshBasicMaterial({ color: colours.rim }),
   );
   rim.rotation.x = 90 * DEG;
-  rim.position.z = -thickness / 2 - 0.05;
-  const top = new ThreeMesh(
-    new CircleGeometry(radius, 96),
-    new MeshBasicMaterial({ color: colours.disc, polygonOffset: true, polygonOffsetFactor: 2, polygonOffsetUnits: 4 }),
-  );
+  rim.position.z = -thickness / 2 - radius * 0.004;
+  const top = new ThreeMesh(new CircleGeometry(radius, 96), new MeshBasicMaterial({ color: colours.disc }));
   top.position.z = -0.02;
   const ticks: number[] = [];
   for (let angle = 0; angle < 360; angle += TICK_STEP_DEG) {

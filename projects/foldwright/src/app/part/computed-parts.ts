@@ -87,8 +87,8 @@ export class ComputedParts {
         this.store.isSettled() &&
         this.editor.drawn() === this.store.document();
       if (here === null || !isCurrent) return here;
-      const { development, findings, stockLabel } = served.computed;
-      return { ...here, stockLabel, figures: development, findings, origin: 'server' };
+      const { development, findings } = served.computed;
+      return { ...here, figures: development, findings, origin: 'server' };
     });
   }
 

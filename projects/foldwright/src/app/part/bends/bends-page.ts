@@ -9,8 +9,9 @@ import { ComputedParts } from '../computed-parts';
 import { BoardEditor, newEntityId } from '../drawing-board/board-editor';
 import { BoardFrame } from '../drawing-board/board-frame';
 import { DrawingBoard } from '../drawing-board/canvas/drawing-board';
-import { chainDimensions, drawingNotes, flatChain, layoutChain } from '../drawing-board/drawing/dimensions';
+import { chainDimensions, flatChain, layoutChain } from '../drawing-board/drawing/dimensions';
 import { fieldPlace, overlayOf } from '../drawing-board/drawing/selection-overlay';
+import { drawingNotes } from '../drawing-board/drawing/notes';
 import { drawingOfFlat, drawingOfLayout } from '../drawing-board/drawing/sheet-drawing';
 import { describeEntity, listEntities } from '../drawing-board/entity-words';
 import { LengthField } from '../drawing-board/fields/length-field';
@@ -76,7 +77,7 @@ export class BendsPage {
   private readonly field = viewChild(LengthField);
 
   protected readonly firstFlangeMm = FIRST_FLANGE_MM;
-  protected readonly insets = { top: 56, right: 380, bottom: 74, left: 150 };
+  protected readonly insets = { top: 56, right: 380, bottom: 74, left: 190 };
   protected readonly roles = ['trial', 'production'] as const satisfies readonly StockRole[];
   protected readonly sideLists = SIDE_LISTS;
   protected readonly side = signal<string | null>(null);

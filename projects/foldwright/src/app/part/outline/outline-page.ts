@@ -10,8 +10,9 @@ import { ComputedParts } from '../computed-parts';
 import { BoardEditor, newEntityId } from '../drawing-board/board-editor';
 import { BoardFrame } from '../drawing-board/board-frame';
 import { DrawingBoard } from '../drawing-board/canvas/drawing-board';
-import { chainDimensions, drawingNotes, layoutChain, placeDimensions } from '../drawing-board/drawing/dimensions';
+import { chainDimensions, layoutChain, placeDimensions } from '../drawing-board/drawing/dimensions';
 import { fieldPlace, overlayOf } from '../drawing-board/drawing/selection-overlay';
+import { drawingNotes } from '../drawing-board/drawing/notes';
 import { drawingOfLayout } from '../drawing-board/drawing/sheet-drawing';
 import { describeEntity, listEntities } from '../drawing-board/entity-words';
 import { HoleSizeField } from '../drawing-board/fields/hole-size-field';
@@ -64,6 +65,7 @@ export class OutlinePage {
   private readonly board = viewChild(DrawingBoard);
   private readonly field = viewChild(LengthField);
 
+  protected readonly insets = { top: 62, right: 110, bottom: 84, left: 210 };
   protected readonly sideLists = SIDE_LISTS;
   protected readonly side = signal<string | null>(null);
   protected readonly announcement = signal('');

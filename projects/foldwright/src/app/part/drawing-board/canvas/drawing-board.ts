@@ -15,7 +15,8 @@ import {
   viewChild,
 } from '@angular/core';
 import { ScaleBar } from '@foldwright/ui/scale-bar/scale-bar';
-import type { DrawnDimension, DrawnNote } from '../drawing/dimensions';
+import type { DrawnDimension } from '../drawing/dimensions';
+import type { DrawnNote } from '../drawing/notes';
 import type { SheetDrawing } from '../drawing/sheet-drawing';
 import type { EditorEvent, Modifiers, PointerKind } from '../tools/tool';
 import { type Insets, type Viewport, fitBounds, panBy, roundStepMm, zoomAt } from '../viewport';

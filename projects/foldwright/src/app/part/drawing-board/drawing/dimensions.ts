@@ -2,7 +2,6 @@ import type { FlatPattern } from '@foldwright/shared/bending/development';
 import type { Layout } from '@foldwright/shared/bending/layout';
 import type { Bounds, Point } from '@foldwright/shared/geometry/point';
 import { pointAt } from '@foldwright/shared/geometry/segment';
-import { findHoleDiameterMm } from '@foldwright/shared/stock/hole-diameter';
 import { formatDecimal } from '@foldwright/shared/units/length';
 import type { EntityRef } from '../geometry/entity';
 import { edgesOfLoop, featureCentre, findFeature, layoutBounds } from '../geometry/layout-edges';
@@ -102,27 +101,6 @@ export function placeDimensions(
     found.push({ ...plumb('from-bottom', edge.yPx, at.yPx, at.xPx, [], toBottom), isOnMetal: true });
   }
   return found;
-}
-
-/** A few words on the metal or beside it. */
-export interface DrawnNote {
-  readonly key: string;
-  readonly lines: readonly string[];
-  readonly xPx: number;
-  readonly yPx: number;
-  readonly turnDeg: number;
-  readonly anchor: 'start' | 'middle';
-  /** From the thing to the words, or nothing. */
-  readonly leader: string;
-}
-
-/** Words at the first hole of each kind ("4 × M5, Ø 5.5"), at slots of each size, and along each bend. */
-export function drawingNotes(
-  layout: Layout,
-  viewport: Viewport,
-  bendNames: ReadonlyMap<string, string>,
-): readonly DrawnNote[] {
-  return [...openingNotes(layout, viewport), ...bendNotes(layout, viewport, bendNames)];
 }
 
 interface Station {
@@ -227,89 +205,4 @@ function reach(layout: Layout, from: Point, direction: Point): number | null {
     if (away > 0 && (best === null || away < best)) best = away;
   }
   return best;
-}
-
-function openingNotes(layout: Layout, viewport: Viewport): readonly DrawnNote[] {
-  const groups = new Map<
-    string,
-    { readonly lines: readonly string[]; count: number; readonly at: Point; readonly radiusMm: number }
-  >();
-  for (const feature of layout.features) {
-    const { words, sizeMm } = featureWords(feature);
-    const key = words.join(' ');
-    const group = groups.get(key);
-    if (group === undefined)
-      groups.set(key, { lines: words, count: 1, at: featureCentre(feature), radiusMm: sizeMm / 2 });
-    else group.count += 1;
-  }
-  return [...groups.entries()].map(([key, group]) => {
-    const at = toScreen(viewport, group.at);
-    const radiusPx = group.radiusMm * viewport.pxPerMm;
-    const first = group.lines[0] ?? '';
-    const lines = [group.count > 1 ? `${group.count} × ${first}` : first, ...group.lines.slice(1)];
-    if (radiusPx > 44) return { key, lines, xPx: at.xPx, yPx: at.yPx, turnDeg: 0, anchor: 'middle', leader: '' };
-    const reachPx = radiusPx * 0.71;
-    const [x, y] = [at.xPx + reachPx + 13, at.yPx + reachPx + 14];
-    return {
-      key,
-      lines,
-      xPx: x + 3,
-      yPx: y + 5,
-      turnDeg: 0,
-      anchor: 'start',
-      leader: `M${at.xPx + reachPx} ${at.yPx + reachPx}L${x} ${y}`,
-    };
-  });
-}
-
-function featureWords(feature: Layout['features'][number]): {
-  readonly words: readonly string[];
-  readonly sizeMm: number;
-} {
-  if (feature.kind === 'slot') {
-    const lengthMm = Math.hypot(feature.to.x - feature.from.x, feature.to.y - feature.from.y) + feature.widthMm;
-    return {
-      words: [`slot ${formatDecimal(feature.widthMm, 1)} × ${formatDecimal(lengthMm, 1)}`],
-      sizeMm: feature.widthMm,
-    };
-  }
-  const diameterMm = findHoleDiameterMm(feature.purpose) ?? 0;
-  const size = `Ø ${formatDecimal(diameterMm, 2)}`;
-  const { purpose } = feature;
-  switch (purpose.kind) {
-    case 'clearance':
-      return { words: [purpose.thread, size], sizeMm: diameterMm };
-    case 'tapped':
-      return { words: [`${purpose.thread} tapped`, size], sizeMm: diameterMm };
-    case 'rivet-nut':
-      return { words: [`${purpose.thread} rivet nut`, size], sizeMm: diameterMm };
-    case 'countersunk':
-      return { words: [`${purpose.thread} countersunk`, size], sizeMm: diameterMm };
-    case 'pass-through':
-      return { words: [size, 'pass-through'], sizeMm: diameterMm };
-    case 'lightening':
-    case 'plain':
-      return { words: [size], sizeMm: diameterMm };
-  }
-}
-
-function bendNotes(layout: Layout, viewport: Viewport, names: ReadonlyMap<string, string>): readonly DrawnNote[] {
-  return layout.bends.map((bend) => {
-    const from = toScreen(viewport, bend.line.from);
-    const to = toScreen(viewport, bend.line.to);
-    const raw = (Math.atan2(to.yPx - from.yPx, to.xPx - from.xPx) * 180) / Math.PI;
-    // Words read from the left or from below, never upside down.
-    const turnDeg = raw > 90 - 1e-6 ? raw - 180 : raw <= -90 - 1e-6 ? raw + 180 : raw;
-    const turnRad = (turnDeg * Math.PI) / 180;
-    const asidePx = -9;
-    return {
-      key: bend.id,
-      lines: [`${names.get(bend.id) ?? ''} ${bend.direction} ${formatDecimal(bend.bendAngleDeg, 1)}°`],
-      xPx: (from.xPx + to.xPx) / 2 - Math.sin(turnRad) * asidePx,
-      yPx: (from.yPx + to.yPx) / 2 + Math.cos(turnRad) * asidePx,
-      turnDeg,
-      anchor: 'middle',
-      leader: '',
-    };
-  });
 }
