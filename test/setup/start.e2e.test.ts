@@ -96,7 +96,8 @@ describe('npm start', () => {
     const second = watch(process.execPath, [START]);
     const again = await untilRunning(second);
     expect(performance.now() - began).toBeLessThan(SECOND_START_MS);
-    expect(again.ports).toEqual(running.ports);
+    // The web process goes back to its usual port as soon as that is free; the services stay where they were.
+    expect({ ...again.ports, web: 0 }).toEqual({ ...running.ports, web: 0 });
     second.child.kill('SIGTERM');
     expect(await second.ended).toBe(0);
     expect(await nothingIsLeft(again)).toBe(true);

@@ -23,7 +23,7 @@ export async function choosePorts(given, where) {
   if (wish !== undefined && !(await isPortFree(Number(wish)))) {
     throw new SettingsError([`FOLDWRIGHT_PORT is ${wish}, but something else listens on that port.`]);
   }
-  const ports = { web: wish === undefined ? await portNear(DEFAULT_PORT) : Number(wish) };
+  const ports = { web: wish === undefined ? await portNear(DEFAULT_PORT, last.web) : Number(wish) };
   const taken = new Set([ports.web]);
   for (const name of ['database', 'payments', 'cutting', 'mail', 'mailList']) {
     let port = await portNear(taken.has(last[name]) ? undefined : last[name]);

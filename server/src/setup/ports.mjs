@@ -21,9 +21,10 @@ export function freePort() {
   });
 }
 
-/** The port wished for when it is free, else any free one. */
-export async function portNear(wish) {
-  return wish !== undefined && (await isPortFree(wish)) ? wish : freePort();
+/** The first of the ports wished for that is free, else any free one. */
+export async function portNear(...wishes) {
+  for (const wish of wishes) if (wish !== undefined && (await isPortFree(wish))) return wish;
+  return freePort();
 }
 
 /** Whether something accepts connections on this port of the loopback address. */
