@@ -33,7 +33,11 @@ export const routes: Routes = [
           { path: ':partId', loadChildren: () => import('./part/routes').then((m) => m.PART_ROUTES) },
         ],
       },
-      { path: 'orders', canActivate: [member], loadChildren: () => import('./orders/routes').then((m) => m.ORDER_ROUTES) },
+      {
+        path: 'orders',
+        canActivate: [member],
+        loadChildren: () => import('./orders/routes').then((m) => m.ORDER_ROUTES),
+      },
       {
         path: 'materials',
         title: 'Materials & tooling',
@@ -53,8 +57,16 @@ export const routes: Routes = [
         loadComponent: () => import('./operator/installation-page').then((m) => m.InstallationPage),
       },
       { path: 'welcome', title: 'Welcome', loadComponent: () => import('./account/welcome').then((m) => m.Welcome) },
-      { path: 'account', title: 'Your account', loadComponent: () => import('./account/account').then((m) => m.Account) },
-      { path: 'not-yours', title: 'Not yours', loadComponent: () => import('./shell/not-yours').then((m) => m.NotYours) },
+      {
+        path: 'account',
+        title: 'Your account',
+        loadComponent: () => import('./account/account').then((m) => m.Account),
+      },
+      {
+        path: 'not-yours',
+        title: 'Not yours',
+        loadComponent: () => import('./shell/not-yours').then((m) => m.NotYours),
+      },
       { path: '**', title: 'Nothing here', loadComponent: () => import('./shell/not-found').then((m) => m.NotFound) },
     ],
   },

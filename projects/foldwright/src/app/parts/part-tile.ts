@@ -16,7 +16,8 @@ import { factsOf, partLink } from './part-facts';
 })
 export class PartTile {
   readonly part = input.required<PartSummary>();
-  readonly pxPerMm = input.required<number>();
+  /** The list's scale; null while it isn't known yet, then the bench stays empty. */
+  readonly pxPerMm = input.required<number | null>();
   readonly now = input.required<Date>();
 
   protected readonly facts = computed(() => factsOf(this.part(), this.now()));

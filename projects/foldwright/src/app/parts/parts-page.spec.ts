@@ -104,6 +104,10 @@ describe('PartsPage', () => {
     );
     expect(filters).toEqual(['All2', 'Mock-up1', 'In draft1', 'Released1']);
     expect(host.querySelectorAll('fw-part-tile')).toHaveLength(2);
+    await new Promise((resolve) => setTimeout(resolve, 20));
+    await fixture.whenStable();
+    expect(host.querySelectorAll('fw-formed-preview')).toHaveLength(2);
+    expect(host.querySelector('fw-scale-bar')).not.toBeNull();
     host.querySelectorAll<HTMLButtonElement>('.sift button')[1]?.click();
     await fixture.whenStable();
     expect(host.querySelector('.called')?.textContent).toBe('Umbrella foot');

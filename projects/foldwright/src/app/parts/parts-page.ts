@@ -1,10 +1,10 @@
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
-import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { takeUntilDestroyed, toObservable, toSignal } from '@angular/core/rxjs-interop';
 import { MatButtonModule } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
 import { ScaleBar } from '@foldwright/ui/scale-bar/scale-bar';
-import { auditTime, filter, merge } from 'rxjs';
+import { auditTime, delay, filter, map, merge } from 'rxjs';
 import { LiveEvents } from '../api/live-events';
 import { PartsApi } from '../api/parts-api';
 import { SessionApi } from '../api/session-api';
@@ -46,8 +46,13 @@ export class PartsPage {
   protected readonly shown = computed(() =>
     this.parts().filter((part) => fallsUnder(part, this.filter()) && matchesSearch(part, this.typed())),
   );
-  /** One scale for the workshop, not for what is sifted out: sizes stay comparable while sifting. */
-  protected readonly pxPerMm = computed(() => commonScale(this.parts()));
+  /**
+   * One scale for the workshop, not for what is sifted out: sizes stay comparable while sifting. It takes drawing every
+   * part, so the words come first: null until then.
+   */
+  protected readonly pxPerMm = toSignal(toObservable(this.parts).pipe(delay(0), map(commonScale)), {
+    initialValue: null,
+  });
 
   constructor() {
     const changes = this.live.events.pipe(filter(({ kind }) => kind === 'part-changed' || kind === 'draft-changed'));
