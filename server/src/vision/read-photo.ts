@@ -10,7 +10,7 @@ import type { PhotoReading } from './photo-reading';
 import { type Picture, shrinkToGrey } from './picture';
 import type { ReadingOptions } from './reading-options';
 import { type PageRaster, rectify, rectifyForDisplay } from './rectify';
-import { refineBoundary } from './refine-boundary';
+import { type BoundaryPoint, refineBoundary } from './refine-boundary';
 import { plainView } from './plain-view';
 import { squareUp } from './square-up';
 import { TraceRefusal } from './trace-refusal';
@@ -31,6 +31,8 @@ const MAX_TILT_DEG = 50;
 /** Edges of markers that miss the flat sheet by more than this mean that it is not flat, mm. */
 const MAX_SHEET_MISS_MM = 0.3;
 const DARK_GREY = 22;
+const STAIN_SHARE = 0.12;
+const LEAST_OPENING_POINTS = 20;
 
 /** A photo with its scale settled: how it is seen, and the page under it. */
 export interface Scene {
@@ -133,13 +135,14 @@ export async function readPhoto(
   const contours = traceContours(template.mask, raster);
   leave('template');
   await enter('outline');
-  const boundaries = contours.map((contour, index) =>
+  const followed = contours.map((contour, index) =>
     refineBoundary(picture, scene.view, contour, {
       thicknessMm: scene.view.eye ? options.thicknessMm : 0,
       blurPx: scene.blurPx,
       isOpening: index > 0,
     }),
   );
+  const boundaries = withoutStains(followed);
   leave('outline');
   await enter('holes');
   const sizeMm = Math.hypot(...spanMm(boundaries[0] ?? []));
@@ -185,6 +188,20 @@ export async function readPhoto(
       }),
     ),
   };
+}
+
+/** The boundaries without openings that are only marks on the face: their edge is far fainter than the outline's. */
+function withoutStains(boundaries: readonly (readonly BoundaryPoint[])[]): readonly (readonly BoundaryPoint[])[] {
+  const [outer = []] = boundaries;
+  return boundaries.filter(
+    (points, index) =>
+      index === 0 || (points.length >= LEAST_OPENING_POINTS && medianStep(points) > STAIN_SHARE * medianStep(outer)),
+  );
+}
+
+function medianStep(points: readonly BoundaryPoint[]): number {
+  const steps = points.map(({ step }) => step).sort((a, b) => a - b);
+  return steps[steps.length >> 1] ?? 0;
 }
 
 function spanMm(points: readonly { readonly x: number; readonly y: number }[]): [number, number] {

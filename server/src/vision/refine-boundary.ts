@@ -13,6 +13,8 @@ export interface BoundaryPoint extends Point {
   readonly heightMm: number;
   /** How far one millimetre of height moves it outwards on the page, mm. */
   readonly slope: number;
+  /** How much lighter or darker the ground is than what lies behind its edge, linear light. */
+  readonly step: number;
 }
 
 export interface BoundaryOptions {
@@ -45,6 +47,7 @@ interface Found {
   readonly seen: Point;
   readonly normal: Point;
   readonly isGood: boolean;
+  readonly step: number;
 }
 
 function median(values: readonly number[]): number {
@@ -101,7 +104,7 @@ function refineOnce(
       edge.offsetMm < 0.97 * (outwards[index] ?? reachMm) &&
       Math.abs(edge.offsetMm - usual) < DRAWN_IN_MM;
     const offset = isGood ? edge.offsetMm : usual;
-    return { seen: { x: origin.x + normal.x * offset, y: origin.y + normal.y * offset }, normal, isGood };
+    return { seen: { x: origin.x + normal.x * offset, y: origin.y + normal.y * offset }, normal, isGood, step: edge?.step ?? 0 };
   });
 }
 
@@ -161,11 +164,11 @@ export function refineBoundary(picture: Picture, view: View, rough: Contour, opt
     false,
   );
   const heights = heightsOf(second, view.eye, options);
-  return second.flatMap(({ seen, normal, isGood }, index) => {
+  return second.flatMap(({ seen, normal, isGood, step }, index) => {
     const heightMm = heights[index];
     if (!isGood || heightMm === null || heightMm === undefined) return [];
     const at = view.eye ? liftPoint(view.eye, seen, heightMm) : seen;
     const slope = heightMm === 0 ? 0 : lean(view.eye, seen, normal, 1).along;
-    return [{ ...at, seen, heightMm, slope }];
+    return [{ ...at, seen, heightMm, slope, step }];
   });
 }
