@@ -1,0 +1,258 @@
+import { randomUUID } from 'node:crypto';
+import { ROUTE_CONTRACTS } from '@foldwright/shared/contracts/registry';
+import type { Role, RouteContract } from '@foldwright/shared/contracts/route';
+import { ROLES } from '@foldwright/shared/contracts/route';
+import type request from 'supertest';
+import { plainJpeg } from '../support/jpeg';
+import { TestBrowser, addPerson, addWorkshop, asOwner } from '../support/people';
+import type { TestApp } from '../support/test-app';
+import { startTestApp } from '../support/test-app';
+
+/** Ids of one row of every kind that an address can name. */
+type Ids = Readonly<Record<'partId' | 'draftId' | 'photoId' | 'jobId' | 'revisionId' | 'orderId' | 'quoteId', string>>;
+
+const PLATE = { shape: 'flat-plate', widthMm: 80, heightMm: 60 } as const;
+const idempotencyKey = (): [string, string] => ['idempotency-key', randomUUID()];
+
+/** Sound input for each route that takes any, so that a refusal is about who asks and never about what. */
+const BODIES: Readonly<Record<string, (ids: Ids, workshopId: string) => object>> = {
+  signIn: () => ({ email: 'nobody@example.test', password: 'x' }),
+  switchWorkshop: (_ids, workshopId) => ({ workshopId }),
+  changeOwnName: () => ({ name: 'Somebody' }),
+  createPart: () => ({ name: 'New', starter: PLATE }),
+  renamePart: () => ({ name: 'Renamed', number: `R-${randomUUID().slice(0, 8)}` }),
+  sendCommands: () => ({
+    baseRevision: 0,
+    batchId: randomUUID(),
+    clientId: 'matrix',
+    commands: [{ kind: 'setBaseAnchor', to: { x: 10, y: 10 } }],
+  }),
+  releaseDraft: () => ({ baseRevision: 0, note: '', acceptedCautionIds: [] }),
+  rereadPhoto: () => ({ templateKind: 'card', templateThicknessMm: 0.5 }),
+  askForQuote: () => ({ stock: 'production', quantities: [1] }),
+  placeOrder: ({ quoteId }) => ({ quoteId, quantity: 1 }),
+};
+const QUERIES: Readonly<Record<string, string>> = {
+  computeDraft: '?stock=trial',
+  printDraft: '?stock=trial&paper=A4',
+  readPhotoImage: '?view=as-taken',
+  readScaleSheet: '?paper=A4&variant=light',
+  readRevisionFile: '?stock=trial',
+};
+
+describe('who may call what', () => {
+  let test: TestApp;
+  let workshop: string;
+  let own: Ids;
+  let missing: Ids;
+  let jpeg: Buffer;
+  /** One browser for each role in the workshop whose rows are asked for, and in another one. */
+  const here = new Map<Role, TestBrowser>();
+  const elsewhere = new Map<Role, TestBrowser>();
+
+  beforeAll(async () => {
+    test = await startTestApp();
+    jpeg = await plainJpeg();
+    workshop = await addWorkshop(test.ownerUrl, 'Larkfield Cartworks');
+    const other = await addWorkshop(test.ownerUrl, 'Orchard Street Welding', 'OS');
+    for (const role of ROLES) {
+      for (const [browsers, at] of [
+        [here, workshop],
+        [elsewhere, other],
+      ] as const) {
+        const person =
+          role === 'operator'
+            ? await addPerson(test.ownerUrl, 'Mira Oakes', {}, { isOperator: true })
+            : await addPerson(test.ownerUrl, `${role} person`, { [at]: role });
+        browsers.set(role, await new TestBrowser(test.app).signIn(person));
+      }
+    }
+    own = await fill(browserOf(here, 'owner'));
+    missing = {
+      partId: randomUUID(),
+      draftId: randomUUID(),
+      photoId: randomUUID(),
+      jobId: randomUUID(),
+      revisionId: randomUUID(),
+      orderId: randomUUID(),
+      quoteId: randomUUID(),
+    };
+  });
+  afterAll(() => test.close());
+
+  function browserOf(browsers: ReadonlyMap<Role, TestBrowser>, role: Role): TestBrowser {
+    const browser = browsers.get(role);
+    if (browser === undefined) throw new Error(`Nobody is signed in as ${role}.`);
+    return browser;
+  }
+
+  /** One row of every kind, made through the API as far as it goes without outside services. */
+  async function fill(owner: TestBrowser): Promise<Ids> {
+    const create = async (name: string) =>
+      (
+        await owner
+          .post('/api/parts')
+          .set(...idempotencyKey())
+          .send({ name, starter: PLATE })
+          .expect(201)
+      ).body;
+    const released = await create('Released');
+    const release = { baseRevision: 0, note: '', acceptedCautionIds: [] };
+    const revision = await owner
+      .post(`/api/drafts/${released.draft.id}/release`)
+      .set(...idempotencyKey())
+      .send(release)
+      .expect(201);
+    const part = await create('In draft');
+    const photo = await owner
+      .post(`/api/parts/${part.id}/photos`)
+      .field({ templateKind: 'card', templateThicknessMm: '0.5', rulerXMm: '100', rulerYMm: '100' })
+      .attach('file', jpeg, 'template.jpg')
+      .expect(202);
+    const revisionId = String(revision.body.id);
+    const commerce = await addQuoteAndOrder(released.id, revisionId, String(revision.body.hash));
+    return {
+      partId: part.id,
+      draftId: part.draft.id,
+      photoId: photo.body.id,
+      jobId: photo.body.job.id,
+      revisionId,
+      ...commerce,
+    };
+  }
+
+  /** A quote and an order as the cutting service's answers would have left them. */
+  async function addQuoteAndOrder(partId: string, revisionId: string, hash: string) {
+    const ids = { quoteId: randomUUID(), orderId: randomUUID() };
+    const price = { amountMinor: 1000, currency: 'EUR' };
+    const lines = [{ label: 'Cutting', amount: price }];
+    const breaks = [{ quantity: 1, each: price, total: price, lines, leadTimeDays: 5 }];
+    await asOwner(test.ownerUrl, async (client) => {
+      const { rows } = await client.query('SELECT released_by FROM revisions WHERE id = $1', [revisionId]);
+      const person = String(rows[0].released_by);
+      await client.query(
+        `INSERT INTO quotes (id, workshop_id, revision_id, revision_letter, revision_hash, stock, stock_label, statement,
+           quantities, state, breaks, quote_reference, valid_until, asked_by, asked_at, idempotency_key)
+         VALUES ($1, $2, $3, 'A', $4, 'production', 'sheet', 'cut-and-bend-to-our-flat', '[1]', 'priced', $5, 'Q-1',
+           now() + interval '1 day', $6, now(), 'matrix')`,
+        [ids.quoteId, workshop, revisionId, hash, JSON.stringify(breaks), person],
+      );
+      await client.query(
+        `INSERT INTO orders (id, workshop_id, number, quote_id, quote_reference, part_id, part_name, part_number,
+           revision_id, revision_letter, revision_hash, stock, stock_label, statement, quantity, total_minor, currency,
+           lines, lead_time_days, state, payment_state, revision, placed_by, placed_by_name, placed_by_email, placed_at)
+         VALUES ($1, $2, 1, $3, 'Q-1', $4, 'Released', 'LC-01', $5, 'A', $6, 'production', 'sheet',
+           'cut-and-bend-to-our-flat', 1, 1000, 'EUR', $7, 5, 'placed', 'open', 1, $8, 'Owner', 'owner@example.test', now())`,
+        [ids.orderId, workshop, ids.quoteId, partId, revisionId, hash, JSON.stringify(lines), person],
+      );
+    });
+    return ids;
+  }
+
+  function call(browser: TestBrowser, contract: RouteContract, ids: Ids): request.Test {
+    const address = contract.path.replace(/:(\w+)/g, (_whole, name: string) =>
+      name === 'kind' ? 'dxf' : (Object.entries(ids).find(([key]) => key === name)?.[1] ?? 'unknown'),
+    );
+    const url = `${address}${QUERIES[contract.id] ?? ''}`;
+    const methods = {
+      GET: () => browser.get(url),
+      POST: () => browser.post(url),
+      PUT: () => browser.put(url),
+      PATCH: () => browser.patch(url),
+      DELETE: () => browser.delete(url),
+    };
+    const sent = methods[contract.method]();
+    if (contract.ifMatch) sent.set('if-match', '"1"');
+    if (contract.idempotent) sent.set(...idempotencyKey());
+    if (contract.bodyKind === 'upload') {
+      return sent
+        .field({ templateKind: 'card', templateThicknessMm: '0.5', rulerXMm: '100', rulerYMm: '100' })
+        .attach('file', jpeg, 'template.jpg');
+    }
+    const body = BODIES[contract.id];
+    return body === undefined ? sent : sent.send(body(ids, workshop));
+  }
+
+  /** What is the same for a missing row and a foreign one, whatever it was called. */
+  const bare = (answer: request.Response): unknown => {
+    const { requestId: _id, instance: _instance, ...rest } = answer.body;
+    return { status: answer.status, type: answer.headers['content-type'], rest };
+  };
+
+  // Signing out ends the browser the other routes need; the stream never ends by itself. Both are tested elsewhere.
+  const CONTRACTS = ROUTE_CONTRACTS.filter(({ id }) => id !== 'signOut' && id !== 'streamEvents');
+  const guarded = CONTRACTS.filter(({ access }) => access !== 'public' && access !== 'service');
+  const withRow = guarded.filter(({ path, access }) => path.includes('/:') && Array.isArray(access));
+
+  it.each(ROUTE_CONTRACTS.filter(({ access }) => access !== 'public' && access !== 'service'))(
+    '$id: nobody gets in without signing in',
+    async (contract) => {
+      const stranger = await new TestBrowser(test.app).open();
+      const answer = await call(stranger, contract, own);
+      expect(answer.status).toBe(401);
+      expect(answer.body.type).toBe('/problems/not-signed-in');
+    },
+  );
+
+  describe.each(ROLES)('%s', (role) => {
+    it.each(guarded)('$id: in the own workshop as the contract says', async (contract) => {
+      const answer = await call(browserOf(here, role), contract, own);
+      const isMeant = contract.access === 'signed-in' || contract.access.includes(role);
+      if (!isMeant) {
+        expect(answer.status).toBe(403);
+        expect(answer.body.type).toBe('/problems/not-allowed');
+        return;
+      }
+      // What somebody did before may make it too late, or an outside service may be away; refused they are not.
+      if (contract.access === 'signed-in' && answer.status === 404) return;
+      expect([contract.successStatus, 409, 412, 422, 503]).toContain(answer.status);
+    });
+
+    it.each(withRow)('$id: a row of another workshop is as missing', async (contract) => {
+      const browser = browserOf(elsewhere, role);
+      const foreign = await call(browser, contract, own);
+      const absent = await call(browser, contract, missing);
+      expect(bare(foreign)).toEqual(bare(absent));
+      const isMeant = contract.access !== 'signed-in' && contract.access !== 'public' && contract.access.includes(role);
+      expect(foreign.status).toBe(isMeant ? 404 : 403);
+    });
+  });
+
+  it.each(['listParts', 'listOrders', 'listMails', 'listMembers', 'listAuditTrail'])(
+    '%s shows nothing of another workshop',
+    async (id) => {
+      const contract = ROUTE_CONTRACTS.find((one) => one.id === id);
+      if (contract === undefined) throw new Error(`There is no route ${id}.`);
+      const mine = await call(browserOf(here, 'owner'), contract, own).expect(200);
+      const theirs = await call(browserOf(elsewhere, 'owner'), contract, own).expect(200);
+      const idsIn = (answer: request.Response) => new Set(answer.text.match(/[0-9a-f]{8}-[0-9a-f-]{27}/g) ?? []);
+      const shared = [...idsIn(theirs)].filter((one) => idsIn(mine).has(one));
+      expect(shared).toEqual([]);
+    },
+  );
+
+  it('place an order only on a quote of one’s own', async () => {
+    const contract = ROUTE_CONTRACTS.find(({ id }) => id === 'placeOrder');
+    if (contract === undefined) throw new Error('There is no route placeOrder.');
+    const browser = browserOf(elsewhere, 'owner');
+    const [foreign, absent] = [await call(browser, contract, own), await call(browser, contract, missing)];
+    expect(bare(foreign)).toEqual(bare(absent));
+    expect(foreign.status).toBe(404);
+  });
+
+  it('serves what is for everybody to everybody, and takes from services only what is signed', async () => {
+    const stranger = await new TestBrowser(test.app).open();
+    for (const contract of CONTRACTS) {
+      if (contract.access !== 'public' && contract.access !== 'service') continue;
+      const answer = await call(stranger, contract, own);
+      if (contract.access === 'service') expect([400, 401, 403]).toContain(answer.status);
+      else expect([200, 401, 503]).toContain(answer.status);
+      if (answer.status === 401 && contract.access === 'public')
+        expect(answer.body.type).toBe('/problems/wrong-sign-in');
+    }
+  });
+
+  it('breaks nowhere', () => {
+    expect(test.loggedErrors.filter((line) => line.includes('unforeseen'))).toEqual([]);
+  });
+});
