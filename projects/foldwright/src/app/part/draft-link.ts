@@ -41,7 +41,8 @@ export class DraftLink {
   private readonly draftState = signal<Draft | null>(null);
   private readonly journalState = signal<DraftJournal | null>(null);
   private readonly save = signal<SaveState>({ kind: 'saved', at: '' });
-  private isSending = false;
+  /** What is under way; whoever asks meanwhile waits for the same. */
+  private sending: Promise<void> | null = null;
   private retryTimer: ReturnType<typeof setTimeout> | null = null;
   private waitMs = FIRST_WAIT_MS;
   /** The furthest step, to be told with the next edits. */
@@ -100,9 +101,12 @@ export class DraftLink {
   }
 
   /** Sends what waits, one consignment at a time, until nothing does or there is no answer. */
-  async send(): Promise<void> {
-    if (this.isSending) return;
-    this.isSending = true;
+  send(): Promise<void> {
+    this.sending ??= this.sendAll();
+    return this.sending;
+  }
+
+  private async sendAll(): Promise<void> {
     this.stopRetrying();
     const showSaving = setTimeout(() => {
       const state = this.save();
@@ -113,20 +117,20 @@ export class DraftLink {
       while (hasMore) hasMore = await this.sendOnce();
     } finally {
       clearTimeout(showSaving);
-      this.isSending = false;
+      this.sending = null;
     }
   }
 
   /** Takes in what somebody else changed. While an edit is on its way, its answer brings the same. */
   async takeIn(): Promise<void> {
     const draftId = this.draftState()?.id;
-    if (this.isSending || draftId === undefined) return;
+    if (this.sending !== null || draftId === undefined) return;
     const known = this.revision();
     try {
       const draft = await this.api.readDraft(draftId);
       if (draft.revision <= known) return;
       const since = await this.api.history(draftId, known);
-      if (this.draftState()?.id !== draftId || draft.revision <= this.revision() || this.isSending) return;
+      if (this.draftState()?.id !== draftId || draft.revision <= this.revision() || this.sending !== null) return;
       const news = since.filter((entry) => entry.revision > known);
       this.settleOn(draft, (current) => moveOn(current, draft), changeWords(news, this.clientId));
       void this.send();

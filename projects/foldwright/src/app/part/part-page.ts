@@ -42,8 +42,11 @@ export class PartPage {
   });
   /** Steps that draw the document need one; the first and the last also serve without. */
   protected readonly isStepOpen = computed(
-    () => this.store.document() !== null || this.road.step() === 'mock-up' || this.road.step() === 'release',
+    () => this.store.hasOutline() || this.road.step() === 'mock-up' || this.road.step() === 'release',
   );
+
+  /** What the card tells of: nothing before there is an outline. */
+  protected readonly cardDocument = computed(() => (this.store.hasOutline() ? this.store.document() : null));
 
   private readonly address = toSignal(
     this.router.events.pipe(

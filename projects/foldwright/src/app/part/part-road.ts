@@ -25,7 +25,7 @@ export class PartRoad {
   readonly step = this.stepState.asReadonly();
   readonly steps = computed<readonly RouteStep[]>(() => {
     const partId = this.store.detail()?.id ?? '';
-    const hasDocument = this.store.document() !== null;
+    const hasOutline = this.store.hasOutline();
     const hasRelease = (this.store.detail()?.revisions.length ?? 0) > 0;
     return PART_STEPS.map((step) => ({
       id: step,
@@ -33,7 +33,7 @@ export class PartRoad {
       sub: this.words(step),
       mark: this.mark(step),
       link: ['/parts', partId, step],
-      disabled: !hasDocument && step !== 'mock-up' && !(step === 'release' && hasRelease),
+      disabled: !hasOutline && step !== 'mock-up' && !(step === 'release' && hasRelease),
     }));
   });
   readonly action = computed<StepAction | null>(() => {
@@ -41,7 +41,7 @@ export class PartRoad {
     if (own !== null) return own;
     const next = stepAfter(this.stepState());
     const partId = this.store.detail()?.id;
-    if (next === null || partId === undefined || this.store.document() === null) return null;
+    if (next === null || partId === undefined || !this.store.hasOutline()) return null;
     return { label: `Go on to ${STEP_WORDS[next]}`, link: ['/parts', partId, next], act: null, isDisabled: false };
   });
 
@@ -61,12 +61,12 @@ export class PartRoad {
     const current = this.stepState();
     if (step === current) return 'ring';
     const isBefore = PART_STEPS.indexOf(step) < PART_STEPS.indexOf(current);
-    const isDone = this.store.document() !== null && hasReached(this.store.furthestStep(), step);
+    const isDone = this.store.hasOutline() && hasReached(this.store.furthestStep(), step);
     return isBefore || isDone ? 'punched' : 'tick';
   }
 
   private words(step: PartStep): string | null {
-    const document = this.store.document();
+    const document = this.store.hasOutline() ? this.store.document() : null;
     switch (step) {
       case 'mock-up': {
         const trace = this.store.detail()?.photos.find((photo) => photo.trace !== null)?.trace;
@@ -87,6 +87,7 @@ export class PartRoad {
   }
 
   private findingWords(): string | null {
+    if (!this.store.hasOutline()) return null;
     const all = [...(this.parts.trial()?.findings ?? []), ...(this.parts.production()?.findings ?? [])];
     const count = (severity: string): number =>
       new Set(all.filter((finding) => finding.severity === severity).map(({ id }) => id)).size;

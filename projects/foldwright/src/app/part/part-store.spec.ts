@@ -216,6 +216,13 @@ describe('PartStore', () => {
       expect(server.document.layout.features).toHaveLength(2);
     });
 
+    it('waits for an edit that is on its way when asked whether all arrived', async () => {
+      const store = await openStore();
+      store.apply([addHole('h1', 20)]);
+      expect(await store.settle()).toBe(true);
+      expect(server.document.layout.features).toHaveLength(1);
+    });
+
     it('counts an edit once whose answer was lost', async () => {
       const store = await openStore();
       server.losesNextAnswer = true;

@@ -70,6 +70,10 @@ export class PartStore {
   /** What is drawn: the server's document with own edits on top. */
   readonly document = computed<PartDocument | null>(() => this.link.journal()?.document ?? null);
   readonly draft = this.link.draft;
+  /** Whether there is an outline to work on: until a trace is taken, a part from a mock-up only holds its place. */
+  readonly hasOutline = computed(
+    () => this.document() !== null && (this.link.draft()?.furthestStep !== 'mock-up' || this.link.unsentEdits() > 0),
+  );
   readonly draftId = computed(() => this.link.draft()?.id ?? null);
   readonly letter = computed(() => this.link.draft()?.letter ?? this.detail()?.draft?.letter ?? null);
   readonly revision = this.link.revision;

@@ -59,7 +59,7 @@ export class MockUpPage {
   protected readonly kindName = computed(
     () => TEMPLATE_KINDS.find(({ id }) => id === this.store.photo()?.templateKind)?.name ?? '',
   );
-  protected readonly replaces = computed(() => this.part.furthestStep() !== 'mock-up');
+  protected readonly replaces = this.part.hasOutline;
 
   private readonly action = computed<StepAction | null>(() => {
     if (this.store.trace() === null || !this.part.canEdit() || this.showsIntake()) return null;
@@ -93,6 +93,8 @@ export class MockUpPage {
     const partId = this.part.detail()?.id;
     if (partId === undefined || !this.store.accept()) return;
     this.part.reach('outline');
-    if (await this.part.settle()) await this.router.navigate(['/parts', partId, 'outline']);
+    // Without a connection the outline is kept here and sent later; the person goes on all the same.
+    await this.part.settle();
+    await this.router.navigate(['/parts', partId, 'outline']);
   }
 }

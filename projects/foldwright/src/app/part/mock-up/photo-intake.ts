@@ -28,7 +28,8 @@ export class PhotoIntake {
   readonly a4Url = input.required<string>();
   readonly letterUrl = input.required<string>();
   readonly upload = input<UploadState | null>(null);
-  readonly canSend = input(true);
+  /** Whether a photo is the next thing to do; then the button wears chalk. */
+  readonly isNext = input(true);
 
   readonly sent = output<{ readonly facts: PhotoFacts; readonly file: File }>();
   readonly stopped = output<void>();
@@ -69,7 +70,7 @@ export class PhotoIntake {
   }
 
   private take(file: File | undefined): void {
-    if (file === undefined || !this.canSend()) return;
+    if (file === undefined) return;
     const { templateKind, thicknessMm, rulerXMm, rulerYMm } = this.form.getRawValue();
     if (this.form.invalid || thicknessMm === null || rulerXMm === null || rulerYMm === null) {
       this.form.markAllAsTouched();
