@@ -27,7 +27,7 @@ describe('orders', () => {
     asOwner(shop.ownerUrl, async (client) => (await client.query(sql, values)).rows as Row[]);
 
   beforeAll(async () => {
-    shop = await startCommerce({ cuttingTimeoutMs: 400 });
+    shop = await startCommerce({ cuttingTimeoutMs: 1500 });
     workshopId = await addWorkshop(shop.ownerUrl, 'Larkfield Cartworks');
     imogen = await addPerson(shop.ownerUrl, 'Imogen Harrow', { [workshopId]: 'owner' });
     owner = await new TestBrowser(shop.app).signIn(imogen);
@@ -237,7 +237,7 @@ describe('orders', () => {
       await shop.setMood({ failEveryRequest: true });
       expect(await shop.runWork()).toBeGreaterThan(0);
       expect((await readOrder(owner, order.id)).state).toBe('paid');
-      await shop.setMood({ answerDelayMs: 700 });
+      await shop.setMood({ answerDelayMs: 2500 });
       await shop.forgetPauses();
       // The shop takes the order and answers too late: nobody knows, so it is handed over again.
       expect(await shop.runWork()).toBeGreaterThan(0);
