@@ -1,11 +1,14 @@
 import { computed, signal } from '@angular/core';
-import { type Draft, type PartDetail, readDraft, sendCommands } from '@foldwright/shared/contracts/parts';
+import { type Draft, type PartDetail, computeDraft, readDraft, sendCommands } from '@foldwright/shared/contracts/parts';
+import type { ComputedPart } from '@foldwright/shared/contracts/development-schema';
 import { PROBLEMS, type ProblemSlug } from '@foldwright/shared/contracts/problems';
 import type { LiveEvent } from '@foldwright/shared/contracts/system';
 import { applyCommands } from '@foldwright/shared/part/apply-command';
 import { CommandRefusal } from '@foldwright/shared/part/command-refusal';
 import type { PartCommand } from '@foldwright/shared/part/commands';
-import type { PartDocument } from '@foldwright/shared/part/part-document';
+import { developPart } from '@foldwright/shared/part/develop-part';
+import type { PartDocument, StockRole } from '@foldwright/shared/part/part-document';
+import { checkDevelopedPart } from '@foldwright/shared/rules/check-part';
 import { Subject } from 'rxjs';
 import type { ApiRead } from '../../api/api-client';
 import { ApiProblem } from '../../api/api-problem';
@@ -78,6 +81,8 @@ export class DraftServer {
     readDraft: async (): Promise<Draft> => this.answer(this.draft),
     history: async (_draftId: string, since = 0): Promise<readonly CommandLogEntry[]> =>
       this.answer(this.log.filter((entry) => entry.revision > since)),
+    compute: async (_draftId: string, stock: StockRole): Promise<{ revision: number; computed: ComputedPart }> =>
+      this.answer(this.computed(stock)),
     sendCommands: async (_draftId: string, batch: CommandBatch): Promise<Draft> => this.take(batch),
     movedOn: (problem: ApiProblem) =>
       problem.slug === 'draft-moved-on' ? (problem.details.extra as { draft: Draft; since: CommandLogEntry[] }) : null,
@@ -86,6 +91,17 @@ export class DraftServer {
   /** In place of `LiveEvents`. */
   get liveEvents() {
     return { events: this.events, resumed: this.resumed };
+  }
+
+  private computed(stock: StockRole): { revision: number; computed: ComputedPart } {
+    const result = developPart(this.document, stock);
+    const computed = {
+      role: stock,
+      stockLabel: 'as the server says it',
+      development: result.ok ? result.development : null,
+      findings: checkDevelopedPart(this.document, stock, result),
+    };
+    return computeDraft.response.parse(JSON.parse(JSON.stringify({ revision: this.revision, computed })));
   }
 
   /** Somebody else's change, told on the live stream. */

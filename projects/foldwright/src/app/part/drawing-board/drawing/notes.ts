@@ -1,9 +1,12 @@
 import type { Feature, Layout } from '@foldwright/shared/bending/layout';
+import { pointInLoop } from '@foldwright/shared/geometry/loop';
+import type { Loop } from '@foldwright/shared/geometry/path';
 import type { Point } from '@foldwright/shared/geometry/point';
+import { COINCIDENT_MM } from '@foldwright/shared/geometry/tolerance';
 import { findHoleDiameterMm } from '@foldwright/shared/stock/hole-diameter';
 import { formatDecimal } from '@foldwright/shared/units/length';
-import { featureCentre } from '../geometry/layout-edges';
-import { type Viewport, toScreen } from '../viewport';
+import { edgesOfLoop, featureCentre } from '../geometry/layout-edges';
+import { type Viewport, toLayout, toScreen } from '../viewport';
 
 /** A few words on the metal, or in ink where a large hole shows the bench. */
 export interface DrawnNote {
@@ -44,10 +47,12 @@ export function drawingNotes(
   const taken: Box[] = layout.features.map((feature) => featureBox(feature, viewport));
   const bends = bendNotes(layout, viewport, names);
   taken.push(...bends.map(noteBox));
-  const openings = openingGroups(layout).map((group) => {
-    const note = placeNote(group, viewport, taken);
+  const sheet = edgesOfLoop(layout.outer).map(({ segment }) => segment);
+  const openings = openingGroups(layout).flatMap((group) => {
+    const note = placeNote(group, viewport, taken, sheet);
+    if (note === null) return [];
     taken.push(noteBox(note));
-    return note;
+    return [note];
   });
   return [...bends, ...openings];
 }
@@ -99,8 +104,16 @@ function openingGroups(layout: Layout): readonly OpeningGroup[] {
   });
 }
 
-/** The place, at any of the group's things and on any side of it, where the words cover least. */
-function placeNote({ key, lines, features }: OpeningGroup, viewport: Viewport, taken: readonly Box[]): DrawnNote {
+/**
+ * The place on the sheet, at any of the group's things and on any side of it, where the words cover least. Words that find
+ * no room on the metal are left out: bright letters can't be read on the card, and the list has every size.
+ */
+function placeNote(
+  { key, lines, features }: OpeningGroup,
+  viewport: Viewport,
+  taken: readonly Box[],
+  sheet: Loop,
+): DrawnNote | null {
   let best: DrawnNote | null = null;
   let least = Infinity;
   for (const feature of features) {
@@ -112,11 +125,19 @@ function placeNote({ key, lines, features }: OpeningGroup, viewport: Viewport, t
     }
     for (const candidate of besides(key, lines, at.xPx, at.yPx, reachPx(feature, viewport))) {
       const box = noteBox(candidate);
+      if (!isOnSheet(box, viewport, sheet)) continue;
       const covered = taken.reduce((sum, other) => sum + overlapPx(box, other), 0);
       if (covered < least) [best, least] = [candidate, covered];
     }
   }
-  return best ?? { key, lines, xPx: 0, yPx: 0, turnDeg: 0, anchor: 'start', leader: '', isOnMetal: true };
+  return best;
+}
+
+function isOnSheet(box: Box, viewport: Viewport, sheet: Loop): boolean {
+  const corners = [box.left, (box.left + box.right) / 2, box.right].flatMap((xPx) =>
+    [box.top, box.bottom].map((yPx) => toLayout(viewport, { xPx, yPx })),
+  );
+  return corners.every((corner) => pointInLoop(corner, sheet, COINCIDENT_MM) !== 'outside');
 }
 
 /** Below right, above right, below left, above left, right below and right above a thing. */
