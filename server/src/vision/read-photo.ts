@@ -15,7 +15,7 @@ import { plainView } from './plain-view';
 import { squareUp } from './square-up';
 import { TraceRefusal } from './trace-refusal';
 import { fitShapes } from './trace-shapes';
-import { pixelsPerMmAt, type View } from './view';
+import { type View, pixelsPerMmAt, viewAtHeight } from './view';
 
 export type StageListener = (stage: TraceStage) => void;
 
@@ -68,13 +68,19 @@ function sceneOfScaleSheet(picture: Picture, focal35Mm: number | null, options: 
   const perMm = pixelsPerMmAt(view, { x: sheet.widthMm / 2, y: sheet.heightMm / 2 });
   const tiltDeg = cameraTiltDeg(camera);
   if (tiltDeg > MAX_TILT_DEG) {
-    throw new TraceRefusal('tiltTooSteep', `The photo was taken ${Math.round(tiltDeg)}° off the square; keep under 35°.`);
+    throw new TraceRefusal(
+      'tiltTooSteep',
+      `The photo was taken ${Math.round(tiltDeg)}° off the square; keep under 35°.`,
+    );
   }
-  if (found.blurPx > MAX_BLUR_PX) throw new TraceRefusal('blurred', 'The photo is blurred. Hold still, or step back a little.');
+  if (found.blurPx > MAX_BLUR_PX)
+    throw new TraceRefusal('blurred', 'The photo is blurred. Hold still, or step back a little.');
   const missMm = found.rmsPx / perMm;
-  if (missMm > MAX_SHEET_MISS_MM) throw new TraceRefusal('sheetNotFlat', 'The sheet does not lie flat: its markers do not agree.');
+  if (missMm > MAX_SHEET_MISS_MM)
+    throw new TraceRefusal('sheetNotFlat', 'The sheet does not lie flat: its markers do not agree.');
   const warnings: string[] = [];
-  if (found.markerIds.size < 10) warnings.push(`Only ${found.markerIds.size} of ${sheet.markers.length} markers could be used.`);
+  if (found.markerIds.size < 10)
+    warnings.push(`Only ${found.markerIds.size} of ${sheet.markers.length} markers could be used.`);
   if (tiltDeg > 35) warnings.push(`The photo was taken ${Math.round(tiltDeg)}° off the square; under 35° is better.`);
   return {
     view,
@@ -123,11 +129,18 @@ export async function readPhoto(
   leave('decode');
   await enter('markers');
   const scale = options.scale ?? { kind: 'markers' };
-  const scene = scale.kind === 'markers' ? sceneOfScaleSheet(picture, focal35Mm, options) : plainView(picture, focal35Mm, scale);
+  const scene =
+    scale.kind === 'markers' ? sceneOfScaleSheet(picture, focal35Mm, options) : plainView(picture, focal35Mm, scale);
   leave('markers');
   await enter('square-up');
   const longMm = Math.max(scene.widthMm, scene.heightMm);
-  const raster = rectify(picture, scene.view, scene.widthMm, scene.heightMm, Math.min(RASTER_PER_MM, MAX_RASTER_SIDE / longMm));
+  const raster = rectify(
+    picture,
+    scene.view,
+    scene.widthMm,
+    scene.heightMm,
+    Math.min(RASTER_PER_MM, MAX_RASTER_SIDE / longMm),
+  );
   const displayPerMm = Math.min(DISPLAY_PER_MM, DISPLAY_SIDE_PX / longMm);
   leave('square-up');
   await enter('template');
@@ -156,7 +169,13 @@ export async function readPhoto(
   leave('holes');
   const display = await encodeForDisplay(picture, DISPLAY_SIDE_PX);
   const rectified = await encodeForDisplay(
-    rectifyForDisplay(picture, scene.view, scene.widthMm, scene.heightMm, displayPerMm),
+    rectifyForDisplay(
+      picture,
+      viewAtHeight(scene.view, options.thicknessMm),
+      scene.widthMm,
+      scene.heightMm,
+      displayPerMm,
+    ),
     DISPLAY_SIDE_PX,
   );
   isStopped(signal);
