@@ -28,7 +28,9 @@ export class KSource {
       if (first === undefined) return [];
       const names = bySource.size > 1 ? `${rows.map((row) => row.name).join(', ')}: ` : '';
       const { text, confidence } = first.kProvenance;
-      const line = `${names}K ${formatDecimal(first.kFactor, 3)}, ${text} (${confidenceWords(confidence)})`;
+      // Where the words say already that a person entered it, saying so twice helps nobody.
+      const trust = confidence === 'entered' ? '' : ` (${confidenceWords(confidence)})`;
+      const line = `${names}K ${formatDecimal(first.kFactor, 3)}, ${text}${trust}`;
       return first.kNote === null ? [line] : [line, first.kNote];
     });
   });

@@ -26,7 +26,7 @@ const LETTER_PX = 7.9;
 const LINE_PX = 16;
 const CAPITAL_PX = 11;
 /** A hole that large holds its own words. */
-const ROOMY_RADIUS_PX = 44;
+const ROOMY_RADIUS_PX = 40;
 
 interface Box {
   readonly left: number;
