@@ -1,6 +1,6 @@
 import { partSummarySchema } from '@foldwright/shared/contracts/parts';
 import { seedDemo } from '@foldwright/server/database/seed-demo';
-import people from '../../server/src/setup/demo/people.json';
+import people from '@foldwright/server/setup/demo/people.json';
 import { TestBrowser, addWorkshop, asOwner } from '../support/people';
 import type { TestApp } from '../support/test-app';
 import { startTestApp } from '../support/test-app';

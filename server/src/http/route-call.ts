@@ -6,16 +6,9 @@ import type {
   RouteResponse,
 } from '@foldwright/shared/contracts/route';
 import type { Request, Response } from 'express';
+import type { UploadedFile } from '../files/uploaded-file';
 import type { FileAnswer } from './file-answer';
 import type { ActorFor } from './visitor';
-
-/** A file that came with a request, already on disk under a name of our own. Removed when the request ends. */
-export interface UploadedFile {
-  readonly path: string;
-  /** The sender's name for it; only ever shown. */
-  readonly originalName: string;
-  readonly byteLength: number;
-}
 
 /** Everything a handler gets: input that was checked against the contract, and who asks. */
 export interface RouteCall<R extends RouteContract> {

@@ -3,7 +3,7 @@ import { rm } from 'node:fs/promises';
 import type { Request, Response } from 'express';
 import multer from 'multer';
 import { Problem } from './problem';
-import type { UploadedFile } from './route-call';
+import type { UploadedFile } from '../files/uploaded-file';
 
 export const MOST_UPLOAD_BYTES = 25 * 1024 * 1024;
 

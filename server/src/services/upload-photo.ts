@@ -6,7 +6,7 @@ import { recordEvent } from '../events/record-event';
 import { acceptPhoto } from '../files/accept-photo';
 import type { FileStore } from '../files/file-store';
 import { Problem } from '../http/problem';
-import type { UploadedFile } from '../http/route-call';
+import type { UploadedFile } from '../files/uploaded-file';
 import type { Member } from '../http/visitor';
 import { enqueueTrace } from '../jobs/job-rows';
 import type { Queue } from '../jobs/queue';
