@@ -8,11 +8,9 @@ export interface TurntableColours {
   readonly shade: string;
 }
 
-const NAMES = ['metal', 'scribe', 'disc', 'rim', 'ticks', 'shade'] as const;
-
 /** Reads the tokens through probes that wear them: a canvas cannot read `light-dark()` by itself. */
 export function readColours(probes: HTMLElement): TurntableColours {
-  const read = (name: (typeof NAMES)[number]): string => {
+  const read = (name: keyof TurntableColours): string => {
     const probe = probes.querySelector<HTMLElement>(`.${name}`);
     return probe === null ? 'rgb(128, 128, 128)' : getComputedStyle(probe).color;
   };

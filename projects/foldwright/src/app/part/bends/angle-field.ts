@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, ElementRef, computed, input, output, viewChild } from '@angular/core';
+import { ChangeDetectionStrategy, Component, type ElementRef, computed, input, output, viewChild } from '@angular/core';
 import { formatDecimal } from '@foldwright/shared/units/length';
 
 let nextId = 0;

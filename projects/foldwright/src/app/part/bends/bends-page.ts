@@ -158,6 +158,7 @@ export class BendsPage {
     const selection = this.editor.selection();
     return layout === undefined || selection?.kind !== 'bend' ? null : findBend(layout, selection.id);
   });
+  protected readonly hasTemplate = computed(() => (this.store.document()?.template ?? null) !== null);
   protected readonly chosenRow = computed(() => {
     const id = this.chosenBend()?.id;
     return this.part()?.figures?.bendTable.find((row) => row.bendId === id) ?? null;
