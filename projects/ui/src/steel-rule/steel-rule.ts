@@ -34,6 +34,8 @@ export interface RuleTool {
   readonly disabled?: boolean;
 }
 
+const UNIT_ROOM_PX = 84;
+
 /**
  * A steel rule under the drawing: graduated to its scale with zero at the selection, and holding the verbs of what is
  * selected. One tab stop; arrow keys, Home and End walk along it.
@@ -68,6 +70,10 @@ export class SteelRule {
   private readonly walkedTo = signal<string | null>(null);
 
   protected readonly graduations = computed(() => graduate(this.widthPx() - 62, this.pxPerMm(), this.zeroPx()));
+  /** The last figure makes room for the unit at the rule's end. */
+  protected readonly labels = computed(() =>
+    this.graduations().labels.filter((label) => label.xPx < this.widthPx() - UNIT_ROOM_PX),
+  );
   protected readonly ticks = computed(() =>
     this.graduations()
       .ticks.map((tick) => `M${tick.xPx} 0v${tick.heightPx}`)
