@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { readdir } from 'node:fs/promises';
+import { readFile, readdir } from 'node:fs/promises';
 import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { connect } from 'node:net';
@@ -8,10 +8,13 @@ import type { Job, Photo } from '@foldwright/shared/contracts/photos';
 import { jobSchema, photoSchema } from '@foldwright/shared/contracts/photos';
 import pino from 'pino';
 import sharp from 'sharp';
+import * as z from 'zod/mini';
 import type { RunningWorker } from '@foldwright/server/jobs/run-worker';
 import { openQueue } from '@foldwright/server/jobs/queue';
 import { runWorker } from '@foldwright/server/jobs/run-worker';
+import type { ReadsPhotos } from '@foldwright/server/jobs/photo-reader-port';
 import { traceHandler } from '@foldwright/server/jobs/trace-photo';
+import { visionReader } from '@foldwright/server/jobs/vision-reader';
 import { TraceRefusal } from '@foldwright/server/vision/trace-refusal';
 import { plainJpeg } from '../support/jpeg';
 import { TestBrowser, addPerson, addWorkshop, asOwner } from '../support/people';
@@ -20,6 +23,8 @@ import type { TestApp } from '../support/test-app';
 import { startTestApp } from '../support/test-app';
 import { until } from '../support/until';
 
+const truthSchema = z.object({ holes: z.array(z.unknown()), thicknessMm: z.number() });
+const PHOTOS = path.resolve(__dirname, '../fixtures/photos');
 const FACTS = { templateKind: 'single-wall', templateThicknessMm: '3', rulerXMm: '100', rulerYMm: '99.5' };
 
 describe('photos of templates', () => {
@@ -58,7 +63,7 @@ describe('photos of templates', () => {
     const answer = await upload(await newPart(), file ?? (await plainJpeg())).expect(202);
     return photoSchema.parse(answer.body);
   };
-  const startWorker = async (reader: ScriptedReader): Promise<void> => {
+  const startWorker = async (reader: ReadsPhotos): Promise<void> => {
     const { database, files } = test;
     const queue = await openQueue({
       pool: database.pool,
@@ -71,11 +76,12 @@ describe('photos of templates', () => {
   };
   const readPhoto = async (photoId: string): Promise<Photo> =>
     photoSchema.parse((await browser.get(`/api/photos/${photoId}`).expect(200)).body);
+  // The real reader starts a process of its own, which takes its time where many tests run at once.
   const jobIn = (photoId: string, ...states: Job['state'][]): Promise<Photo> =>
     until(async () => {
       const photo = await readPhoto(photoId);
       return photo.job !== null && states.includes(photo.job.state) ? photo : undefined;
-    });
+    }, 40_000);
   const storedFiles = async (): Promise<string[]> => {
     const names = await readdir(test.filesDirectory, { recursive: true, withFileTypes: true });
     return names.filter((entry) => entry.isFile()).map((entry) => path.join(entry.parentPath, entry.name));
@@ -315,6 +321,26 @@ describe('photos of templates', () => {
     );
     const ofPhoto = (await storedFiles()).filter((file) => file.endsWith(rows[0].rectified_stored_as));
     expect(ofPhoto).toHaveLength(1);
+  });
+
+  it('reads a real photo with the real reader', async () => {
+    const reader = visionReader();
+    await startWorker(reader);
+    const text = await readFile(path.join(PHOTOS, '02-regulator-bracket-steel.truth.json'), 'utf8');
+    const truth = truthSchema.parse(JSON.parse(text));
+    const bytes = await readFile(path.join(PHOTOS, '02-regulator-bracket-steel.jpg'));
+    const facts = { ...FACTS, rulerYMm: '100', templateThicknessMm: String(truth.thicknessMm) };
+    const photo = photoSchema.parse((await upload(await newPart(), bytes, 'bracket.jpg', facts).expect(202)).body);
+    const read = await jobIn(photo.id, 'done', 'failed');
+    reader.close();
+    expect(read.job).toMatchObject({ state: 'done', failure: null, attempt: 1 });
+    expect(read.trace?.holes).toHaveLength(truth.holes.length);
+    expect(read.trace?.uncertaintyMm).toBeLessThan(1);
+    const image = await browser.get(`/api/photos/${photo.id}/image?view=rectified`).expect(200);
+    const { width, height } = await sharp(image.body).metadata();
+    const { pixelsPerMm, widthMm, heightMm } = read.rectified ?? { pixelsPerMm: 0, widthMm: 0, heightMm: 0 };
+    expect(width / pixelsPerMm).toBeCloseTo(widthMm, 0);
+    expect(height / pixelsPerMm).toBeCloseTo(heightMm, 0);
   });
 
   it('takes no photo for a part without a draft', async () => {
