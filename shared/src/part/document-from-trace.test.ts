@@ -60,6 +60,31 @@ describe('documentFromTrace', () => {
     expect(checkInvariants(document)).toEqual([]);
   });
 
+  it.each([30, -44, 17.3, 92])('squares a template up that lay %d° round on the sheet', (turnDeg) => {
+    const [cosine, sine] = [Math.cos((turnDeg * Math.PI) / 180), Math.sin((turnDeg * Math.PI) / 180)];
+    const turned = ([x, y]: readonly [number, number]): readonly [number, number] => [
+      x * cosine - y * sine,
+      x * sine + y * cosine,
+    ];
+    const lying: Trace = {
+      ...trace,
+      outer: trace.outer.map((piece) =>
+        piece.kind === 'line'
+          ? { ...piece, from: turned(piece.from), to: turned(piece.to) }
+          : { ...piece, from: turned(piece.from), to: turned(piece.to), centre: turned(piece.centre) },
+      ),
+      cutouts: [],
+      holes: trace.holes.map((hole) => ({ ...hole, centre: turned(hole.centre) })),
+      slots: trace.slots.map((slot) => ({ ...slot, from: turned(slot.from), to: turned(slot.to) })),
+    };
+    const square = documentFromTrace(lying, answers, counting());
+    const sizes = loopBounds(loopFromBulges(square.layout.outer.edges))?.max ?? { x: 0, y: 0 };
+    // 92 degrees are nearer to a quarter turn: the sides change places.
+    expect([sizes.x, sizes.y].map((size) => Number(size.toFixed(6)))).toEqual(turnDeg === 92 ? [80, 100] : [100, 80]);
+    const hole = square.layout.features[0];
+    expect(hole?.kind === 'hole' ? Math.min(hole.centre.x, sizes.x - hole.centre.x) : NaN).toBeCloseTo(10, 6);
+  });
+
   it('keeps holes and slots where they were on the template', () => {
     expect(document.layout.features).toMatchObject([
       { kind: 'hole', centre: { x: 10, y: 10 }, purpose: { kind: 'plain', diameterMm: 6.55 } },

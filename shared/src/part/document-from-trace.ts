@@ -3,6 +3,7 @@ import type { Trace, TracePoint, TracePrimitive } from '../fitting/trace';
 import { clockwise, counterClockwise, loopBounds } from '../geometry/loop';
 import type { Loop, Segment } from '../geometry/path';
 import type { Point } from '../geometry/point';
+import { type RigidMotion, moveLoop, movePoint } from '../geometry/transform';
 import { arcSweepDeg, bulgeOf, subSegment } from '../geometry/segment';
 import { interiorPoint } from '../geometry/interior-point';
 import type { PartDocument, TemplateKind } from './part-document';
@@ -36,8 +37,9 @@ export function usualBendDirection(showing: 'inside' | 'outside'): BendDirection
 }
 
 /**
- * The part document of an accepted trace: outline, cut-outs, holes and slots in layout coordinates, moved so that the
- * outline's lower-left corner is the origin. Loops run as the kernel expects (outline counter-clockwise, cut-outs
+ * The part document of an accepted trace: outline, cut-outs, holes and slots in layout coordinates, squared up so that
+ * the longest straight edge runs along an axis (however the template lay on the sheet), and moved so that the outline's
+ * lower-left corner is the origin. Loops run as the kernel expects (outline counter-clockwise, cut-outs
  * clockwise); holes get the measured diameter as plain holes until a person matches them to fasteners. Lengths are those
  * of the template lying flat, so they mean its creases.
  * @param trace the reading of the photo
@@ -46,25 +48,28 @@ export function usualBendDirection(showing: 'inside' | 'outside'): BendDirection
  * @throws RangeError when the trace has no outline
  */
 export function documentFromTrace(trace: Trace, answers: TraceAnswers, nextId: IdSource): PartDocument {
-  const outer = counterClockwise(segmentsOf(trace.outer));
+  const traced = counterClockwise(segmentsOf(trace.outer));
+  const square: RigidMotion = { turnDeg: squaringTurnDeg(traced), shift: { x: 0, y: 0 } };
+  const outer = moveLoop(square, traced);
   const bounds = loopBounds(outer);
   if (bounds === null || outer.length < 2) throw new RangeError('the trace has no outline');
   const shift = (point: Point): Point => ({ x: point.x - bounds.min.x, y: point.y - bounds.min.y });
+  const settle = (point: TracePoint): Point => shift(movePoint(square, pointOf(point)));
   const cutouts = trace.cutouts
-    .map((primitives) => clockwise(segmentsOf(primitives)))
+    .map((primitives) => moveLoop(square, clockwise(segmentsOf(primitives))))
     .filter((loop) => loop.length > 1);
   const features: readonly Feature[] = [
     ...trace.holes.map(({ centre, diameterMm }): Feature => ({
       kind: 'hole',
       id: nextId('hole'),
-      centre: shift(pointOf(centre)),
+      centre: settle(centre),
       purpose: { kind: 'plain', diameterMm },
     })),
     ...trace.slots.map(({ from, to, widthMm }): Feature => ({
       kind: 'slot',
       id: nextId('slot'),
-      from: shift(pointOf(from)),
-      to: shift(pointOf(to)),
+      from: settle(from),
+      to: settle(to),
       widthMm,
     })),
   ];
@@ -91,6 +96,16 @@ export function documentFromTrace(trace: Trace, answers: TraceAnswers, nextId: I
     },
     calibration: { scaleX, scaleY },
   };
+}
+
+/** The smallest turn, -45 to 45 degrees, that lays the longest straight edge along an axis; 0 without a straight edge. */
+function squaringTurnDeg(outer: Loop): number {
+  const runs = outer.flatMap((segment) =>
+    segment.kind === 'line' ? [{ x: segment.to.x - segment.from.x, y: segment.to.y - segment.from.y }] : [],
+  );
+  const longest = runs.reduce((a, b) => (Math.hypot(b.x, b.y) > Math.hypot(a.x, a.y) ? b : a), { x: 0, y: 0 });
+  const angleDeg = (Math.atan2(longest.y, longest.x) * 180) / Math.PI;
+  return Math.round(angleDeg / 90) * 90 - angleDeg;
 }
 
 function pointOf([x, y]: TracePoint): Point {

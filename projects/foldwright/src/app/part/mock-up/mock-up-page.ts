@@ -59,6 +59,18 @@ export class MockUpPage {
   protected readonly kindName = computed(
     () => TEMPLATE_KINDS.find(({ id }) => id === this.store.photo()?.templateKind)?.name ?? '',
   );
+  protected readonly foundWords = computed(() => {
+    const trace = this.store.trace();
+    if (trace === null) return '';
+    const count = (number: number, word: string): string => `${number} ${word}${number === 1 ? '' : 's'}`;
+    const found = [
+      count(trace.outer.length, 'edge'),
+      count(trace.holes.length, 'hole'),
+      count(trace.slots.length, 'slot'),
+      count(trace.cutouts.length, 'cut-out'),
+    ];
+    return `${found.join(', ')}, from ${count(trace.markersUsed, 'marker')}.`;
+  });
   protected readonly replaces = this.part.hasOutline;
 
   private readonly action = computed<StepAction | null>(() => {

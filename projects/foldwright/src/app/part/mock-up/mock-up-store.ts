@@ -129,13 +129,9 @@ export class MockUpStore {
       traceAnswers(answers, photo.templateKind, photo.templateThicknessMm),
       (prefix) => `${prefix}-${crypto.randomUUID().slice(0, 8)}`,
     );
-    if (document.template === null) return false;
     return this.part.apply(
       [
-        {
-          kind: 'setTemplate',
-          template: { ...document.template, flangesFold: answers.showing === 'inside' ? 'towards' : 'away' },
-        },
+        { kind: 'setTemplate', template: document.template },
         { kind: 'replaceLayout', layout: document.layout, origin: 'trace' },
       ],
       { label: 'Take the outline from the photo' },

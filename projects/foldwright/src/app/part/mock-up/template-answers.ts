@@ -53,6 +53,7 @@ export function traceAnswers(answers: CompleteAnswers, templateKind: TemplateKin
   return {
     templateKind,
     thicknessMm,
+    showing: answers.showing,
     bearing: answers.bearing,
     hinge: hingeOf(answers.crease, answers.showing, thicknessMm),
     calibration: { scaleX: 1, scaleY: 1 },
