@@ -3,7 +3,7 @@ import angular from 'angular-eslint';
 import { defineConfig } from 'eslint/config';
 import prettier from 'eslint-config-prettier';
 import tseslint from 'typescript-eslint';
-import { boundaries } from './eslint.boundaries.mjs';
+import { boundaries } from './server/src/setup/dependency-table.mjs';
 
 const NODE_GLOBALS = Object.fromEntries(
   [
