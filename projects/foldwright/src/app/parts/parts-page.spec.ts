@@ -2,6 +2,7 @@ import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
 import { TestBed } from '@angular/core/testing';
 import { provideRouter } from '@angular/router';
+import { partDocumentSchema } from '@foldwright/shared/contracts/part-document-schema';
 import type { PartSummary } from '@foldwright/shared/contracts/parts';
 import { starterDocument } from '@foldwright/shared/part/starter-document';
 import { Subject } from 'rxjs';
@@ -11,7 +12,9 @@ import { factsOf, fallsUnder, matchesSearch, partLink } from './part-facts';
 
 const ID = '5f0c6c0e-5d7c-4a68-9d49-0b8a7f1f2c1';
 const NOW = new Date(2026, 4, 20);
-const document = starterDocument({ shape: 'l-bracket', baseMm: 60, flangeMm: 40, widthMm: 50, bendAngleDeg: 90 });
+const document = partDocumentSchema.parse(
+  starterDocument({ shape: 'l-bracket', baseMm: 60, flangeMm: 40, widthMm: 50, bendAngleDeg: 90 }),
+);
 const draft: PartSummary['draft'] = {
   id: `${ID}9`,
   letter: 'C',
