@@ -74,7 +74,7 @@ export class MockUpPage {
   protected readonly replaces = this.part.hasOutline;
 
   private readonly action = computed<StepAction | null>(() => {
-    if (this.store.trace() === null || !this.part.canEdit() || this.showsIntake()) return null;
+    if (this.store.trace() === null || this.store.isTaken() || !this.part.canEdit() || this.showsIntake()) return null;
     const open = this.store.openQuestions();
     const label =
       open === 0 ? 'Use this outline' : open === 1 ? 'Answer the last question' : `Answer the ${open} questions`;

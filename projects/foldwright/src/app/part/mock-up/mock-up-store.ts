@@ -2,19 +2,14 @@ import { DestroyRef, Injectable, computed, inject, linkedSignal, signal } from '
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import type { Photo } from '@foldwright/shared/contracts/photos';
 import type { TemplateKind } from '@foldwright/shared/part/part-document';
+import { isSameJson } from '@foldwright/shared/part/canonical-json';
 import { documentFromTrace } from '@foldwright/shared/part/document-from-trace';
 import { type Subscription, filter, merge, timer } from 'rxjs';
 import { type ApiProblem, problemFromError } from '../../api/api-problem';
 import { LiveEvents } from '../../api/live-events';
 import { type PhotoFacts, PhotosApi } from '../../api/photos-api';
 import { PartStore } from '../part-store';
-import {
-  type TemplateAnswers,
-  NOTHING_ANSWERED,
-  completeAnswers,
-  openQuestions,
-  traceAnswers,
-} from './template-answers';
+import { type TemplateAnswers, answersOf, completeAnswers, openQuestions, traceAnswers } from './template-answers';
 
 export interface UploadState {
   readonly fileName: string;
@@ -37,9 +32,12 @@ export class MockUpStore {
   private readonly photoRead = this.photosApi.photo(this.photoId);
   private readonly uploadState = signal<UploadState | null>(null);
   private readonly problemState = signal<ApiProblem | null>(null);
-  private readonly answersState = signal<TemplateAnswers>(NOTHING_ANSWERED);
+  private readonly answersState = linkedSignal<TemplateAnswers>(() => answersOf(this.takenTemplate()));
+  private readonly isChanged = signal(false);
   private uploading: Subscription | null = null;
 
+  /** Whether the outline that is shown is the one that was taken, as far as this visit knows. */
+  readonly isTaken = computed(() => this.part.hasOutline() && !this.isChanged());
   readonly photo = computed(() => this.photoRead.value() ?? null);
   readonly upload = this.uploadState.asReadonly();
   readonly problem = computed(() => this.problemState() ?? this.photoRead.problem());
@@ -52,6 +50,11 @@ export class MockUpStore {
     return photo?.rectified ? this.photosApi.imageUrl(photo.id, 'rectified') : null;
   });
   readonly canAccept = computed(() => this.trace() !== null && this.openQuestions() === 0 && this.part.canEdit());
+
+  private readonly takenTemplate = computed(
+    () => (this.part.hasOutline() ? (this.part.document()?.template ?? null) : null),
+    { equal: isSameJson },
+  );
 
   constructor() {
     const jobEvents = this.live.events.pipe(
@@ -82,6 +85,7 @@ export class MockUpStore {
           return;
         }
         this.uploadState.set(null);
+        this.isChanged.set(true);
         this.photoId.set(progress.value.id);
         this.photoRead.set(progress.value);
       },
@@ -110,11 +114,13 @@ export class MockUpStore {
     const photo = this.photo();
     if (photo === null) return;
     await this.guarded(async () => {
+      this.isChanged.set(true);
       this.photoRead.set(await this.photosApi.reread(photo.id, { templateKind, templateThicknessMm }));
     });
   }
 
   answer(change: Partial<TemplateAnswers>): void {
+    this.isChanged.set(true);
     this.answersState.update((answers) => ({ ...answers, ...change }));
   }
 

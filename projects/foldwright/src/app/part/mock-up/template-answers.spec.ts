@@ -1,4 +1,4 @@
-import { completeAnswers, hingeOf, openQuestions, traceAnswers } from './template-answers';
+import { answersOf, completeAnswers, hingeOf, openQuestions, traceAnswers } from './template-answers';
 
 describe('what a person says about the template', () => {
   it('is complete only with all three answers', () => {
@@ -28,5 +28,24 @@ describe('what a person says about the template', () => {
       bearing: 'showing',
       hinge: { kind: 'middle' },
     });
+  });
+
+  it.each([
+    { showing: 'inside', bearing: 'showing', crease: 'scored' },
+    { showing: 'outside', bearing: 'hidden', crease: 'half-cut' },
+    { showing: 'outside', bearing: 'showing', crease: 'crushed' },
+  ] as const)('reads $showing, $bearing, $crease back from the document', (given) => {
+    const { bearing, hinge } = traceAnswers(given, 'single-wall', 3);
+    const template = {
+      kind: 'single-wall',
+      thicknessMm: 3,
+      reading: { readOn: 'crease', bearingFace: bearing === 'showing' ? 'A' : 'B', hinge },
+      flangesFold: given.showing === 'inside' ? 'towards' : 'away',
+    } as const;
+    expect(answersOf(template)).toEqual(given);
+  });
+
+  it('leaves open what a document does not tell', () => {
+    expect(openQuestions(answersOf(null))).toBe(3);
   });
 });

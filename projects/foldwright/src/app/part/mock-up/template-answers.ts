@@ -1,6 +1,7 @@
 import type { CardHinge } from '@foldwright/shared/bending/layout';
+import { isSameJson } from '@foldwright/shared/part/canonical-json';
 import type { TraceAnswers } from '@foldwright/shared/part/document-from-trace';
-import type { TemplateKind } from '@foldwright/shared/part/part-document';
+import type { Template, TemplateKind } from '@foldwright/shared/part/part-document';
 
 /** Which face of the template shows in the photo, told by how its flanges fold. */
 export type FaceShowing = 'inside' | 'outside';
@@ -57,5 +58,20 @@ export function traceAnswers(answers: CompleteAnswers, templateKind: TemplateKin
     bearing: answers.bearing,
     hinge: hingeOf(answers.crease, answers.showing, thicknessMm),
     calibration: { scaleX: 1, scaleY: 1 },
+  };
+}
+
+/** What was answered when the outline was taken, read back from the document; all open without a template. */
+export function answersOf(template: Template | null): TemplateAnswers {
+  if (template === null) return NOTHING_ANSWERED;
+  const { reading, flangesFold, thicknessMm } = template;
+  const showing: FaceShowing | null =
+    flangesFold === undefined ? null : flangesFold === 'towards' ? 'inside' : 'outside';
+  const creases: readonly CreaseKind[] = ['scored', 'crushed', 'half-cut'];
+  const isSame = (hinge: CardHinge): boolean => isSameJson(hinge, reading.hinge);
+  return {
+    showing,
+    bearing: reading.bearingFace === 'A' ? 'showing' : 'hidden',
+    crease: showing === null ? null : (creases.find((crease) => isSame(hingeOf(crease, showing, thicknessMm))) ?? null),
   };
 }
