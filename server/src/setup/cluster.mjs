@@ -5,7 +5,7 @@ import fs from 'node:fs';
 import path from 'node:path';
 import { ensureDirectory } from './places.mjs';
 import { answersOn, portNear } from './ports.mjs';
-import { pause } from './processes.mjs';
+import { pause, processIdentity } from './processes.mjs';
 
 /** The role that made the cluster and owns every table. The application never connects as this one. */
 export const OWNER_ROLE = 'foldwright_owner';
@@ -106,9 +106,12 @@ function runProgram(program, args, { account, home, password }) {
 /** The port in the server's own lock file, when a server answers there. */
 async function portOfRunningServer(data) {
   try {
-    const port = Number(fs.readFileSync(path.join(data, 'postmaster.pid'), 'utf8').split('\n')[3]);
-    // The process number in the file proves nothing: a killed server stays a zombie, and numbers are given out again.
-    return port > 0 && (await answersOn(port)) ? port : undefined;
+    const [pid, , , portText] = fs.readFileSync(path.join(data, 'postmaster.pid'), 'utf8').split('\n');
+    const port = Number(portText);
+    // Neither proves it alone: numbers are given out again, and the children of a killed server hold its port for a
+    // moment longer.
+    const isThere = processIdentity(Number(pid)) !== undefined;
+    return isThere && port > 0 && (await answersOn(port)) ? port : undefined;
   } catch {
     // No lock file: no server.
     return undefined;
