@@ -5,6 +5,8 @@ import os from 'node:os';
 import path from 'node:path';
 import { Client } from 'pg';
 import { clusterHome, startCluster } from '@foldwright/server/setup/cluster.mjs';
+import { processIdentity } from '@foldwright/server/setup/processes.mjs';
+import { until } from './watched-process';
 import { answersOn } from '@foldwright/server/setup/ports.mjs';
 
 jest.setTimeout(60_000);
@@ -85,6 +87,8 @@ describe('startCluster', () => {
     const cluster = await startCluster({ home, isDisposable: true });
     const server = Number(fs.readFileSync(path.join(cluster.home, 'data/postmaster.pid'), 'utf8').split('\n')[0]);
     process.kill(server, 'SIGKILL');
+    // A signal is on its way for a moment; what is tried is what it leaves: a zombie, a lock file, children.
+    await until('the end of the server', () => processIdentity(server) === undefined, 10_000);
     const again = await startCluster({ home });
     try {
       expect(await answer(again.ownerUrl())).toBe('127.0.0.1');
