@@ -9,7 +9,7 @@ import { quietRun } from './quiet-run.mjs';
 await ensurePackages((command, args) => quietRun(command, args, { cwd: ROOT }));
 const folder = path.join(ROOT, 'test/bench');
 const words = process.argv.slice(2);
-const files = fs.existsSync(folder) ? fs.readdirSync(folder).filter((name) => name.endsWith('.ts')) : [];
+const files = fs.existsSync(folder) ? fs.readdirSync(folder).filter((name) => name.endsWith('.bench.ts')) : [];
 const chosen = files.filter((name) => words.length === 0 || words.some((word) => name.includes(word))).sort();
 if (chosen.length === 0) process.stdout.write('There is nothing to measure.\n');
 for (const name of chosen) {
