@@ -78,7 +78,8 @@ export class PhotoReader {
 
   private process(): ChildProcess {
     if (this.photosRead >= this.limits.photosPerProcess || this.child?.connected === false) this.discard();
-    this.child ??= startProcess();
+    // A killed process still reports when nobody is listening any more; unheard, that would end this one.
+    this.child ??= startProcess().on('error', () => undefined);
     return this.child;
   }
 
@@ -114,8 +115,6 @@ export class PhotoReader {
           clearTimeout(timer);
           signal?.removeEventListener('abort', onAbort);
           child.off('message', onMessage).off('exit', onExit).off('error', onError);
-          // A killed process still reports: nobody is listening any more.
-          child.on('error', () => undefined);
           act();
         };
         signal?.addEventListener('abort', onAbort, { once: true });
