@@ -1,6 +1,6 @@
 import type { StockRole } from '@foldwright/shared/part/part-document';
 import type { Database } from '../database/database';
-import { makeFullSizePrint } from '../documents/release-files';
+import { makeFullSizePrint } from '../documents/full-size-print';
 import type { FileAnswer } from '../http/file-answer';
 import { Problem } from '../http/problem';
 import type { Member } from '../http/visitor';

@@ -1,7 +1,9 @@
 import { createHash } from 'node:crypto';
 import type { PartDocument, StockRole } from '@foldwright/shared/part/part-document';
-import type { DocumentInput } from '../documents/release-files';
-import { makeDrawing, makeDxf, makeFullSizePrint } from '../documents/release-files';
+import type { DocumentInput } from '../documents/document-input';
+import { makeDxf } from '../documents/dxf';
+import { makeFullSizePrint } from '../documents/full-size-print';
+import { makeDrawing } from '../documents/part-drawing';
 import type { FileStore } from '../files/file-store';
 import type { Member } from '../http/visitor';
 import type { Draft } from '../models/draft';
