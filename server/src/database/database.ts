@@ -1,6 +1,6 @@
 import { Pool } from 'pg';
 import type { Transaction } from 'sequelize';
-import { QueryTypes, Sequelize } from 'sequelize';
+import { QueryTypes, Sequelize, Transaction as SequelizeTransaction } from 'sequelize';
 import type { Models } from '../models/all-models';
 import { defineModels } from '../models/all-models';
 import { retryOnConflict } from './retry-on-conflict';
@@ -32,6 +32,8 @@ export interface Database {
   readonly url: string;
   /** One transaction in one workshop; run again as a whole when the database asks for it. */
   inWorkshop<T>(workshopId: string, work: (scope: WorkshopScope) => Promise<T>): Promise<T>;
+  /** The same for reading several tables that have to fit together: all of them as they were at one moment. */
+  viewWorkshop<T>(workshopId: string, work: (scope: WorkshopScope) => Promise<T>): Promise<T>;
   /** One transaction that sees one person and the workshops that person belongs to. */
   forUser<T>(userId: string, work: (transaction: Transaction) => Promise<T>): Promise<T>;
   /** One transaction that may read, never write, across workshops. */
@@ -61,9 +63,13 @@ export function connectDatabase(options: DatabaseOptions): Database {
   pool.on('error', () => undefined);
   const models = defineModels(sequelize);
 
-  const inTransaction = <T>(settings: Readonly<Record<string, string>>, work: (tx: Transaction) => Promise<T>) =>
+  const inTransaction = <T>(
+    settings: Readonly<Record<string, string>>,
+    work: (tx: Transaction) => Promise<T>,
+    isolationLevel?: SequelizeTransaction.ISOLATION_LEVELS,
+  ) =>
     retryOnConflict(() =>
-      sequelize.transaction(async (transaction) => {
+      sequelize.transaction(isolationLevel === undefined ? {} : { isolationLevel }, async (transaction) => {
         const bind = Object.entries(settings).flat();
         const calls = Object.keys(settings).map((_, at) => `set_config($${2 * at + 1}, $${2 * at + 2}, true)`);
         await sequelize.query(`SELECT ${calls.join(', ')}`, { bind, transaction, type: QueryTypes.SELECT });
@@ -78,6 +84,12 @@ export function connectDatabase(options: DatabaseOptions): Database {
     inWorkshop: (workshopId, work) =>
       inTransaction({ 'foldwright.workshop': workshopId }, (transaction) =>
         work(scopeOf(models, workshopId, transaction)),
+      ),
+    viewWorkshop: (workshopId, work) =>
+      inTransaction(
+        { 'foldwright.workshop': workshopId },
+        (transaction) => work(scopeOf(models, workshopId, transaction)),
+        SequelizeTransaction.ISOLATION_LEVELS.REPEATABLE_READ,
       ),
     forUser: (userId, work) => inTransaction({ 'foldwright.user': userId }, work),
     asSystem: (_reason, work) =>

@@ -3,7 +3,7 @@ import type { Queue } from './queue';
 import { WORK_CHANNEL } from './queue';
 
 /** A worker that has not said for this long that it lives is taken for dead. Seconds. */
-export const SILENCE_SECONDS = 6;
+export const SILENCE_SECONDS = 5;
 
 /**
  * Give the queue back what dead workers had in hand, so that somebody takes it at once. Answers how much it was.

@@ -7,7 +7,7 @@ import { WORK_CHANNEL } from './queue';
 import { returnAbandonedWork } from './return-abandoned-work';
 import type { WorkHandler } from './work-handler';
 
-const BEAT_MS = 1500;
+const BEAT_MS = 1000;
 const PRUNE_MS = 10 * 60 * 1000;
 /** How often a worker looks by itself; normally it is told. */
 const LOOK_SECONDS = 2;

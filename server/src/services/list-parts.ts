@@ -30,7 +30,7 @@ async function latestRevisions(scope: WorkshopScope, parts: readonly Part[]): Pr
 
 /** The parts of the workshop by number, or those whose number or name holds the text. */
 export function listParts(database: Database, member: Member, search: string | undefined): Promise<PartSummary[]> {
-  return database.inWorkshop(member.workshopId, async (scope) => {
+  return database.viewWorkshop(member.workshopId, async (scope) => {
     const text = search?.trim() ?? '';
     const like = { [Op.iLike]: anywhere(text) };
     const parts = await scope.rows.parts.list({

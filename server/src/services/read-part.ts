@@ -7,7 +7,7 @@ import { loadPart } from './load-part';
 
 /** @throws Problem `not-found` */
 export function readPart(database: Database, member: Member, partId: string): Promise<PartDetail> {
-  return database.inWorkshop(member.workshopId, async (scope) => {
+  return database.viewWorkshop(member.workshopId, async (scope) => {
     const { row, nameOf } = await loadPart(scope, await scope.rows.parts.get(partId));
     return presentPart(row, canEditParts(member.role), nameOf);
   });

@@ -10,7 +10,7 @@ import { namesOfPeople } from './names-of-people';
 
 /** @throws Problem `not-found` */
 export function readPhoto(database: Database, member: Member, photoId: string): Promise<Photo> {
-  return database.inWorkshop(member.workshopId, async (scope) => {
+  return database.viewWorkshop(member.workshopId, async (scope) => {
     const photo = await scope.rows.photos.get(photoId);
     const [entry] = await withLatestJobs(scope, [photo]);
     return presentPhoto(photo, entry?.job ?? null, await namesOfPeople(scope, [photo.uploadedBy]));
@@ -28,7 +28,7 @@ export async function readPhotoImage(
   photoId: string,
   view: 'as-taken' | 'rectified',
 ): Promise<FileAnswer> {
-  const photo = await database.inWorkshop(member.workshopId, (scope) => scope.rows.photos.get(photoId));
+  const photo = await database.viewWorkshop(member.workshopId, (scope) => scope.rows.photos.get(photoId));
   const storedAs = view === 'as-taken' ? photo.displayStoredAs : photo.rectifiedStoredAs;
   if (storedAs === null) throw notFound();
   return {

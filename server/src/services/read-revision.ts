@@ -10,7 +10,7 @@ import { namesOfPeople } from './names-of-people';
 
 /** @throws Problem `not-found` */
 export function readRevision(database: Database, member: Member, revisionId: string): Promise<RevisionDetail> {
-  return database.inWorkshop(member.workshopId, async (scope) => {
+  return database.viewWorkshop(member.workshopId, async (scope) => {
     const revision = await scope.rows.revisions.get(revisionId);
     const part = await scope.rows.parts.get(revision.partId);
     const files = await scope.rows.revisionFiles.list({
@@ -44,7 +44,7 @@ export async function readRevisionFile(
 ): Promise<FileAnswer> {
   const paper = choice.kind === 'full-size-print' ? (choice.paper ?? 'A4') : 'none';
   const { kind, stock } = choice;
-  const row = await database.inWorkshop(member.workshopId, (scope) =>
+  const row = await database.viewWorkshop(member.workshopId, (scope) =>
     scope.rows.revisionFiles.findOne({ revisionId, kind, stock, paper }),
   );
   if (row === null) throw notFound();

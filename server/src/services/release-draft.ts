@@ -63,7 +63,7 @@ function refuseUnmakeable({ trial, production }: PartComputations): void {
   const blockers = [...new Map(all.map((finding) => [finding.id, finding])).values()];
   if (blockers.length === 0) return;
   throw new Problem('has-blockers', {
-    detail: blockers.map(({ title }) => title).join(' '),
+    detail: `${blockers[0]?.title ?? ''}${blockers.length > 1 ? `, and ${blockers.length - 1} more` : ''}.`,
     kept: 'The draft is as it was.',
     next: 'Mend what the checks name, then release.',
     extra: { findings: blockers },
