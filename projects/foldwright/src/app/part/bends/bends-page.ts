@@ -77,10 +77,16 @@ export class BendsPage {
   private readonly field = viewChild(LengthField);
 
   protected readonly firstFlangeMm = FIRST_FLANGE_MM;
-  protected readonly insets = { top: 56, right: 380, bottom: 74, left: 190 };
   protected readonly roles = ['trial', 'production'] as const satisfies readonly StockRole[];
   protected readonly sideLists = SIDE_LISTS;
   protected readonly side = signal<string | null>(null);
+  /** The turntable stands to the right of the drawing; the views stand to the left unless a list has pushed them out. */
+  protected readonly insets = computed(() => ({
+    top: 56,
+    right: 370,
+    bottom: 84,
+    left: this.side() === null ? 190 : 64,
+  }));
   protected readonly view = signal<View>('layout');
   protected readonly announcement = signal('');
   protected readonly views = computed(() => [
@@ -268,6 +274,12 @@ export class BendsPage {
     this.view.set(id === 'trial' || id === 'production' ? id : 'layout');
     this.editor.select(null);
     this.frame.chooseFinding(null);
+  }
+
+  /** A finding's note takes the place of the field. */
+  protected showFinding(id: string): void {
+    this.editor.select(null);
+    this.frame.chooseFinding(id);
   }
 
   protected toggleSide(id: string): void {

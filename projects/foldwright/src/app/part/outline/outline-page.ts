@@ -253,6 +253,12 @@ export class OutlinePage {
     this.frame.chooseFinding(null);
   }
 
+  /** A finding's note takes the place of the field. */
+  protected showFinding(id: string): void {
+    this.editor.select(null);
+    this.frame.chooseFinding(id);
+  }
+
   protected toggleSide(id: string): void {
     this.side.update((current) => (current === id ? null : id));
   }

@@ -18,6 +18,11 @@ export class QuoteCard {
   /** The quantity to order. */
   readonly ordered = output<number>();
 
+  /** The quantity whose order is the one call to act: ten, as for a kit's first batch, or the smallest there is. */
+  protected readonly advised = computed(() => {
+    const quantities = this.quote().breaks.map(({ quantity }) => quantity);
+    return quantities.includes(10) ? 10 : Math.min(...quantities);
+  });
   protected readonly validity = computed(() => {
     const { validUntil } = this.quote();
     if (validUntil === null) return null;

@@ -66,6 +66,7 @@ export class DrawingBoard {
 
   private readonly surface = viewChild.required<ElementRef<SVGSVGElement>>('surface');
   private readonly pointers = new BoardPointers();
+  private isFitted = false;
 
   protected readonly id = `fw-board-${nextId++}`;
   protected readonly isSpaceDown = signal(false);
@@ -100,6 +101,7 @@ export class DrawingBoard {
     const size = this.size();
     if (size === null) return;
     // A narrow board has no room beside the drawing for anything but its dimensions.
+    this.isFitted = true;
     const insets = size.widthPx < NARROW_PX ? NARROW_INSETS : this.insets();
     this.viewport.set(fitBounds(this.drawing().bounds, size.widthPx, size.heightPx, insets));
   }
@@ -108,6 +110,7 @@ export class DrawingBoard {
   zoom(factor: number): void {
     const size = this.size();
     if (size === null) return;
+    this.isFitted = false;
     this.viewport.update((view) => zoomAt(view, factor, { xPx: size.widthPx / 2, yPx: size.heightPx / 2 }));
   }
 
@@ -137,6 +140,7 @@ export class DrawingBoard {
 
   protected turnWheel(event: WheelEvent): void {
     event.preventDefault();
+    this.isFitted = false;
     const { atPx } = this.read(event);
     if (event.shiftKey) {
       this.viewport.update((view) => panBy(view, -event.deltaY - event.deltaX, 0));
@@ -188,6 +192,7 @@ export class DrawingBoard {
 
   private act(actions: readonly PointerAction[]): void {
     for (const action of actions) {
+      if (action.kind !== 'event') this.isFitted = false;
       if (action.kind === 'pan') this.viewport.update((view) => panBy(view, action.xPx, action.yPx));
       else if (action.kind === 'zoom') this.viewport.update((view) => zoomAt(view, action.factor, action.at));
       else if (this.isInteractive()) this.acted.emit(action.event);
@@ -198,9 +203,9 @@ export class DrawingBoard {
     if (widthPx === 0 || heightPx === 0) return;
     const before = this.size();
     this.size.set({ widthPx, heightPx });
-    if (before === null) this.fit();
+    // What shows all goes on showing all; a view that a hand chose keeps its middle.
+    if (before === null || this.isFitted) this.fit();
     else {
-      // The middle of the board keeps showing the same place.
       this.viewport.update((view) => panBy(view, (widthPx - before.widthPx) / 2, (heightPx - before.heightPx) / 2));
     }
   }

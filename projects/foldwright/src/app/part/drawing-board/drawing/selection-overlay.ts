@@ -2,10 +2,11 @@ import type { Layout } from '@foldwright/shared/bending/layout';
 import type { Point } from '@foldwright/shared/geometry/point';
 import { pointAt, tangentAt } from '@foldwright/shared/geometry/segment';
 import { distance, turnRight } from '@foldwright/shared/geometry/vector';
+import { roundedCorner } from '@foldwright/shared/part/outline-edge-sizes';
 import { findHoleDiameterMm } from '@foldwright/shared/stock/hole-diameter';
 import type { BoardOverlay } from '../canvas/board-overlay';
 import { type EntityRef, isSameEntity } from '../geometry/entity';
-import { edgesOfLayout, findBend, findEdge, findFeature } from '../geometry/layout-edges';
+import { type PlacedEdge, edgesOfLayout, findBend, findEdge, findFeature } from '../geometry/layout-edges';
 import { circlePath, obroundPath, openPath } from '../geometry/svg-path';
 import { SNAP_WORDS } from '../snapping/snap';
 import type { EditorState } from '../tools/editor';
@@ -105,7 +106,9 @@ export function extentAlongRule(
   switch (ref.kind) {
     case 'edge': {
       const placed = findEdge(layout, ref.id);
-      return placed === null ? null : span(placed.segment.from, placed.segment.to, pointAt(placed.segment, 0.5));
+      if (placed === null) return null;
+      const { from, to } = measuredEnds(placed);
+      return span(from, to, pointAt(placed.segment, 0.5));
     }
     case 'vertex': {
       const placed = findEdge(layout, ref.id);
@@ -127,6 +130,15 @@ export function extentAlongRule(
   }
 }
 
+/** A rounded corner counts as the sharp one it replaces, as in the length that is typed. */
+function measuredEnds({ loop, index, segment }: PlacedEdge): { readonly from: Point; readonly to: Point } {
+  if (segment.kind === 'arc') return segment;
+  return {
+    from: roundedCorner(loop, index - 1) ?? segment.from,
+    to: roundedCorner(loop, index + 1) ?? segment.to,
+  };
+}
+
 function middle(a: Point, b: Point): Point {
   return { x: (a.x + b.x) / 2, y: (a.y + b.y) / 2 };
 }
@@ -145,8 +157,9 @@ function measureEnds(layout: Layout, edgeId: string, viewport: Viewport): Measur
   if (placed === null || distance(placed.segment.from, placed.segment.to) === 0) return null;
   const outward = turnRight(tangentAt(placed.segment, 0.5));
   const out = { xPx: outward.x, yPx: -outward.y };
-  const from = toScreen(viewport, placed.segment.from);
-  const to = toScreen(viewport, placed.segment.to);
+  const measured = measuredEnds(placed);
+  const from = toScreen(viewport, measured.from);
+  const to = toScreen(viewport, measured.to);
   const shift = (point: ScreenPoint): ScreenPoint => ({
     xPx: point.xPx + out.xPx * MEASURE_OFFSET_PX,
     yPx: point.yPx + out.yPx * MEASURE_OFFSET_PX,
