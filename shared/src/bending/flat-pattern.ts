@@ -94,10 +94,8 @@ export function unfold(
     return { ok: false, problems: [overlapping(creases)] };
   const crossed = boundary.filter((loop) => loop !== outer).map(clockwise);
   const openings = placed.flatMap(({ all }) => all);
-  if (findCrossings([outer, ...crossed], COINCIDENT_MM).length > 0)
-    return { ok: false, problems: [overlapping(creases)] };
-  const overEdge = openingsOverEdges([outer, ...crossed], openings);
-  if (overEdge !== null) return { ok: false, problems: [overEdge] };
+  const overlap = overlapInFlat([outer, ...crossed], openings, creases);
+  if (overlap !== null) return { ok: false, problems: [overlap] };
   return {
     ok: true,
     unfolded: {
@@ -295,13 +293,18 @@ function overlapping(creases: readonly Crease[]): DevelopmentProblem {
   };
 }
 
-function openingsOverEdges(
+function overlapInFlat(
   boundaries: readonly Loop[],
   openings: readonly { readonly id: string; readonly loop: Loop }[],
+  creases: readonly Crease[],
 ): DevelopmentProblem | null {
   const crossings = findCrossings([...boundaries, ...openings.map(({ loop }) => loop)], COINCIDENT_MM);
   if (crossings.length === 0) return null;
   const indices = crossings.flatMap(({ first, second }) => [first.loopIndex, second.loopIndex]);
+  const isOfPanels = crossings.some(
+    ({ first, second }) => first.loopIndex < boundaries.length && second.loopIndex < boundaries.length,
+  );
+  if (isOfPanels) return overlapping(creases);
   const ids = indices.flatMap((index) => openings[index - boundaries.length]?.id ?? []);
   const message = 'In the flat pattern these openings run over an edge, a relief or each other.';
   return { code: 'outlineNotSimple', message, ids: [...new Set(ids)] };
