@@ -26,7 +26,7 @@ const DISPLAY_SIDE_PX = 2400;
 const MAX_RASTER_SIDE = 2400;
 /** Long side of the picture in which markers are looked for, pixels. */
 const SEARCH_SIDE_PX = 1340;
-const MAX_BLUR_PX = 4.5;
+const MAX_BLUR_PX = 3;
 const MAX_TILT_DEG = 50;
 /** Edges of markers that miss the flat sheet by more than this mean that it is not flat, mm. */
 const MAX_SHEET_MISS_MM = 0.3;
