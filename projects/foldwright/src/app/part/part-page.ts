@@ -9,6 +9,7 @@ import { OrdersApi } from '../api/orders-api';
 import { Notices } from '../api/notices';
 import { ComputedParts } from './computed-parts';
 import { knownPrices } from './known-prices';
+import { startDraftWords } from './next-letter';
 import { PartCard } from './part-card/part-card';
 import { PartRoad } from './part-road';
 import { type PartStep, isPartStep } from './part-steps';
@@ -34,6 +35,7 @@ export class PartPage {
   protected readonly isCardOpen = signal(false);
   protected readonly isStarting = signal(false);
   protected readonly latestRevision = computed(() => this.store.detail()?.revisions[0] ?? null);
+  protected readonly startWords = computed(() => startDraftWords(this.latestRevision()?.letter ?? ''));
   protected readonly prices = computed(() => knownPrices(this.quotes.value()?.quotes ?? []));
   protected readonly state = computed(() => `draft of ${this.store.letter() ?? ''}`);
   protected readonly foot = computed(() => {

@@ -65,9 +65,15 @@ export class OutlinePage {
   private readonly board = viewChild(DrawingBoard);
   private readonly field = viewChild(LengthField);
 
-  protected readonly insets = { top: 62, right: 110, bottom: 84, left: 210 };
   protected readonly sideLists = SIDE_LISTS;
   protected readonly side = signal<string | null>(null);
+  /** An open list has taken the words at the left out of the board. */
+  protected readonly insets = computed(() => ({
+    top: 62,
+    right: 90,
+    bottom: 84,
+    left: this.side() === null ? 210 : 84,
+  }));
   protected readonly announcement = signal('');
   protected readonly layout = computed<Layout | null>(() => this.editor.drawn()?.layout ?? null);
   protected readonly drawing = computed(() => {

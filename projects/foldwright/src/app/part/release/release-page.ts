@@ -16,9 +16,9 @@ import { DraftsApi } from '../../api/drafts-api';
 import { Notices } from '../../api/notices';
 import { newIdempotencyKey } from '../../api/api-client';
 import { ComputedParts } from '../computed-parts';
+import { startDraftWords } from '../next-letter';
 import { PartRoad } from '../part-road';
 import { PartStore } from '../part-store';
-import { nextLetter } from './next-letter';
 import { ReleasedRevision } from './released-revision';
 
 /** The release step: what will be frozen and what has to be accepted first; afterwards the revision with its files and orders. */
@@ -69,10 +69,7 @@ export class ReleasePage {
     [this.parts.trial(), this.parts.production()].flatMap((part) => (part === null ? [] : [part])),
   );
   protected readonly latest = computed(() => this.store.detail()?.revisions[0] ?? null);
-  protected readonly startWords = computed(() => {
-    const next = nextLetter(this.latest()?.letter ?? '');
-    return next === null ? 'Start the next draft' : `Start draft ${next}`;
-  });
+  protected readonly startWords = computed(() => startDraftWords(this.latest()?.letter ?? ''));
   /** Why the call to act can't be used yet, in words; null when it can. */
   protected readonly waitingFor = computed(() => {
     if (this.blockers().length > 0) return 'Mend what can’t be made first.';

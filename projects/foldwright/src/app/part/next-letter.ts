@@ -8,3 +8,9 @@ export function nextLetter(letter: string): string | null {
   if (last < LETTERS.length - 1) return letter.slice(0, -1) + LETTERS.charAt(last + 1);
   return letter.length === 1 ? 'AA' : `${nextLetter(letter.slice(0, -1)) ?? ''}A`;
 }
+
+/** The button that starts the draft after a revision: "Start draft B". */
+export function startDraftWords(letter: string): string {
+  const next = nextLetter(letter);
+  return next === null ? 'Start the next draft' : `Start draft ${next}`;
+}
