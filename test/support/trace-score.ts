@@ -70,7 +70,8 @@ function radiusOf(arc: ScoredArc): number {
 }
 
 function samplesOf(primitive: ScoredPrimitive): readonly Pair[] {
-  const length = primitive.kind === 'line' ? between(primitive.from, primitive.to) : sweepOf(primitive) * radiusOf(primitive);
+  const length =
+    primitive.kind === 'line' ? between(primitive.from, primitive.to) : sweepOf(primitive) * radiusOf(primitive);
   const count = Math.max(1, Math.ceil(length / STEP_MM));
   return Array.from({ length: count }, (_, k): Pair => {
     const share = (k + 0.5) / count;
@@ -78,7 +79,8 @@ function samplesOf(primitive: ScoredPrimitive): readonly Pair[] {
       const { from, to } = primitive;
       return [from[0] + (to[0] - from[0]) * share, from[1] + (to[1] - from[1]) * share];
     }
-    const angle = angleFrom(primitive.centre, primitive.from) + (primitive.clockwise ? -1 : 1) * sweepOf(primitive) * share;
+    const angle =
+      angleFrom(primitive.centre, primitive.from) + (primitive.clockwise ? -1 : 1) * sweepOf(primitive) * share;
     const radius = radiusOf(primitive);
     return [primitive.centre[0] + radius * Math.cos(angle), primitive.centre[1] + radius * Math.sin(angle)];
   });
@@ -102,7 +104,10 @@ export function distanceTo(primitive: ScoredPrimitive, point: Pair): number {
 }
 
 function distanceToAny(primitives: readonly ScoredPrimitive[], point: Pair): number {
-  return primitives.reduce((least, primitive) => Math.min(least, distanceTo(primitive, point)), Number.POSITIVE_INFINITY);
+  return primitives.reduce(
+    (least, primitive) => Math.min(least, distanceTo(primitive, point)),
+    Number.POSITIVE_INFINITY,
+  );
 }
 
 function distances(from: readonly ScoredPrimitive[], to: readonly ScoredPrimitive[]): readonly number[] {

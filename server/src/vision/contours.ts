@@ -76,7 +76,7 @@ export function traceContours(mask: Uint8Array, raster: PageRaster): readonly Co
   const contours: Point[][] = [];
   for (const start of [...nextSide.keys()]) {
     const contour: Point[] = [];
-    for (let side: number | undefined = start; side !== undefined; ) {
+    for (let side: number | undefined = start; side !== undefined;) {
       const next: number | undefined = nextSide.get(side);
       if (next === undefined) break;
       nextSide.delete(side);

@@ -39,7 +39,10 @@ function darkMask({ widthPx, heightPx, grey }: GreyPicture): Uint8Array {
       const left = Math.max(x - reach, 0);
       const right = Math.min(x + reach + 1, widthPx);
       const sum =
-        (integral[bottom + right] ?? 0) - (integral[bottom + left] ?? 0) - (integral[top + right] ?? 0) + (integral[top + left] ?? 0);
+        (integral[bottom + right] ?? 0) -
+        (integral[bottom + left] ?? 0) -
+        (integral[top + right] ?? 0) +
+        (integral[top + left] ?? 0);
       const mean = sum / (rows * (right - left));
       const value = grey[y * widthPx + x] ?? 0;
       mask[y * widthPx + x] = value < mean - Math.max(DARKER_BY, DARKER_BY_SHARE * mean) ? 1 : 0;
@@ -79,7 +82,12 @@ function darkPatches(mask: Uint8Array, widthPx: number, heightPx: number): reado
     }
     const width = maxX - minX + 1;
     if (Math.min(width, rows.size) < MIN_SIDE_PX || Math.max(width, rows.size) > maxSide) continue;
-    patches.push([...rows].flatMap(([y, [left, right]]) => [{ x: left, y }, { x: right, y }]));
+    patches.push(
+      [...rows].flatMap(([y, [left, right]]) => [
+        { x: left, y },
+        { x: right, y },
+      ]),
+    );
   }
   return patches;
 }

@@ -48,7 +48,11 @@ export async function decodePhoto(bytes: Buffer): Promise<DecodedPhoto> {
       throw new TraceRefusal('notAPicture', 'The picture is too small to be measured.');
     }
     return {
-      picture: { widthPx: info.width, heightPx: info.height, rgb: new Uint8Array(data.buffer, data.byteOffset, data.length) },
+      picture: {
+        widthPx: info.width,
+        heightPx: info.height,
+        rgb: new Uint8Array(data.buffer, data.byteOffset, data.length),
+      },
       focal35Mm: metadata.exif ? focalLength35Mm(metadata.exif) : null,
     };
   } catch (error) {

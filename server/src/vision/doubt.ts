@@ -23,18 +23,21 @@ export interface Doubt {
 const COVERAGE = 2;
 /** No edge of board or sheet is straighter or sharper than this, mm. */
 const LEAST_EDGE_MM = 0.02;
+/** How far a faint edge may be off, mm. */
+const FAINT_EDGE_MM = 0.15;
 
 /** Doubt about one stretch of the boundary: its sources added in squares. */
 export function doubtOf(points: readonly BoundaryPoint[], residualMm: number, sources: DoubtSources): Doubt {
   const count = Math.max(points.length, 1);
   const slope = points.reduce((sum, point) => sum + Math.abs(point.slope), 0) / count;
   const footShare = points.filter((point) => point.heightMm === 0).length / count;
+  const faintShare = points.filter((point) => point.isFaint).length / count;
   const parts = {
     camera: sources.cameraMm,
     thickness: sources.thicknessMm * slope,
     print: (sources.printShare * sources.sizeMm) / 2,
     shadow: sources.shadowMm * (0.5 + 0.5 * footShare),
-    edge: Math.max(residualMm, LEAST_EDGE_MM),
+    edge: Math.hypot(Math.max(residualMm, LEAST_EDGE_MM), FAINT_EDGE_MM * faintShare),
   };
   let largest: Doubt['largest'] = 'camera';
   let squares = 0;

@@ -8,8 +8,10 @@ export interface ProfileEdge {
   readonly offsetMm: number;
   /** Share of the profile's variation that the model leaves unexplained, 0 to 1. */
   readonly unexplained: number;
-  /** Step of light over the edge in linear units, the largest of the channels. */
+  /** Step of lightness or tint over the edge, the largest of them, in linear units. */
   readonly step: number;
+  /** That step over the spread of what the model leaves unexplained. */
+  readonly significance: number;
 }
 
 export interface ProfileRequest {
@@ -23,6 +25,8 @@ export interface ProfileRequest {
   /** How far to look inwards and outwards, mm. */
   readonly inwardMm: number;
   readonly outwardMm: number;
+  /** For edges without a step in lightness: tint counts more, and the mean of profiles side by side is taken. */
+  readonly isFaint: boolean;
 }
 
 const STEP_MM = 0.08;
@@ -31,7 +35,7 @@ const FACE_SPAN_MM = 0.45;
 /** Walls are followed inwards only so far: what lies deeper does not move the foot. */
 const MAX_WALL_MM = 3;
 const FINE_STEPS = 7;
-const MAX_SAMPLES = 140;
+const MAX_SAMPLES = 200;
 
 const NORMAL_TABLE = Float64Array.from({ length: 801 }, (_, k) => gaussianShare((k - 400) / 100));
 
@@ -55,6 +59,10 @@ function blurredStep(s: number, blurMm: number): number {
 const LEVELS = 4;
 const CHANNELS = 3;
 const RIDGE = 1e-4;
+const TINT_WEIGHT = 3;
+/** Faint edges are averaged this far both ways along the edge, mm, in so many steps each way. */
+const FAINT_SPAN_MM = 1.2;
+const SIDES = 4;
 
 // One photo is read at a time and this runs some hundred thousand times for it: its working space is laid out once.
 const samples = new Float32Array(MAX_SAMPLES * CHANNELS);
@@ -70,7 +78,8 @@ function factorise(matrix: Float64Array): void {
     for (let column = 0; column <= row; column++) {
       let sum = matrix[row * LEVELS + column] ?? 0;
       for (let k = 0; k < column; k++) sum -= (matrix[row * LEVELS + k] ?? 0) * (matrix[column * LEVELS + k] ?? 0);
-      matrix[row * LEVELS + column] = row === column ? Math.sqrt(Math.max(sum, 1e-12)) : sum / (matrix[column * LEVELS + column] ?? 1);
+      matrix[row * LEVELS + column] =
+        row === column ? Math.sqrt(Math.max(sum, 1e-12)) : sum / (matrix[column * LEVELS + column] ?? 1);
     }
   }
 }
@@ -125,6 +134,45 @@ function sumOfSquares(count: number): number {
   return sum;
 }
 
+/**
+ * Red, green and blue become lightness and two tints, the tints counted more: brushing, mottling and shadows change
+ * lightness, while in a shadow as light as the face the tint alone still shows the edge.
+ */
+function spreadTint(at: number): void {
+  const red = samples[at] ?? 0;
+  const green = samples[at + 1] ?? 0;
+  const blue = samples[at + 2] ?? 0;
+  samples[at] = red + green + blue;
+  samples[at + 1] = TINT_WEIGHT * (red - green);
+  samples[at + 2] = TINT_WEIGHT * (blue - green);
+}
+
+/** One sample of the profile; false beyond the photo. */
+function sampleAt(picture: Picture, view: View, x: number, y: number, k: number): boolean {
+  const at = view.toPixel(x, y);
+  if (!isInside(picture, at.x, at.y)) return false;
+  sampleLinear(picture, at.x, at.y, samples, k * CHANNELS);
+  return true;
+}
+
+/** The mean of samples along the edge, its tint brought out; false beyond the photo. */
+function sampleAcross(picture: Picture, view: View, x: number, y: number, normal: Point, k: number): boolean {
+  let [red, green, blue] = [0, 0, 0];
+  for (let side = -SIDES; side <= SIDES; side++) {
+    const along = (side * FAINT_SPAN_MM) / SIDES;
+    if (!sampleAt(picture, view, x - normal.y * along, y + normal.x * along, k)) return false;
+    red += samples[k * CHANNELS] ?? 0;
+    green += samples[k * CHANNELS + 1] ?? 0;
+    blue += samples[k * CHANNELS + 2] ?? 0;
+  }
+  const share = 1 / (2 * SIDES + 1);
+  samples[k * CHANNELS] = red * share;
+  samples[k * CHANNELS + 1] = green * share;
+  samples[k * CHANNELS + 2] = blue * share;
+  spreadTint(k * CHANNELS);
+  return true;
+}
+
 function variation(count: number): number {
   let sum = 0;
   for (let c = 0; c < 3; c++) {
@@ -148,9 +196,10 @@ export function findProfileEdge(picture: Picture, view: View, request: ProfileRe
   const count = Math.min(MAX_SAMPLES, Math.ceil((outwardMm + GROUND_SPAN_MM - firstS) / STEP_MM) + 1);
   for (let k = 0; k < count; k++) {
     const s = firstS + k * STEP_MM;
-    const at = view.toPixel(origin.x + normal.x * s, origin.y + normal.y * s);
-    if (!isInside(picture, at.x, at.y)) return null;
-    sampleLinear(picture, at.x, at.y, samples, k * 3);
+    const x = origin.x + normal.x * s;
+    const y = origin.y + normal.y * s;
+    if (!(request.isFaint ? sampleAcross(picture, view, x, y, normal, k) : sampleAt(picture, view, x, y, k)))
+      return null;
   }
   const seen = variation(count);
   if (seen < 1e-6) return null;
@@ -191,5 +240,6 @@ export function findProfileEdge(picture: Picture, view: View, request: ProfileRe
   for (let c = 0; c < CHANNELS; c++) {
     step = Math.max(step, Math.abs((levels[c * LEVELS] ?? 0) - (levels[c * LEVELS + behind] ?? 0)));
   }
-  return { offsetMm: edge, unexplained: Math.max(sumOfSquares(count) - explained, 0) / seen, step };
+  const rest = Math.max(sumOfSquares(count) - explained, 1e-9);
+  return { offsetMm: edge, unexplained: rest / seen, step, significance: step / Math.sqrt(rest / (count * CHANNELS)) };
 }

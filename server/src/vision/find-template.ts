@@ -22,9 +22,9 @@ const MAX_TINT_OFF = 0.12;
 const SHADOW_SPREAD = 0.25;
 /** Where tint alone tells template from ground, shadows of any depth are allowed for. */
 const DEEP_SHADOW_SPREAD = 1;
-const TINT_TELLS = 3;
+const TINT_TELLS = 2.2;
 const LIGHT_SPREAD = 0.08;
-const TINT_SPREAD = 0.02;
+const TINT_SPREAD = 0.012;
 const MIN_CONTRAST = 2.2;
 const MIN_TEMPLATE_MM2 = 150;
 const MIN_OPENING_MM2 = 3;
@@ -105,7 +105,8 @@ function floodGround(field: Field, plan: GroundPlan): Uint8Array {
   const tint2 = medianOf(field, plan.seeds, 2);
   const light = medianOf(field, plan.seeds, 0);
   const isOwnTint = (cell: number): boolean =>
-    Math.abs((values[cell * 3 + 1] ?? 0) - tint1) < MAX_TINT_OFF && Math.abs((values[cell * 3 + 2] ?? 0) - tint2) < MAX_TINT_OFF;
+    Math.abs((values[cell * 3 + 1] ?? 0) - tint1) < MAX_TINT_OFF &&
+    Math.abs((values[cell * 3 + 2] ?? 0) - tint2) < MAX_TINT_OFF;
   const ground = new Uint8Array(plan.region.length);
   const stack: number[] = [];
   for (let cell = 0; cell < ground.length; cell++) {
@@ -117,7 +118,8 @@ function floodGround(field: Field, plan: GroundPlan): Uint8Array {
   }
   const isEdge = edgeCells(field, plan.seeds);
   const visit = (to: number): void => {
-    if (plan.region[to] !== 1 || plan.printed[to] === 1 || ground[to] === 1 || isEdge[to] === 1 || !isOwnTint(to)) return;
+    if (plan.region[to] !== 1 || plan.printed[to] === 1 || ground[to] === 1 || isEdge[to] === 1 || !isOwnTint(to))
+      return;
     ground[to] = 1;
     stack.push(to);
   };
@@ -184,12 +186,19 @@ function discriminant(ground: Spread, template: Spread, shadowSpread: number): D
 }
 
 /** Zero on the ground, one on the template, against a field that says what ground would look like here. */
-function scoreCells(field: Field, reference: Field, offset: readonly [number, number, number], d: Discriminant): Float32Array {
+function scoreCells(
+  field: Field,
+  reference: Field,
+  offset: readonly [number, number, number],
+  d: Discriminant,
+): Float32Array {
   const score = new Float32Array(field.columns * field.rows);
   for (let cell = 0; cell < score.length; cell++) {
     let sum = 0;
     for (let k = 0; k < 3; k++) {
-      sum += (d.weights[k] ?? 0) * ((field.values[cell * 3 + k] ?? 0) - (reference.values[cell * 3 + k] ?? 0) + (offset[k] ?? 0));
+      sum +=
+        (d.weights[k] ?? 0) *
+        ((field.values[cell * 3 + k] ?? 0) - (reference.values[cell * 3 + k] ?? 0) + (offset[k] ?? 0));
     }
     score[cell] = Math.min(Math.max(sum, -1), 2);
   }
@@ -211,7 +220,10 @@ function refuseOffSheet(patch: Uint8Array, plan: GroundPlan, columns: number): v
   for (let cell = 0; cell < patch.length; cell++) {
     if (patch[cell] !== 1) continue;
     const isAtRim =
-      plan.region[cell - 1] !== 1 || plan.region[cell + 1] !== 1 || plan.region[cell - columns] !== 1 || plan.region[cell + columns] !== 1;
+      plan.region[cell - 1] !== 1 ||
+      plan.region[cell + 1] !== 1 ||
+      plan.region[cell - columns] !== 1 ||
+      plan.region[cell + columns] !== 1;
     if (isAtRim) touching++;
   }
   if (touching > 8) throw new TraceRefusal('templateOffSheet', 'The template reaches over the edge of the sheet.');
@@ -245,7 +257,10 @@ export function findTemplate(raster: PageRaster, plan: GroundPlan): TemplateMask
   const soft = smoothed(raw, 1);
   const flooded = floodGround(soft, plan);
   const groundLook = spreadField(soft, flooded, 2);
-  const rough = maskOf(flooded.length, (cell) => plan.region[cell] === 1 && flooded[cell] !== 1 && plan.printed[cell] !== 1);
+  const rough = maskOf(
+    flooded.length,
+    (cell) => plan.region[cell] === 1 && flooded[cell] !== 1 && plan.printed[cell] !== 1,
+  );
   const reach = Math.max(1, Math.round(0.75 * perMm));
   const opened = dilate(erode(rough, columns, rows, reach), columns, rows, reach);
   const first = singleTemplate(opened, raster);
@@ -260,7 +275,10 @@ export function findTemplate(raster: PageRaster, plan: GroundPlan): TemplateMask
   const outside = scoreCells(soft, groundLook, [0, 0, 0], separating);
   const isTemplate = (score: Float32Array, cell: number): boolean =>
     plan.region[cell] === 1 && plan.printed[cell] !== 1 && (score[cell] ?? 0) > 0.5;
-  let mask = singleTemplate(maskOf(outside.length, (cell) => isTemplate(outside, cell)), raster);
+  let mask = singleTemplate(
+    maskOf(outside.length, (cell) => isTemplate(outside, cell)),
+    raster,
+  );
   for (let round = 0; round < 2; round++) {
     const body = filled(mask, columns, rows);
     const inner = erode(mask, columns, rows, 2);
@@ -268,11 +286,16 @@ export function findTemplate(raster: PageRaster, plan: GroundPlan): TemplateMask
     const inside = scoreCells(soft, templateLook, template.mean, separating);
     const score = outside.slice();
     for (let cell = 0; cell < score.length; cell++) if (body[cell] === 1) score[cell] = inside[cell] ?? 0;
-    mask = singleTemplate(maskOf(score.length, (cell) => isTemplate(score, cell)), raster);
+    mask = singleTemplate(
+      maskOf(score.length, (cell) => isTemplate(score, cell)),
+      raster,
+    );
   }
   refuseOffSheet(mask, plan, columns);
   const openings = labelPatches(mask, columns, rows, 0);
-  const tooSmall = new Set(openings.patches.filter((p) => p.cells < MIN_OPENING_MM2 * perMm * perMm).map((p) => p.label));
+  const tooSmall = new Set(
+    openings.patches.filter((p) => p.cells < MIN_OPENING_MM2 * perMm * perMm).map((p) => p.label),
+  );
   return {
     mask: maskOf(mask.length, (cell) => mask[cell] === 1 || tooSmall.has(openings.labels[cell] ?? 0)),
     contrast: separating.contrast,

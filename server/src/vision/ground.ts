@@ -16,7 +16,13 @@ const RIM_INSET_MM = 1.5;
 const SEED_BAND_MM = 2;
 
 /** Writes `value` into every cell whose centre lies in the box. */
-function paint(mask: Uint8Array, raster: PageRaster, box: PageBox, scale: readonly [number, number], value: 0 | 1): void {
+function paint(
+  mask: Uint8Array,
+  raster: PageRaster,
+  box: PageBox,
+  scale: readonly [number, number],
+  value: 0 | 1,
+): void {
   const { columns, rows, perMm, heightMm } = raster;
   const firstColumn = Math.max(0, Math.ceil(box.x * scale[0] * perMm - 0.5));
   const lastColumn = Math.min(columns - 1, Math.floor((box.x + box.widthMm) * scale[0] * perMm - 0.5));
@@ -69,16 +75,20 @@ export function groundOfScaleSheet(
   }
   const bare = sheet.markers.filter((marker) => seenMarkers.has(marker.id));
   const square = (inflateMm: number): readonly PageBox[] =>
-    bare.map(({ x, y }) =>
-      inset({ x, y, widthMm: MARKER_SIDE_MM, heightMm: MARKER_SIDE_MM }, -inflateMm),
-    );
+    bare.map(({ x, y }) => inset({ x, y, widthMm: MARKER_SIDE_MM, heightMm: MARKER_SIDE_MM }, -inflateMm));
   const words = sheet.wordBoxes.filter((box) => {
     const left = bare.some((m) => m.x < box.x && box.x - m.x < 2 * MARKER_SIDE_MM && Math.abs(m.y - box.y) < 1);
     const right = bare.some((m) => m.x > box.x && m.x - box.x < 4 * MARKER_SIDE_MM && Math.abs(m.y - box.y) < 1);
     return left && right;
   });
   const rulers = sheet.rulers.map((ruler) => inset(ruler, -0.8));
-  return plan(raster, inset(page, RIM_INSET_MM), square(QUIET_ZONE_MM), [...square(0.6), ...words, ...rulers], printScale);
+  return plan(
+    raster,
+    inset(page, RIM_INSET_MM),
+    square(QUIET_ZONE_MM),
+    [...square(0.6), ...words, ...rulers],
+    printScale,
+  );
 }
 
 /** The ground of anything else that is flat and even: bare along its rim. */

@@ -70,7 +70,7 @@ export interface CodeSearch {
  */
 function growClosedSet(nextBits: () => number, distance: number, patience: number): readonly number[] {
   let words = [0];
-  for (let failures = 0; failures < patience; ) {
+  for (let failures = 0; failures < patience;) {
     const seedWord = nextBits() & ((1 << CELLS) - 1) & ~CENTRE_BIT;
     let grown = words;
     for (const turn of codeTurns(seedWord)) {

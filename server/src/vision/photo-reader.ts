@@ -83,7 +83,11 @@ export class PhotoReader {
     return this.child;
   }
 
-  private async readNow(bytes: Buffer, options: ReadingOptions, { onStage, signal }: ReadControls): Promise<PhotoReading> {
+  private async readNow(
+    bytes: Buffer,
+    options: ReadingOptions,
+    { onStage, signal }: ReadControls,
+  ): Promise<PhotoReading> {
     signal?.throwIfAborted();
     const child = this.process();
     child.ref();

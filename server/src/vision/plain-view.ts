@@ -20,7 +20,12 @@ function squareView(picture: Picture, perMm: number): View {
 function sceneFromAbove(picture: Picture, perMm: number): Pick<Scene, 'view' | 'widthMm' | 'heightMm' | 'ground'> {
   const widthMm = picture.widthPx / perMm;
   const heightMm = picture.heightPx / perMm;
-  return { view: squareView(picture, perMm), widthMm, heightMm, ground: (raster) => groundOfPlainArea(raster, widthMm, heightMm) };
+  return {
+    view: squareView(picture, perMm),
+    widthMm,
+    heightMm,
+    ground: (raster) => groundOfPlainArea(raster, widthMm, heightMm),
+  };
 }
 
 /**
@@ -47,7 +52,9 @@ export function plainView(picture: Picture, focal35Mm: number | null, scale: Pla
       ...sceneFromAbove(picture, distancePx / scale.distanceMm),
       method: 'two-points',
       tiltDeg: 0,
-      warnings: ['Rough: two points cannot tell how far the camera leaned. Three degrees already cost half a millimetre.'],
+      warnings: [
+        'Rough: two points cannot tell how far the camera leaned. Three degrees already cost half a millimetre.',
+      ],
       doubt: { cameraMm: 0.5, printShare: 0.01 },
     };
   }

@@ -16,7 +16,11 @@ interface Pixels {
 }
 
 async function smallPixels(widthPx: number): Promise<Pixels> {
-  const { data, info } = await sharp(FIXTURE).resize({ width: widthPx }).removeAlpha().raw().toBuffer({ resolveWithObject: true });
+  const { data, info } = await sharp(FIXTURE)
+    .resize({ width: widthPx })
+    .removeAlpha()
+    .raw()
+    .toBuffer({ resolveWithObject: true });
   return { width: info.width, height: info.height, rgb: data };
 }
 
@@ -64,7 +68,9 @@ async function refusalOf(bytes: Buffer): Promise<TraceRefusalCode | string> {
 }
 
 function flat(background: { r: number; g: number; b: number }, width = 1200, height = 900): Promise<Buffer> {
-  return sharp({ create: { width, height, channels: 3, background } }).jpeg().toBuffer();
+  return sharp({ create: { width, height, channels: 3, background } })
+    .jpeg()
+    .toBuffer();
 }
 
 function places(trace: Trace): readonly number[] {
@@ -130,7 +136,12 @@ describe('reading a photo', () => {
 
   it('stops when told', async () => {
     const controller = new AbortController();
-    const reading = readPhoto(readFileSync(FIXTURE), OPTIONS, (stage) => stage === 'markers' && controller.abort(), controller.signal);
+    const reading = readPhoto(
+      readFileSync(FIXTURE),
+      OPTIONS,
+      (stage) => stage === 'markers' && controller.abort(),
+      controller.signal,
+    );
     await expect(reading).rejects.toThrow(/abort/i);
   });
 });
@@ -139,13 +150,17 @@ describe('refusals', () => {
   it('of what is no picture', async () => {
     expect(await refusalOf(Buffer.from('hello'))).toBe('notAPicture');
     expect(await refusalOf(Buffer.alloc(0))).toBe('notAPicture');
-    expect(await refusalOf(Buffer.from('<svg xmlns="http://www.w3.org/2000/svg" width="900" height="900"/>'))).toBe('notAPicture');
+    expect(await refusalOf(Buffer.from('<svg xmlns="http://www.w3.org/2000/svg" width="900" height="900"/>'))).toBe(
+      'notAPicture',
+    );
     expect(await refusalOf(readFileSync(FIXTURE).subarray(0, 200_000))).toBe('notAPicture');
   });
 
   it('of more bytes or pixels than are taken', async () => {
     expect(await refusalOf(Buffer.alloc(25 * 1024 * 1024 + 1))).toBe('tooLarge');
-    const wide = await sharp({ create: { width: 9000, height: 6000, channels: 3, background: '#fff' } }).png().toBuffer();
+    const wide = await sharp({ create: { width: 9000, height: 6000, channels: 3, background: '#fff' } })
+      .png()
+      .toBuffer();
     expect(await refusalOf(wide)).toBe('tooLarge');
   });
 
@@ -155,7 +170,9 @@ describe('refusals', () => {
   });
 
   it('of a mirrored sheet', async () => {
-    expect(await refusalOf(await sharp(FIXTURE).resize({ width: 2000 }).flop().jpeg().toBuffer())).toBe('mirroredPrint');
+    expect(await refusalOf(await sharp(FIXTURE).resize({ width: 2000 }).flop().jpeg().toBuffer())).toBe(
+      'mirroredPrint',
+    );
   });
 
   it('of a blurred photo', async () => {
@@ -163,14 +180,21 @@ describe('refusals', () => {
   }, 30_000);
 
   it('of a sheet with nothing on it', async () => {
-    const raster = await sharp(readFileSync(FIXTURE)).resize({ width: 2000 }).removeAlpha().raw().toBuffer({ resolveWithObject: true });
+    const raster = await sharp(readFileSync(FIXTURE))
+      .resize({ width: 2000 })
+      .removeAlpha()
+      .raw()
+      .toBuffer({ resolveWithObject: true });
     const { data, info } = raster;
     // Paint the template over with paper: everything browner than paper becomes light grey.
     for (let k = 0; k < data.length; k += 3) {
       const isBrown = (data[k] ?? 0) - (data[k + 2] ?? 0) > 14;
       if (isBrown) data.fill(200, k, k + 3);
     }
-    const bare = await sharp(data, { raw: { width: info.width, height: info.height, channels: 3 } }).blur(1.5).jpeg().toBuffer();
+    const bare = await sharp(data, { raw: { width: info.width, height: info.height, channels: 3 } })
+      .blur(1.5)
+      .jpeg()
+      .toBuffer();
     expect(await refusalOf(bare)).toMatch(/noTemplate/);
   }, 30_000);
 });

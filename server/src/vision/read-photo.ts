@@ -10,11 +10,11 @@ import type { PhotoReading } from './photo-reading';
 import { type Picture, shrinkToGrey } from './picture';
 import type { ReadingOptions } from './reading-options';
 import { type PageRaster, rectify, rectifyForDisplay } from './rectify';
-import { type BoundaryPoint, refineBoundary } from './refine-boundary';
+import { BOUNDARY_STEP_MM, type BoundaryPoint, refineBoundary } from './refine-boundary';
 import { plainView } from './plain-view';
 import { squareUp } from './square-up';
 import { TraceRefusal } from './trace-refusal';
-import { fitShapes } from './trace-shapes';
+import { fitShapes, primitiveLengthMm } from './trace-shapes';
 import { type View, pixelsPerMmAt, viewAtHeight } from './view';
 
 export type StageListener = (stage: TraceStage) => void;
@@ -31,6 +31,8 @@ const MAX_TILT_DEG = 50;
 /** Edges of markers that miss the flat sheet by more than this mean that it is not flat, mm. */
 const MAX_SHEET_MISS_MM = 0.3;
 const DARK_GREY = 22;
+const FAINT_WORTH_SAYING_MM = 15;
+const FAINT_WORTH_SAYING = 0.12;
 const STAIN_SHARE = 0.12;
 const LEAST_OPENING_POINTS = 20;
 
@@ -190,7 +192,7 @@ export async function readPhoto(
       pixelsPerMm: pixelsPerMmAt(scene.view, { x: scene.widthMm / 2, y: scene.heightMm / 2 }),
       markersUsed: scene.markersUsed,
       tiltDeg: scene.tiltDeg,
-      warnings: scene.warnings,
+      warnings: [...scene.warnings, ...faintWarning(boundaries[0] ?? [], shapes.outer)],
       timingsMs,
     },
     rectified: {
@@ -207,6 +209,16 @@ export async function readPhoto(
       }),
     ),
   };
+}
+
+/** Says so where a good part of the outline shows no clear edge. */
+function faintWarning(outline: readonly BoundaryPoint[], primitives: Trace['outer']): readonly string[] {
+  const clear = outline.filter(({ isFaint }) => !isFaint).length * BOUNDARY_STEP_MM;
+  const length = primitives.reduce((sum, primitive) => sum + primitiveLengthMm(primitive), 0);
+  const faint = Math.round(length - clear);
+  return faint > Math.max(FAINT_WORTH_SAYING_MM, FAINT_WORTH_SAYING * length)
+    ? [`About ${faint} mm of the outline show no clear edge. Light from more than one side helps.`]
+    : [];
 }
 
 /** The boundaries without openings that are only marks on the face: their edge is far fainter than the outline's. */

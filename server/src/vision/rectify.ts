@@ -69,7 +69,13 @@ export function rectify(picture: Picture, view: View, widthMm: number, heightMm:
 }
 
 /** The page squared up for the eye: sRGB bytes, bilinear. */
-export function rectifyForDisplay(picture: Picture, view: View, widthMm: number, heightMm: number, perMm: number): Picture {
+export function rectifyForDisplay(
+  picture: Picture,
+  view: View,
+  widthMm: number,
+  heightMm: number,
+  perMm: number,
+): Picture {
   const widthPx = Math.max(1, Math.round(widthMm * perMm));
   const heightPx = Math.max(1, Math.round(heightMm * perMm));
   const rgb = new Uint8Array(widthPx * heightPx * 3);
@@ -80,7 +86,12 @@ export function rectifyForDisplay(picture: Picture, view: View, widthMm: number,
       const x1 = (blockColumn + BLOCK + 0.5) / perMm;
       const y0 = heightMm - (blockRow + 0.5) / perMm;
       const y1 = heightMm - (blockRow + BLOCK + 0.5) / perMm;
-      const [p00, p10, p01, p11] = [view.toPixel(x0, y0), view.toPixel(x1, y0), view.toPixel(x0, y1), view.toPixel(x1, y1)];
+      const [p00, p10, p01, p11] = [
+        view.toPixel(x0, y0),
+        view.toPixel(x1, y0),
+        view.toPixel(x0, y1),
+        view.toPixel(x1, y1),
+      ];
       for (let r = blockRow; r < Math.min(blockRow + BLOCK, heightPx); r++) {
         const v = (r - blockRow) / BLOCK;
         for (let c = blockColumn; c < Math.min(blockColumn + BLOCK, widthPx); c++) {

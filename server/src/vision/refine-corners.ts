@@ -25,8 +25,16 @@ interface EdgePoint extends PixelPoint {
 }
 
 /** Where light passes half way between dark and light along a normal, or `null` where there is no clean edge. */
-function edgeOnProfile(picture: Picture, x: number, y: number, nx: number, ny: number, reach: number): EdgePoint | null {
-  if (!isInside(picture, x - nx * reach, y - ny * reach) || !isInside(picture, x + nx * reach, y + ny * reach)) return null;
+function edgeOnProfile(
+  picture: Picture,
+  x: number,
+  y: number,
+  nx: number,
+  ny: number,
+  reach: number,
+): EdgePoint | null {
+  if (!isInside(picture, x - nx * reach, y - ny * reach) || !isInside(picture, x + nx * reach, y + ny * reach))
+    return null;
   const count = 2 * Math.round(reach / STEP_PX) + 1;
   const light: number[] = [];
   for (let k = 0; k < count; k++) {

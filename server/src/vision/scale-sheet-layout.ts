@@ -73,7 +73,11 @@ export function scaleSheetLayout(size: SheetSize, variant: SheetVariant): ScaleS
   for (let row = 0; row < ROWS; row++) {
     for (let column = 0; column < COLUMNS; column++) {
       if (row > 0 && row < ROWS - 1 && column > 0 && column < COLUMNS - 1) continue;
-      markers.push({ id: first + markers.length, x: MARKER_INSET_MM + column * stepX, y: MARKER_INSET_MM + row * stepY });
+      markers.push({
+        id: first + markers.length,
+        x: MARKER_INSET_MM + column * stepX,
+        y: MARKER_INSET_MM + row * stepY,
+      });
     }
   }
   const wordBoxes: PageBox[] = [];
@@ -97,8 +101,20 @@ export function scaleSheetLayout(size: SheetSize, variant: SheetVariant): ScaleS
     markers,
     wordBoxes,
     rulers: [
-      { along: 'x', x: (widthMm - RULER_LENGTH_MM) / 2, y: rulerFoot, widthMm: RULER_LENGTH_MM, heightMm: RULER_HEIGHT_MM },
-      { along: 'y', x: rulerFoot, y: (heightMm - RULER_LENGTH_MM) / 2, widthMm: RULER_HEIGHT_MM, heightMm: RULER_LENGTH_MM },
+      {
+        along: 'x',
+        x: (widthMm - RULER_LENGTH_MM) / 2,
+        y: rulerFoot,
+        widthMm: RULER_LENGTH_MM,
+        heightMm: RULER_HEIGHT_MM,
+      },
+      {
+        along: 'y',
+        x: rulerFoot,
+        y: (heightMm - RULER_LENGTH_MM) / 2,
+        widthMm: RULER_HEIGHT_MM,
+        heightMm: RULER_LENGTH_MM,
+      },
     ],
     workArea: { x: ring, y: ring, widthMm: widthMm - 2 * ring, heightMm: heightMm - 2 * ring },
   };

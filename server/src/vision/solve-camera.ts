@@ -79,7 +79,10 @@ function poseOf(h: Homography, focalPx: number): { rotation: Rotation; shift: re
   };
 }
 
-function startCamera(sightings: readonly Sighting[], options: CameraOptions): { start: Camera; focalSpread: number } | null {
+function startCamera(
+  sightings: readonly Sighting[],
+  options: CameraOptions,
+): { start: Camera; focalSpread: number } | null {
   const longSide = Math.max(options.widthPx, options.heightPx);
   const middleX = (options.widthPx - 1) / 2;
   const middleY = (options.heightPx - 1) / 2;
@@ -148,7 +151,10 @@ function rms(values: readonly number[]): number {
   return Math.sqrt(values.reduce((sum, v) => sum + v * v, 0) / Math.max(values.length, 1));
 }
 
-function worstGroup(camera: Camera, sightings: readonly Sighting[]): { group: number; missPx: number; usualPx: number } {
+function worstGroup(
+  camera: Camera,
+  sightings: readonly Sighting[],
+): { group: number; missPx: number; usualPx: number } {
   const groups = new Map<number, number[]>();
   for (const s of sightings) groups.set(s.group, [...(groups.get(s.group) ?? []), missPx(camera, s)]);
   const means = [...groups].map(([group, misses]) => ({ group, missPx: rms(misses) }));
@@ -169,7 +175,11 @@ export function solveCamera(sightings: readonly Sighting[], options: CameraOptio
     if (!camera || !Number.isFinite(camera.focalPx)) return null;
     const worst = worstGroup(camera, kept);
     const groupCount = new Set(kept.map((s) => s.group)).size;
-    if (groupCount <= MIN_GROUPS || worst.missPx < Math.max(0.5, 4 * worst.usualPx) || dropped.size > sightings.length / 12) {
+    if (
+      groupCount <= MIN_GROUPS ||
+      worst.missPx < Math.max(0.5, 4 * worst.usualPx) ||
+      dropped.size > sightings.length / 12
+    ) {
       return { camera, droppedGroups: dropped, rmsPx: rms(kept.map((s) => missPx(camera, s))) };
     }
     dropped.add(worst.group);

@@ -74,7 +74,10 @@ export function squareUp(
     .map(({ id, corners }) => refineMarker(picture, id, scaleUp(corners, factor)))
     .filter((marker): marker is RefinedMarker => marker !== null);
   if (refined.length < MIN_MARKERS) {
-    throw new TraceRefusal('tooFewMarkers', `Only ${refined.length} of the sheet's markers can be read; four are needed.`);
+    throw new TraceRefusal(
+      'tooFewMarkers',
+      `Only ${refined.length} of the sheet's markers can be read; four are needed.`,
+    );
   }
   const sightings = refined.flatMap(({ id, corners }) => {
     const marker = sheet.markers.find((candidate) => candidate.id === id);

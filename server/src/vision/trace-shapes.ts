@@ -5,7 +5,10 @@ import type { Point } from '@foldwright/shared/geometry/point';
 import { coveringHalfWidthMm, type Doubt, doubtOf, type DoubtSources } from './doubt';
 import type { BoundaryPoint } from './refine-boundary';
 
-export type TraceShapes = Pick<Trace, 'outer' | 'cutouts' | 'holes' | 'slots' | 'bands' | 'uncertaintyMm' | 'mostlyFrom'>;
+export type TraceShapes = Pick<
+  Trace,
+  'outer' | 'cutouts' | 'holes' | 'slots' | 'bands' | 'uncertaintyMm' | 'mostlyFrom'
+>;
 
 /** A round opening keeps to its circle at least this well, mm (root mean square). */
 const ROUND_WITHIN_MM = 0.1;
@@ -34,7 +37,11 @@ function roundOpening(points: readonly BoundaryPoint[]): Round | null {
   const circle = fitCircle(points);
   const obround = fitObround(points);
   const lengthMm = obround ? Math.hypot(obround.to.x - obround.from.x, obround.to.y - obround.from.y) : 0;
-  if (circle && circle.rmsMm < ROUND_WITHIN_MM && (!obround || lengthMm < LEAST_SLOT_LENGTH_MM || circle.rmsMm < 1.3 * obround.rmsMm)) {
+  if (
+    circle &&
+    circle.rmsMm < ROUND_WITHIN_MM &&
+    (!obround || lengthMm < LEAST_SLOT_LENGTH_MM || circle.rmsMm < 1.3 * obround.rmsMm)
+  ) {
     return { hole: { centre: toTracePoint(circle.centre), diameterMm: 2 * circle.radiusMm } };
   }
   if (obround && obround.rmsMm < ROUND_WITHIN_MM) {
@@ -68,7 +75,10 @@ function stretchOf(points: readonly BoundaryPoint[], first: number, count: numbe
  * Lines, arcs, holes, slots and cut-outs through the boundaries, the outer one first, each stretch of the outer
  * boundary with its doubt. `null` when the outer boundary does not close.
  */
-export function fitShapes(boundaries: readonly (readonly BoundaryPoint[])[], sources: DoubtSources): TraceShapes | null {
+export function fitShapes(
+  boundaries: readonly (readonly BoundaryPoint[])[],
+  sources: DoubtSources,
+): TraceShapes | null {
   const [outerPoints, ...openings] = boundaries;
   const outer = outerPoints && fitLoop(outerPoints);
   if (!outer) return null;
@@ -89,7 +99,13 @@ export function fitShapes(boundaries: readonly (readonly BoundaryPoint[])[], sou
     const residualMm = outer.residualsMm[primitiveIndex] ?? 0;
     const points = stretch ? stretchOf(outerPoints, stretch.first, stretch.count) : [];
     const doubt = doubtOf(points, residualMm, sources);
-    return { primitiveIndex, residualMm, doubt, lengthMm: primitiveLengthMm(primitive), halfWidthMm: doubt.halfWidthMm };
+    return {
+      primitiveIndex,
+      residualMm,
+      doubt,
+      lengthMm: primitiveLengthMm(primitive),
+      halfWidthMm: doubt.halfWidthMm,
+    };
   });
   const shares = new Map<Doubt['largest'], number>();
   for (const { doubt, lengthMm } of weighed) shares.set(doubt.largest, (shares.get(doubt.largest) ?? 0) + lengthMm);

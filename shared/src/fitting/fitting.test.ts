@@ -58,7 +58,8 @@ function gapMm(loop: readonly TracePrimitive[]): number {
 /** Angle between the ends of two neighbours at their joint, degrees. */
 function bendDeg(before: TracePrimitive, after: TracePrimitive): number {
   const heading = (primitive: TracePrimitive, isEnd: boolean): number => {
-    if (primitive.kind === 'line') return Math.atan2(primitive.to[1] - primitive.from[1], primitive.to[0] - primitive.from[0]);
+    if (primitive.kind === 'line')
+      return Math.atan2(primitive.to[1] - primitive.from[1], primitive.to[0] - primitive.from[0]);
     const at = isEnd ? primitive.to : primitive.from;
     const out = Math.atan2(at[1] - primitive.centre[1], at[0] - primitive.centre[0]);
     return out + (primitive.clockwise ? -Math.PI / 2 : Math.PI / 2);
@@ -87,7 +88,11 @@ describe('fitLoop', () => {
 
   it('puts sharp corners where the lines cross, within a fiftieth of a millimetre', () => {
     const corners = (fitLoop(shaken(plate(), 0.04))?.primitives ?? []).map(({ from }) => from);
-    for (const [x, y] of [[0, 0], [80, 0], [0, 50]] as const) {
+    for (const [x, y] of [
+      [0, 0],
+      [80, 0],
+      [0, 50],
+    ] as const) {
       expect(Math.min(...corners.map((c) => Math.hypot(c[0] - x, c[1] - y)))).toBeLessThan(0.04);
     }
   });
@@ -98,7 +103,13 @@ describe('fitLoop', () => {
   });
 
   it('answers null for too few points', () => {
-    expect(fitLoop([{ x: 0, y: 0 }, { x: 1, y: 0 }, { x: 1, y: 1 }])).toBeNull();
+    expect(
+      fitLoop([
+        { x: 0, y: 0 },
+        { x: 1, y: 0 },
+        { x: 1, y: 1 },
+      ]),
+    ).toBeNull();
   });
 });
 

@@ -112,7 +112,8 @@ export function joinTwo(a: FittedPrimitive, b: FittedPrimitive, near: Point, isH
   const canTouch = a.kind === 'arc' || b.kind === 'arc';
   if (isHeld === true) return { at: touching, isTangent: true };
   const nearestCrossing = nearest(crossings(a, b), near);
-  const isReached = nearestCrossing !== null && Math.hypot(nearestCrossing.x - near.x, nearestCrossing.y - near.y) < CROSS_WITHIN_MM;
+  const isReached =
+    nearestCrossing !== null && Math.hypot(nearestCrossing.x - near.x, nearestCrossing.y - near.y) < CROSS_WITHIN_MM;
   const crossing = isReached ? nearestCrossing : null;
   if (isHeld === false && crossing) return { at: crossing, isTangent: false };
   if (crossing === null) return { at: canTouch ? touching : near, isTangent: canTouch };

@@ -22,6 +22,7 @@ const CORNER_TRIM_MM = 0.6;
  */
 const SLIVER_MM = 2.2;
 const SLIVER_MEETS_WITHIN_MM = 0.75;
+const SLIVER_OFF_MM = 0.5;
 const HUBER_MM = 0.12;
 /** Pull of a tangent joint against one point's distance: enough to hold it within a thousandth of a millimetre. */
 const TANGENT_WEIGHT = 200;
@@ -46,7 +47,9 @@ function trimmed(points: readonly Point[]): readonly Point[] {
   const last = points[points.length - 1];
   if (!first || !last) return points;
   const inner = points.filter(
-    (p) => Math.hypot(p.x - first.x, p.y - first.y) > CORNER_TRIM_MM && Math.hypot(p.x - last.x, p.y - last.y) > CORNER_TRIM_MM,
+    (p) =>
+      Math.hypot(p.x - first.x, p.y - first.y) > CORNER_TRIM_MM &&
+      Math.hypot(p.x - last.x, p.y - last.y) > CORNER_TRIM_MM,
   );
   return inner.length >= Math.max(5, points.length * 0.3) ? inner : points;
 }
@@ -60,10 +63,7 @@ export function distanceToPrimitive(primitive: FittedPrimitive, point: Point): n
 
 function toParameters(primitive: FittedPrimitive, middle: Point): readonly number[] {
   return primitive.kind === 'line'
-    ? [
-        Math.atan2(primitive.ny, primitive.nx),
-        primitive.offsetMm - primitive.nx * middle.x - primitive.ny * middle.y,
-      ]
+    ? [Math.atan2(primitive.ny, primitive.nx), primitive.offsetMm - primitive.nx * middle.x - primitive.ny * middle.y]
     : [primitive.centre.x - middle.x, primitive.centre.y - middle.y, primitive.radiusMm];
 }
 
@@ -95,7 +95,11 @@ interface Group {
   readonly used: readonly Point[];
 }
 
-function refine(groups: readonly Group[], start: readonly FittedPrimitive[], tangent: readonly boolean[]): FittedPrimitive[] {
+function refine(
+  groups: readonly Group[],
+  start: readonly FittedPrimitive[],
+  tangent: readonly boolean[],
+): FittedPrimitive[] {
   const everything = groups.flatMap((group) => group.all);
   const middle = {
     x: everything.reduce((sum, p) => sum + p.x, 0) / everything.length,
@@ -147,11 +151,13 @@ function fitAlone(points: readonly Point[], kind: 'line' | 'arc'): FittedPrimiti
 /** The stretches without those that only follow the blur of a corner: their points go to both neighbours. */
 function withoutSlivers(stretches: readonly Stretch[], points: readonly Point[]): readonly Stretch[] {
   const kept = [...stretches];
+  // A neighbour that has taken one sliver takes no other: two in a row are a curve, not the blur of a corner.
+  const grown = new Set<Stretch>();
   for (let index = 0; index < kept.length && kept.length > 3; index++) {
     const sliver = kept[index];
     const before = kept[(index + kept.length - 1) % kept.length];
     const after = kept[(index + 1) % kept.length];
-    if (!sliver || !before || !after) continue;
+    if (!sliver || !before || !after || grown.has(before) || grown.has(after) || grown.has(sliver)) continue;
     const own = stretchPoints(points, sliver);
     const first = own[0];
     const last = own.at(-1);
@@ -160,14 +166,23 @@ function withoutSlivers(stretches: readonly Stretch[], points: readonly Point[])
     const a = fitAlone(trimmed(stretchPoints(points, before)), before.kind);
     const b = fitAlone(trimmed(stretchPoints(points, after)), after.kind);
     const meeting = joinTwo(a, b, middle);
-    if (Math.hypot(meeting.at.x - middle.x, meeting.at.y - middle.y) > SLIVER_MEETS_WITHIN_MM) continue;
+    const isCorner =
+      Math.hypot(meeting.at.x - middle.x, meeting.at.y - middle.y) < SLIVER_MEETS_WITHIN_MM &&
+      own.every(
+        (point) =>
+          Math.min(Math.abs(distanceToPrimitive(a, point)), Math.abs(distanceToPrimitive(b, point))) < SLIVER_OFF_MM,
+      );
+    if (!isCorner) continue;
     const half = sliver.count >> 1;
-    kept[(index + kept.length - 1) % kept.length] = { ...before, count: before.count + half };
-    kept[(index + 1) % kept.length] = {
+    const longerBefore = { ...before, count: before.count + half };
+    const longerAfter = {
       ...after,
       first: (sliver.first + half) % points.length,
       count: after.count + sliver.count - half,
     };
+    kept[(index + kept.length - 1) % kept.length] = longerBefore;
+    kept[(index + 1) % kept.length] = longerAfter;
+    grown.add(longerBefore).add(longerAfter);
     kept.splice(index, 1);
     index--;
   }
@@ -187,11 +202,22 @@ export function fitLoop(points: readonly Point[], options: SplitOptions = DEFAUL
     return { stretch, all, used: trimmed(all) };
   });
   const first = groups.map((group) => fitAlone(group.used, group.stretch.kind));
-  const free = refine(groups, first, first.map(() => false));
-  const joints = joinPrimitives(free, groups.map((group) => group.all));
+  const free = refine(
+    groups,
+    first,
+    first.map(() => false),
+  );
+  const joints = joinPrimitives(
+    free,
+    groups.map((group) => group.all),
+  );
   const tangent = joints.map((joint) => joint.isTangent);
   const held = tangent.some(Boolean) ? refine(groups, free, tangent) : free;
-  const finalJoints: readonly Joint[] = joinPrimitives(held, groups.map((group) => group.all), tangent);
+  const finalJoints: readonly Joint[] = joinPrimitives(
+    held,
+    groups.map((group) => group.all),
+    tangent,
+  );
   const primitives: TracePrimitive[] = [];
   for (let index = 0; index < held.length; index++) {
     const primitive = held[index];

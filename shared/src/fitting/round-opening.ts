@@ -5,7 +5,7 @@ import { PrefixMoments } from './moments';
 export interface CircleFit {
   readonly centre: Point;
   readonly radiusMm: number;
-  /** Root mean square of the distances, mm. */
+  /** Root mean square of the distances of the nearest four fifths of the points, mm. */
   readonly rmsMm: number;
 }
 
@@ -25,10 +25,16 @@ function huber(residualMm: number): number {
   return size <= HUBER_MM ? residualMm : Math.sign(residualMm) * Math.sqrt(HUBER_MM * (2 * size - HUBER_MM));
 }
 
+/** Points that may lie anywhere, a share: a shadow in the opening draws its own false edge. */
+const STRAY_SHARE = 0.2;
+
+/** Root mean square of the nearest points, strays left out. */
 function rootMeanSquare(values: Float64Array): number {
+  const squares = values.map((value) => value * value).sort();
+  const kept = Math.max(1, Math.ceil(squares.length * (1 - STRAY_SHARE)));
   let sum = 0;
-  for (const value of values) sum += value * value;
-  return Math.sqrt(sum / Math.max(values.length, 1));
+  for (let k = 0; k < kept; k++) sum += squares[k] ?? 0;
+  return Math.sqrt(sum / kept);
 }
 
 /** Best circle through the points in the sense of distances, outliers held back; `null` for fewer than five. */

@@ -78,7 +78,7 @@ function splitOpen(points: readonly Point[], options: SplitOptions): readonly St
     }
   }
   const stretches: Stretch[] = [];
-  for (let at = nodes.length - 1; at > 0; ) {
+  for (let at = nodes.length - 1; at > 0;) {
     const from = previous[at] ?? 0;
     const first = nodes[from] ?? 0;
     stretches.unshift({ kind: isArc[at] === 1 ? 'arc' : 'line', first, count: (nodes[at] ?? 0) - first });

@@ -3,7 +3,13 @@ export type TracePoint = readonly [number, number];
 
 export type TracePrimitive =
   | { readonly kind: 'line'; readonly from: TracePoint; readonly to: TracePoint }
-  | { readonly kind: 'arc'; readonly from: TracePoint; readonly to: TracePoint; readonly centre: TracePoint; readonly clockwise: boolean };
+  | {
+      readonly kind: 'arc';
+      readonly from: TracePoint;
+      readonly to: TracePoint;
+      readonly centre: TracePoint;
+      readonly clockwise: boolean;
+    };
 
 /** How far a stretch of the boundary may be off; parallel to the primitives of `outer`. */
 export interface BoundaryBand {

@@ -53,7 +53,8 @@ function rectangle(text: string): ScaleSource {
 function twoPoints(text: string): ScaleSource {
   const [ends = '', distance] = text.split('=');
   const [from, to] = pixels(ends, '--two-points', 2);
-  if (!from || !to || (from.x === to.x && from.y === to.y)) throw new BadInput('--two-points needs two different points');
+  if (!from || !to || (from.x === to.x && from.y === to.y))
+    throw new BadInput('--two-points needs two different points');
   return { kind: 'two-points', from, to, distanceMm: number(distance, '--two-points distance', 1, 5000) };
 }
 
@@ -76,7 +77,8 @@ function parse(argv: readonly string[]): { photo: string; options: ReadingOption
   if (values.rectangle !== undefined) sources.push(rectangle(values.rectangle));
   if (values['two-points'] !== undefined) sources.push(twoPoints(values['two-points']));
   if (sources.length > 1) throw new BadInput('only one of --dpi, --rectangle and --two-points can be given');
-  const thicknessMm = values.thickness === undefined ? USUAL_THICKNESS_MM : number(values.thickness, '--thickness', 0, 30);
+  const thicknessMm =
+    values.thickness === undefined ? USUAL_THICKNESS_MM : number(values.thickness, '--thickness', 0, 30);
   const scale = sources[0];
   const printScale = values['print-scale']?.split(',');
   return {
@@ -85,7 +87,12 @@ function parse(argv: readonly string[]): { photo: string; options: ReadingOption
       thicknessMm,
       ...(scale ? { scale } : {}),
       ...(printScale
-        ? { printScale: [number(printScale[0], '--print-scale X', 0.8, 1.2), number(printScale[1], '--print-scale Y', 0.8, 1.2)] }
+        ? {
+            printScale: [
+              number(printScale[0], '--print-scale X', 0.8, 1.2),
+              number(printScale[1], '--print-scale Y', 0.8, 1.2),
+            ],
+          }
         : {}),
     },
   };

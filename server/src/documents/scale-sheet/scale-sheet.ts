@@ -93,7 +93,13 @@ function drawRuler(pdf: PDFKit.PDFDocument, layout: ScaleSheetLayout, ruler: Sca
   pdf.restore();
 }
 
-function writeWords(pdf: PDFKit.PDFDocument, layout: ScaleSheetLayout, box: PageBox, text: Words, marked: boolean): void {
+function writeWords(
+  pdf: PDFKit.PDFDocument,
+  layout: ScaleSheetLayout,
+  box: PageBox,
+  text: Words,
+  marked: boolean,
+): void {
   const top = layout.heightMm - box.y - box.heightMm;
   const inset = marked ? 7.5 : 0;
   if (marked) drawMark(pdf, box.x + 0.4, top + 0.6, 6, INK);
