@@ -1,7 +1,7 @@
 import { readFile } from 'node:fs/promises';
 import path from 'node:path';
 import { sheetCodeOf } from '@foldwright/server/cutting/sheet-codes';
-import { makeDxf } from '@foldwright/server/documents/release-files';
+import { makeDxf } from '@foldwright/server/documents/dxf';
 import { judgeRequest } from '@foldwright/server/fakes/cutting-service/judge-request';
 import { readDrawing } from '@foldwright/server/fakes/cutting-service/read-drawing';
 import { computePart } from '@foldwright/server/services/computed-part';
