@@ -26,7 +26,7 @@ import type { BoardMark, BoardOverlay } from './board-overlay';
 const WHEEL_ZOOM = 0.0016;
 const KEY_ZOOM = 1.25;
 const KEY_PAN_PX = 60;
-const NARROW_PX = 640;
+const NARROW_PX = 800;
 const NARROW_INSETS: Insets = { top: 40, right: 24, bottom: 64, left: 62 };
 let nextId = 0;
 

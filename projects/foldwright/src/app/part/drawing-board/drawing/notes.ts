@@ -27,6 +27,8 @@ const LINE_PX = 16;
 const CAPITAL_PX = 11;
 /** A hole that large holds its own words. */
 const ROOMY_RADIUS_PX = 40;
+/** Words may lie over so much of something else; more, and neither can be read. */
+const MOST_COVERED_PX2 = 90;
 
 interface Box {
   readonly left: number;
@@ -58,9 +60,11 @@ export function drawingNotes(
 }
 
 function bendNotes(layout: Layout, viewport: Viewport, names: ReadonlyMap<string, string>): readonly DrawnNote[] {
-  return layout.bends.map((bend) => {
+  return layout.bends.flatMap((bend): readonly DrawnNote[] => {
     const from = toScreen(viewport, bend.line.from);
     const to = toScreen(viewport, bend.line.to);
+    const words = `${names.get(bend.id) ?? ''} ${bend.direction} ${formatDecimal(bend.bendAngleDeg, 1)}°`;
+    if (Math.hypot(to.xPx - from.xPx, to.yPx - from.yPx) < words.length * LETTER_PX) return [];
     const raw = (Math.atan2(to.yPx - from.yPx, to.xPx - from.xPx) * 180) / Math.PI;
     // Words read from the left or from below, never upside down.
     const turnDeg = raw > 89.9 ? raw - 180 : raw <= -90.1 ? raw + 180 : raw;
@@ -70,16 +74,17 @@ function bendNotes(layout: Layout, viewport: Viewport, names: ReadonlyMap<string
     const toBase = { x: layout.baseAnchor.x - middle.x, y: -(layout.baseAnchor.y - middle.y) };
     const isBelow = toBase.x * -Math.sin(turnRad) + toBase.y * Math.cos(turnRad) > 0;
     const asidePx = isBelow ? 20 : -9;
-    return {
+    const note = {
       key: bend.id,
-      lines: [`${names.get(bend.id) ?? ''} ${bend.direction} ${formatDecimal(bend.bendAngleDeg, 1)}°`],
+      lines: [words],
       xPx: (from.xPx + to.xPx) / 2 - Math.sin(turnRad) * asidePx,
       yPx: (from.yPx + to.yPx) / 2 + Math.cos(turnRad) * asidePx,
       turnDeg,
-      anchor: 'middle',
+      anchor: 'middle' as const,
       leader: '',
       isOnMetal: true,
     };
+    return [note];
   });
 }
 
@@ -106,7 +111,7 @@ function openingGroups(layout: Layout): readonly OpeningGroup[] {
 
 /**
  * The place on the sheet, at any of the group's things and on any side of it, where the words cover least. Words that find
- * no room on the metal are left out: bright letters can't be read on the card, and the list has every size.
+ * no room on the metal are left out: letters over lines or on the card can't be read, and the list has every size.
  */
 function placeNote(
   { key, lines, features }: OpeningGroup,
@@ -130,7 +135,7 @@ function placeNote(
       if (covered < least) [best, least] = [candidate, covered];
     }
   }
-  return best;
+  return least > MOST_COVERED_PX2 ? null : best;
 }
 
 function isOnSheet(box: Box, viewport: Viewport, sheet: Loop): boolean {
