@@ -88,13 +88,13 @@ describe('what each person of the demo may do', () => {
         .first()
         .click();
       await page.getByRole('button', { name: 'Everything drawn' }).click();
-      await page.getByRole('option', { name: /^H1/ }).click();
+      await page.getByRole('option', { name: /Hole H1/ }).click();
     }
     // Both take a different hole away at the same moment.
-    await imogen.page.getByRole('option', { name: /^H2/ }).click();
+    await imogen.page.getByRole('option', { name: /Hole H2/ }).click();
     await Promise.all([
-      tomasz.page.getByRole('option', { name: /^H1/ }).press('Delete'),
-      imogen.page.getByRole('option', { name: /^H2/ }).press('Delete'),
+      tomasz.page.getByRole('option', { name: /Hole H1/ }).press('Delete'),
+      imogen.page.getByRole('option', { name: /Hole H2/ }).press('Delete'),
     ]);
     for (const { page } of [tomasz, imogen]) {
       await expectHoles(page, 0);
@@ -116,7 +116,7 @@ describe('what each person of the demo may do', () => {
   async function expectHoles(page: Tab['page'], count: number): Promise<void> {
     await page.waitForFunction(
       (wanted) =>
-        [...document.querySelectorAll('[role=option] b')].filter((name) => /^H\d/.test(name.textContent ?? ''))
+        [...document.querySelectorAll('[role=option] b')].filter((name) => /Hole H\d/.test(name.textContent ?? ''))
           .length === wanted,
       count,
     );
