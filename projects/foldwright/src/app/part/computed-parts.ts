@@ -1,10 +1,12 @@
 import { Injectable, type Signal, computed, effect, inject, signal, untracked } from '@angular/core';
+import { toObservable, toSignal } from '@angular/core/rxjs-interop';
 import type { BendRow, Development, FlatPattern, FormedBox, FormedSize } from '@foldwright/shared/bending/development';
 import type { ComputedPart } from '@foldwright/shared/contracts/development-schema';
 import { developPart } from '@foldwright/shared/part/develop-part';
 import type { PartDocument, StockRole } from '@foldwright/shared/part/part-document';
 import { checkDevelopedPart } from '@foldwright/shared/rules/check-part';
 import type { Finding } from '@foldwright/shared/rules/finding';
+import { audit, timer } from 'rxjs';
 import { problemFromError } from '../api/api-problem';
 import { DraftsApi } from '../api/drafts-api';
 import { BoardEditor } from './drawing-board/board-editor';
@@ -37,6 +39,9 @@ interface Served {
   readonly computed: ComputedPart;
 }
 
+/** How often figures follow a hand that moves, ms. */
+const GESTURE_STEP_MS = 80;
+
 const ROLES = ['trial', 'production'] as const satisfies readonly StockRole[];
 
 /**
@@ -53,6 +58,19 @@ export class ComputedParts {
     trial: signal<Served | null>(null),
     production: signal<Served | null>(null),
   };
+
+  /**
+   * What the figures are computed from: what is drawn, one turn later, so that the drawing answers a hand within a frame;
+   * while a gesture lasts, a few times a second.
+   */
+  private readonly followed = toSignal(
+    toObservable(this.editor.drawn).pipe(audit(() => timer(this.editor.isInGesture() ? GESTURE_STEP_MS : 0))),
+    { initialValue: null },
+  );
+  private readonly figured = computed(() => {
+    const drawn = this.editor.drawn();
+    return drawn === null ? null : (this.followed() ?? drawn);
+  });
 
   readonly trial = this.inStock('trial');
   readonly production = this.inStock('production');
@@ -74,7 +92,7 @@ export class ComputedParts {
 
   private inStock(role: StockRole): Signal<PartInStock | null> {
     const preview = computed(() => {
-      const document = this.editor.drawn();
+      const document = this.figured();
       return document === null ? null : previewPart(document, role);
     });
     return computed(() => {
@@ -85,7 +103,7 @@ export class ComputedParts {
         served.draftId === this.store.draftId() &&
         served.revision === this.store.revision() &&
         this.store.isSettled() &&
-        this.editor.drawn() === this.store.document();
+        this.figured() === this.store.document();
       if (here === null || !isCurrent) return here;
       const { development, findings } = served.computed;
       return { ...here, figures: development, findings, origin: 'server' };

@@ -1,5 +1,6 @@
 import { Injectable, computed, inject, signal } from '@angular/core';
 import type { LiveEvent } from '@foldwright/shared/contracts/system';
+import { isSameJson } from '@foldwright/shared/part/canonical-json';
 import { CommandRefusal } from '@foldwright/shared/part/command-refusal';
 import type { PartCommand } from '@foldwright/shared/part/commands';
 import { describeCommand } from '@foldwright/shared/part/describe-command';
@@ -67,8 +68,11 @@ export class PartStore {
 
   readonly detail = this.part.value;
   readonly problem = computed(() => this.openProblem() ?? (this.detail() === undefined ? this.part.problem() : null));
-  /** What is drawn: the server's document with own edits on top. */
-  readonly document = computed<PartDocument | null>(() => this.link.journal()?.document ?? null);
+  /**
+   * What is drawn: the server's document with own edits on top. An answer that says the same in other objects is no
+   * change, so that nothing is computed twice.
+   */
+  readonly document = computed<PartDocument | null>(() => this.link.journal()?.document ?? null, { equal: isSameJson });
   readonly draft = this.link.draft;
   /** Whether there is an outline to work on: until a trace is taken, a part from a mock-up only holds its place. */
   readonly hasOutline = computed(

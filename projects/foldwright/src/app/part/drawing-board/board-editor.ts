@@ -52,6 +52,9 @@ export class BoardEditor {
     }
   });
 
+  /** Whether a hand holds something that is not put down yet. */
+  readonly isInGesture = computed(() => this.state().draft.length > 0);
+
   /** Names what this step lets a person choose, and lets go of anything else. */
   enterStep(selectable: readonly EntityKind[]): void {
     this.kinds.set(selectable);
