@@ -1,44 +1,46 @@
-import type * as childProcess from 'node:child_process';
-import { PhotoReader } from './photo-reader';
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { PhotoReader, PhotoReaderFailure } from './photo-reader';
 import { TraceRefusal } from './trace-refusal';
 
-jest.setTimeout(60_000);
+const PHOTO = readFileSync(join(__dirname, '../../../test/fixtures/photos/04-strap-anchor-painted.jpg'));
+const OPTIONS = { thicknessMm: 2 };
 
-/** The processes that were really started, to look at from outside. */
-const forked: childProcess.ChildProcess[] = [];
-jest.mock('node:child_process', () => {
-  const actual = jest.requireActual<typeof childProcess>('node:child_process');
-  return {
-    ...actual,
-    fork: (...given: Parameters<typeof actual.fork>) => {
-      const child = actual.fork(...given);
-      forked.push(child);
-      return child;
-    },
-  };
-});
-
-describe('PhotoReader', () => {
+describe('the process that reads photos', () => {
   let reader: PhotoReader;
   beforeEach(() => {
-    forked.length = 0;
     reader = new PhotoReader();
   });
   afterEach(() => reader.close());
 
-  it('reads one after the other in one process and leaves no listener behind', async () => {
-    for (let photo = 0; photo < 3; photo += 1) {
-      await expect(reader.read(Buffer.from(`no picture ${photo}`), { thicknessMm: 1 })).rejects.toThrow(TraceRefusal);
-    }
-    expect(forked).toHaveLength(1);
-    expect(['message', 'exit', 'error'].map((event) => forked[0]?.listenerCount(event))).toEqual([0, 0, 1]);
-  });
+  it('streams the stages and hands back the reading', async () => {
+    const stages: string[] = [];
+    const reading = await reader.read(PHOTO, OPTIONS, { onStage: (stage) => stages.push(stage) });
+    expect(stages).toEqual(['decode', 'markers', 'square-up', 'template', 'outline', 'holes']);
+    expect(reading.trace.holes).toHaveLength(3);
+    expect(Buffer.from(reading.display.jpeg).subarray(0, 2).toString('hex')).toBe('ffd8');
+  }, 90_000);
 
-  it('stops when it is told to and reads the next photo all the same', async () => {
-    const stop = new AbortController();
-    const reading = reader.read(Buffer.alloc(5_000_000), { thicknessMm: 1 }, { signal: stop.signal });
-    stop.abort(new Error('stopped by a person'));
-    await expect(reading).rejects.toThrow('stopped by a person');
-    await expect(reader.read(Buffer.from('no picture'), { thicknessMm: 1 })).rejects.toThrow(TraceRefusal);
-  });
+  it('passes a refusal on, and goes on reading after it', async () => {
+    await expect(reader.read(Buffer.from('no picture'), OPTIONS)).rejects.toBeInstanceOf(TraceRefusal);
+    const second = await reader.read(PHOTO, OPTIONS);
+    expect(second.trace.method).toBe('markers');
+  }, 90_000);
+
+  it('stops when told, and reads the next one in a new process', async () => {
+    const controller = new AbortController();
+    const stopped = reader.read(PHOTO, OPTIONS, {
+      onStage: (stage) => stage === 'markers' && controller.abort(new Error('stopped by hand')),
+      signal: controller.signal,
+    });
+    const next = reader.read(PHOTO, OPTIONS);
+    await expect(stopped).rejects.toThrow('stopped by hand');
+    expect((await next).trace.slots).toHaveLength(1);
+  }, 90_000);
+
+  it('gives up at the time limit', async () => {
+    const hasty = new PhotoReader({ timeLimitMs: 50, photosPerProcess: 1 });
+    await expect(hasty.read(PHOTO, OPTIONS)).rejects.toBeInstanceOf(PhotoReaderFailure);
+    hasty.close();
+  }, 30_000);
 });

@@ -58,18 +58,27 @@ function twoPoints(text: string): ScaleSource {
   return { kind: 'two-points', from, to, distanceMm: number(distance, '--two-points distance', 1, 5000) };
 }
 
+function readArguments(argv: readonly string[]) {
+  try {
+    return parseArgs({
+      args: [...argv],
+      allowPositionals: true,
+      options: {
+        thickness: { type: 'string' },
+        'print-scale': { type: 'string' },
+        dpi: { type: 'string' },
+        rectangle: { type: 'string' },
+        'two-points': { type: 'string' },
+      },
+    });
+  } catch (error) {
+    // Unknown options and missing values: what Node says about them is meant for the person.
+    throw new BadInput(error instanceof Error ? error.message : String(error));
+  }
+}
+
 function parse(argv: readonly string[]): { photo: string; options: ReadingOptions } {
-  const { values, positionals } = parseArgs({
-    args: [...argv],
-    allowPositionals: true,
-    options: {
-      thickness: { type: 'string' },
-      'print-scale': { type: 'string' },
-      dpi: { type: 'string' },
-      rectangle: { type: 'string' },
-      'two-points': { type: 'string' },
-    },
-  });
+  const { values, positionals } = readArguments(argv);
   const [photo, ...more] = positionals;
   if (photo === undefined || more.length > 0) throw new BadInput(`one photo is needed (${USAGE})`);
   const sources: ScaleSource[] = [];
@@ -118,8 +127,7 @@ export async function runTrace(argv: readonly string[], io: CommandOutput): Prom
     io.stdout(`${JSON.stringify(trace)}\n`);
     return 0;
   } catch (error) {
-    const isExpected = error instanceof BadInput || error instanceof TraceRefusal || error instanceof TypeError;
-    if (!isExpected) throw error;
+    if (!(error instanceof BadInput) && !(error instanceof TraceRefusal)) throw error;
     const prefix = error instanceof TraceRefusal ? `${error.code}: ` : '';
     io.stderr(`trace: ${prefix}${error.message.split('\n')[0] ?? ''}\n`);
     return 2;
