@@ -1,7 +1,7 @@
-import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import sharp from 'sharp';
+import { decodePhoto, encodeForDisplay } from '../../vision/decode-photo';
 import { runScaleSheet } from './scale-sheet';
 import { runTrace } from './trace';
 
@@ -24,7 +24,7 @@ describe('trace', () => {
   it('prints one JSON object', async () => {
     const folder = mkdtempSync(join(tmpdir(), 'trace-'));
     const small = join(folder, 'small.jpg');
-    await sharp(PHOTO).keepExif().resize({ width: 2000 }).toFile(small);
+    writeFileSync(small, (await encodeForDisplay((await decodePhoto(readFileSync(PHOTO))).picture, 2000)).jpeg);
     const { code, out, err } = await capture(runTrace, [small, '--thickness', '2']).finally(() =>
       rmSync(folder, { recursive: true }),
     );
