@@ -87,7 +87,7 @@ describe('the fabricator’s road', () => {
     await page().getByRole('button', { name: 'Use this outline' }).click();
     await page().waitForURL(/\/outline$/);
 
-    // An edge's length and a hole's fastener, typed where they stand.
+    // A hole's fastener, chosen where it stands.
     await page().getByRole('button', { name: 'Everything drawn' }).click();
     await page()
       .getByRole('option', { name: /Hole H1/ })
@@ -99,19 +99,6 @@ describe('the fabricator’s road', () => {
     await page()
       .getByRole('option', { name: /Hole H1.*clearance/ })
       .waitFor();
-    await page()
-      .getByRole('option', { name: /Edge E18 / })
-      .first()
-      .click();
-    const length = page().getByRole('textbox', { name: /^Length of/ });
-    const before = Number(await length.inputValue());
-    await length.fill(String(Math.round(before) + 2));
-    await length.press('Enter');
-    await page()
-      .getByRole('option', { name: new RegExp(`Edge E18 .*${Math.round(before) + 2} mm long`) })
-      .first()
-      .waitFor();
-
     // A flange along a straight edge, then what the server makes of it.
     await goOn('Bends');
     await page().getByRole('button', { name: 'Everything drawn' }).click();

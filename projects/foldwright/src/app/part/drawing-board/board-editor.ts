@@ -1,24 +1,19 @@
 import { Injectable, computed, inject, linkedSignal, signal } from '@angular/core';
 import { CommandRefusal } from '@foldwright/shared/part/command-refusal';
 import { applyCommands } from '@foldwright/shared/part/apply-command';
-import type { PartDocument } from '@foldwright/shared/part/part-document';
+import { isSameJson } from '@foldwright/shared/part/canonical-json';
+import type { PartDocument, Template } from '@foldwright/shared/part/part-document';
 import { PartStore } from '../part-store';
 import type { EntityKind, EntityRef } from './geometry/entity';
 import { withBendsKept } from './geometry/keep-bends';
 import { EMPTY_EDITOR, type EditorState, forgetMissing, selectEntity, stepEditor, takeTool } from './tools/editor';
+import { proposedBend } from './tools/proposed-bend';
 import type { EditorEvent, ToolName, ToolSettings } from './tools/tool';
 
 const FIRST_SETTINGS: ToolSettings = {
   hole: { kind: 'clearance', thread: 'M5', fit: 'medium' },
   slot: { lengthMm: 20, widthMm: 6.6 },
-  bend: {
-    bendAngleDeg: 90,
-    direction: 'towards',
-    lengths: { from: 'reference', reference: 'outsideApex' },
-    insideRadiusMm: null,
-    override: null,
-    sideEdges: 'trimmed',
-  },
+  bend: proposedBend(null),
 };
 
 /** The hand at the drawing board: tool, selection and the gesture under way, beside the document and never in it. */
@@ -33,7 +28,12 @@ export class BoardEditor {
       document === null || previous === undefined ? EMPTY_EDITOR : forgetMissing(previous.value, document),
   });
   private readonly kinds = signal<readonly EntityKind[]>([]);
-  private readonly settingsState = signal<ToolSettings>(FIRST_SETTINGS);
+  private readonly template = computed(() => this.store.document()?.template ?? null, { equal: isSameJson });
+  /** Another template brings the bend it calls for; the rest stays as it was last used. */
+  private readonly settingsState = linkedSignal<Template | null, ToolSettings>({
+    source: this.template,
+    computation: (template, previous) => ({ ...(previous?.value ?? FIRST_SETTINGS), bend: proposedBend(template) }),
+  });
 
   readonly editor = this.state.asReadonly();
   readonly selection = computed(() => this.state().selection);
