@@ -1,8 +1,8 @@
 import { cameraCentre, cameraTiltDeg, projectPoint } from './camera';
 import { groundOfPlainArea } from './ground';
 import type { Picture } from './picture';
-import type { Scene } from './read-photo';
 import type { ScaleSource } from './reading-options';
+import type { Scene } from './scene';
 import { solveCamera } from './solve-camera';
 import { TraceRefusal } from './trace-refusal';
 import { pixelsPerMmAt, type View } from './view';

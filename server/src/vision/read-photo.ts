@@ -1,17 +1,17 @@
-import type { Trace, TraceStage } from '@foldwright/shared/fitting/trace';
+import type { TraceStage } from '@foldwright/shared/fitting/trace';
 import { cameraCentre, cameraTiltDeg, projectPoint } from './camera';
 import { traceContours } from './contours';
 import { decodePhoto, encodeForDisplay } from './decode-photo';
-import type { DoubtSources } from './doubt';
 import { findMarkers } from './find-markers';
 import { findTemplate } from './find-template';
-import { groundOfScaleSheet, type GroundPlan } from './ground';
+import { groundOfScaleSheet } from './ground';
 import type { PhotoReading } from './photo-reading';
 import { type Picture, shrinkToGrey } from './picture';
 import type { ReadingOptions } from './reading-options';
-import { type PageRaster, rectify, rectifyForDisplay } from './rectify';
+import { rectify, rectifyForDisplay } from './rectify';
 import { BOUNDARY_STEP_MM, type BoundaryPoint, refineBoundary } from './refine-boundary';
 import { plainView } from './plain-view';
+import type { Scene } from './scene';
 import { squareUp } from './square-up';
 import { TraceRefusal } from './trace-refusal';
 import { fitShapes, primitiveLengthMm } from './trace-shapes';
@@ -35,20 +35,6 @@ const FAINT_WORTH_SAYING_MM = 15;
 const FAINT_WORTH_SAYING = 0.12;
 const STAIN_SHARE = 0.12;
 const LEAST_OPENING_POINTS = 20;
-
-/** A photo with its scale settled: how it is seen, and the page under it. */
-export interface Scene {
-  readonly view: View;
-  readonly widthMm: number;
-  readonly heightMm: number;
-  readonly method: Trace['method'];
-  readonly markersUsed: number;
-  readonly tiltDeg: number;
-  readonly blurPx: number;
-  readonly warnings: readonly string[];
-  readonly doubt: Pick<DoubtSources, 'cameraMm' | 'printShare'>;
-  readonly ground: (raster: PageRaster) => GroundPlan;
-}
 
 function meanGrey(grey: Uint8Array): number {
   let sum = 0;
