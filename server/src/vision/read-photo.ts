@@ -1,4 +1,4 @@
-import type { TraceStage } from '@foldwright/shared/fitting/trace';
+import type { Trace, TraceStage } from '@foldwright/shared/fitting/trace';
 import { cameraCentre, cameraTiltDeg, projectPoint } from './camera';
 import { traceContours } from './contours';
 import { decodePhoto, encodeForDisplay } from './decode-photo';
