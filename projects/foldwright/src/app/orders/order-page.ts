@@ -92,6 +92,8 @@ export class OrderPage {
   }
 
   protected async pay(): Promise<void> {
+    // A double click arrives before the button is drawn as disabled.
+    if (this.isBusy()) return;
     this.isBusy.set(true);
     try {
       const url = await this.orders.openCheckout(this.orderId(), this.checkoutKey);
@@ -106,7 +108,7 @@ export class OrderPage {
 
   protected async cancel(): Promise<void> {
     const order = this.order();
-    if (order === undefined) return;
+    if (order === undefined || this.isBusy()) return;
     this.isBusy.set(true);
     try {
       this.read.set(await this.orders.cancel(order.id, order.revision));

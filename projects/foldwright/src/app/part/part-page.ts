@@ -76,6 +76,7 @@ export class PartPage {
   }
 
   protected async startDraft(): Promise<void> {
+    if (this.isStarting()) return;
     this.isStarting.set(true);
     try {
       await this.store.startDraft();

@@ -112,6 +112,7 @@ export class ReleasePage {
   }
 
   protected async startDraft(): Promise<void> {
+    if (this.isStarting()) return;
     this.isStarting.set(true);
     try {
       await this.store.startDraft();

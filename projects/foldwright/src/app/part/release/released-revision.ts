@@ -29,6 +29,7 @@ export class ReleasedRevision {
   private readonly ordersApi = inject(OrdersApi);
   private readonly notices = inject(Notices);
   private readonly router = inject(Router);
+  private readonly orderKeys = new Map<string, string>();
 
   readonly revisionId = input.required<string>();
   readonly canEdit = input(false);
@@ -79,6 +80,8 @@ export class ReleasedRevision {
   }
 
   protected async ask(): Promise<void> {
+    // A double click arrives before the button is drawn as disabled.
+    if (this.isAsking()) return;
     this.isAsking.set(true);
     try {
       await this.ordersApi.askForQuote(this.revisionId(), this.role(), QUANTITIES);
@@ -92,14 +95,23 @@ export class ReleasedRevision {
   }
 
   protected async order(quoteId: string, quantity: number): Promise<void> {
+    if (this.isOrdering()) return;
     this.isOrdering.set(true);
     try {
-      const order = await this.ordersApi.place(quoteId, quantity, newIdempotencyKey());
+      const order = await this.ordersApi.place(quoteId, quantity, this.orderKey(quoteId, quantity));
       await this.router.navigate(['/orders', order.id]);
     } catch (error) {
       this.notices.showProblem(error);
     } finally {
       this.isOrdering.set(false);
     }
+  }
+
+  /** The same for every try from this page: a try whose answer got lost must not become a second order. */
+  private orderKey(quoteId: string, quantity: number): string {
+    const place = `${quoteId} ${quantity}`;
+    const key = this.orderKeys.get(place) ?? newIdempotencyKey();
+    this.orderKeys.set(place, key);
+    return key;
   }
 }
