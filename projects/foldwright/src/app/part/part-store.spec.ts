@@ -156,6 +156,27 @@ describe('PartStore', () => {
       expect(server.log.map(({ clientId }) => clientId)).toEqual(['another-tab', store.clientId]);
     });
 
+    it('keeps the line about the other until it is put away, whatever one draws meanwhile', async () => {
+      const store = await openStore();
+      server.change([addHole('theirs', 80)]);
+      store.apply([addHole('mine', 20)]);
+      await arrive();
+      store.apply([widen]);
+      store.undo();
+      await arrive();
+      expect(store.news()).toBe('Imogen Harrow changed this draft: Add hole');
+      store.dismissNews();
+      expect(store.news()).toBeNull();
+    });
+
+    it('drops the line about a refused edit with the next one that fits', async () => {
+      const store = await openStore();
+      store.apply([{ kind: 'removeFeature', featureId: 'nowhere' }]);
+      expect(store.news()).not.toBeNull();
+      store.apply([addHole('mine', 20)]);
+      expect(store.news()).toBeNull();
+    });
+
     it('hands back an edit that no longer fits and says so', async () => {
       server.change([addHole('h1', 20)]);
       const store = await openStore();

@@ -36,6 +36,12 @@ import { saveWords } from './save-state';
 /** What the history has to do when an edit is handed back: its step was an edit, an undo or a redo. */
 type Purpose = { readonly kind: 'edit' } | { readonly kind: 'undo' | 'redo'; readonly step: HistoryStep };
 
+/** One line for the person, and whether it tells of somebody else's work. */
+interface NewsLine {
+  readonly words: string;
+  readonly isOfOthers: boolean;
+}
+
 export interface EditOptions {
   /** Edits with the same fold that follow each other are one step of undo. */
   readonly fold?: string | null;
@@ -53,7 +59,7 @@ export class PartStore {
   private readonly partId = signal<string | undefined>(undefined);
   private readonly part = this.partsApi.part(this.partId);
   private readonly historyState = signal(EMPTY_HISTORY);
-  private readonly newsLine = signal<string | null>(null);
+  private readonly newsLine = signal<NewsLine | null>(null);
   private readonly openProblem = signal<ApiProblem | null>(null);
   private readonly purposes = new Map<string, Purpose>();
   private listening: Subscription | null = null;
@@ -94,7 +100,7 @@ export class PartStore {
   readonly redoLabel = computed(() => (this.canEdit() ? (nextRedo(this.historyState())?.label ?? null) : null));
   readonly saveState = this.link.saveState;
   readonly savedWords = computed(() => saveWords(this.link.saveState(), this.revision(), this.link.unsentEdits()));
-  readonly news = this.newsLine.asReadonly();
+  readonly news = computed(() => this.newsLine()?.words ?? null);
 
   /** Opens a part; resolves when its draft is there, or when `problem` says why not. */
   async open(partId: string): Promise<void> {
@@ -143,7 +149,7 @@ export class PartStore {
       const after = this.document() ?? before;
       const step = { id, label, before, after, fold: options.fold ?? null };
       this.historyState.update((history) => recordStep(history, step));
-      this.newsLine.set(null);
+      this.dropOwnNews();
       return true;
     } catch (error) {
       return this.tellRefusal(error);
@@ -251,7 +257,7 @@ export class PartStore {
     try {
       if (command !== null) this.record(describeCommand(command), [command], { kind: reason, step });
       this.historyState.update((history) => (reason === 'undo' ? afterUndo(history, step) : afterRedo(history, step)));
-      this.newsLine.set(null);
+      this.dropOwnNews();
     } catch (error) {
       this.tellRefusal(error, `“${step.label}” can’t be ${reason === 'undo' ? 'undone' : 'done again'}. `);
       this.historyState.update((history) => markStuck(history, step.id));
@@ -275,13 +281,18 @@ export class PartStore {
       });
     }
     const line = setAsideWords(setAside, changed) ?? changed;
-    if (line !== null) this.newsLine.set(line);
+    if (line !== null) this.newsLine.set({ words: line, isOfOthers: true });
+  }
+
+  /** An edit that fits makes an earlier refusal stale, but not what others did: that stays until it is put away. */
+  private dropOwnNews(): void {
+    this.newsLine.update((line) => (line?.isOfOthers === true ? line : null));
   }
 
   /** @returns false, so that callers can hand it on; @throws what is no refusal, because that is a fault */
   private tellRefusal(error: unknown, lead = ''): false {
     if (!(error instanceof CommandRefusal)) throw error;
-    this.newsLine.set(`${lead}${error.message}`);
+    this.newsLine.set({ words: `${lead}${error.message}`, isOfOthers: false });
     return false;
   }
 }
