@@ -54,8 +54,11 @@ module.exports = {
       ],
     },
     {
-      ...withDatabase,
+      ...node,
       displayName: 'e2e',
+      // One running product for all journeys; each makes the parts it works on.
+      globalSetup: '<rootDir>/test/support/product-setup.cjs',
+      globalTeardown: '<rootDir>/test/support/product-teardown.cjs',
       testMatch: ['<rootDir>/test/e2e/**/*.test.ts', '<rootDir>/test/setup/**/*.e2e.test.ts'],
     },
     {

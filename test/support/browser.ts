@@ -1,9 +1,10 @@
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import { type Browser, type BrowserContext, type Page, chromium } from 'playwright-core';
+import { productUrl } from './product-url';
 
 const ROOT = path.resolve(__dirname, '../..');
-const CHROMIUM = ['/usr/bin/chromium', '/usr/bin/chromium-browser'];
+const CHROMIUM = '/usr/bin/chromium';
 const FLAGS = [
   ...['--no-sandbox', '--disable-quic', '--no-first-run', '--disable-background-networking'],
   ...['--disable-component-update', '--disable-sync', '--use-angle=swiftshader', '--enable-unsafe-swiftshader'],
@@ -31,15 +32,14 @@ export function personOf(role: DemoRole): Person {
 }
 
 export function launchBrowser(): Promise<Browser> {
-  const executablePath = process.env['CHROMIUM'] ?? CHROMIUM[0] ?? '';
-  return chromium.launch({ executablePath, headless: true, timeout: STEP_MS, args: FLAGS });
+  return chromium.launch({ executablePath: CHROMIUM, headless: true, timeout: STEP_MS, args: FLAGS });
 }
 
 /** A browser tab that keeps note of everything that must not happen. */
 export interface Tab {
   readonly page: Page;
   readonly context: BrowserContext;
-  /** Errors in the console, uncaught exceptions, requests to other hosts. */
+  /** Errors in the console, uncaught exceptions, breaches of the page's policy, requests to other hosts. */
   readonly faults: readonly string[];
 }
 
@@ -47,15 +47,21 @@ export interface TabOptions {
   readonly width?: number;
   readonly height?: number;
   readonly theme?: 'light' | 'dark';
+  /** What the test provokes and the browser itself tells in the console: a status, or the name of an error. */
+  readonly provoked?: readonly (number | 'ERR_INTERNET_DISCONNECTED')[];
 }
 
-/** Answers that tests provoke are told in the console by the browser itself; they are no fault of the page. */
-const PROVOKED = /the server responded with a status of (401|403|404|409|412|422)/;
+/** Says breaches of the content security policy in the console, where they are noted. */
+function tellPolicyBreaches(): void {
+  document.addEventListener('securitypolicyviolation', ({ violatedDirective, blockedURI }) =>
+    console.error(`policy breach: ${violatedDirective}, ${blockedURI}`),
+  );
+}
 
 export async function openTab(
   browser: Browser,
   baseUrl: string,
-  { width = 1280, height = 860, theme = 'light' }: TabOptions = {},
+  { width = 1280, height = 860, theme = 'light', provoked = [] }: TabOptions = {},
 ): Promise<Tab> {
   const context = await browser.newContext({
     viewport: { width, height },
@@ -65,11 +71,14 @@ export async function openTab(
     baseURL: baseUrl,
   });
   context.setDefaultTimeout(STEP_MS);
+  await context.addInitScript(tellPolicyBreaches);
   const page = await context.newPage();
+  const isProvoked = (words: string): boolean =>
+    provoked.some((one) => words.includes(` ${one} `) || words.endsWith(`::${one}`));
   const faults: string[] = [];
   page.on('pageerror', (error) => faults.push(`exception: ${error.message}`));
   page.on('console', (message) => {
-    if (message.type() === 'error' && !PROVOKED.test(message.text())) faults.push(`console: ${message.text()}`);
+    if (message.type() === 'error' && !isProvoked(message.text())) faults.push(`console: ${message.text()}`);
   });
   page.on('request', (request) => {
     const { protocol, hostname } = new URL(request.url());
@@ -86,6 +95,38 @@ export async function signIn(page: Page, role: DemoRole): Promise<void> {
   await page.getByLabel('Password', { exact: true }).fill(password);
   await page.getByRole('button', { name: 'Sign in' }).click();
   await page.waitForURL((url) => !url.pathname.includes('sign-in'));
+}
+
+/** One browser for all tests of a file; after each test its tabs are closed and asked for faults. */
+export interface BrowserOfFile {
+  /** Opens a tab, signed in when a role is named. */
+  open(role: DemoRole | null, options?: TabOptions): Promise<Tab>;
+}
+
+/** Registers what a file of journeys needs; to be called once inside its outermost `describe`. */
+export function useBrowser(): BrowserOfFile {
+  const tabs: Tab[] = [];
+  let browser: Browser | undefined;
+  beforeAll(async () => {
+    browser = await launchBrowser();
+  }, STEP_MS);
+  afterEach(async () => {
+    const closing = tabs.splice(0);
+    await Promise.all(closing.map(({ context }) => context.close()));
+    expect(closing.flatMap(({ faults }) => faults)).toEqual([]);
+  }, STEP_MS);
+  afterAll(async () => {
+    await browser?.close();
+  }, STEP_MS);
+  return {
+    async open(role, options) {
+      if (browser === undefined) throw new Error('The browser has not started.');
+      const tab = await openTab(browser, productUrl(), options);
+      tabs.push(tab);
+      if (role !== null) await signIn(tab.page, role);
+      return tab;
+    },
+  };
 }
 
 /** Bytes that a link brings. */
