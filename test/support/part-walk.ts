@@ -9,6 +9,9 @@ const SHAPES = {
   angle: { from: 'l-bracket', fields: ['Base', 'Flange', 'Width along the bend'] },
 } as const;
 
+/** A board that has not moved for so many frames has made room for its lists. */
+const REST_FRAMES = 8;
+
 /** Starts a part from typed sizes, mm, in the order in which the form asks for them, and waits for its outline. */
 export async function startTyped(
   page: Page,
@@ -18,7 +21,7 @@ export async function startTyped(
 ): Promise<void> {
   const { from, fields } = SHAPES[shape];
   await page.goto(`/parts/new?from=${from}`);
-  await page.getByLabel('Name').fill(name);
+  await page.getByLabel('Name', { exact: true }).fill(name);
   for (const [index, field] of fields.entries()) {
     await page.getByLabel(field, { exact: true }).fill(String(sizesMm[index]));
   }
@@ -73,28 +76,34 @@ export async function cornerAt(page: Page, name: string): Promise<{ readonly x: 
   return { x: Number(x), y: Number(y) };
 }
 
-/** Where a point of the layout, mm, lies on the screen, px, as the board draws it now. */
+/** Where a point of the layout, mm, lies on the screen, px, once the board has come to rest. */
 export async function onScreen(
   page: Page,
   point: { readonly x: number; readonly y: number },
 ): Promise<{ readonly x: number; readonly y: number }> {
-  return board(page).evaluate((surface, { x, y }) => {
-    const matrix = surface.querySelector('g')?.getScreenCTM();
-    if (matrix === null || matrix === undefined) throw new Error('The board draws nothing.');
-    const { x: xPx, y: yPx } = new DOMPoint(x, y).matrixTransform(matrix);
-    return { x: xPx, y: yPx };
-  }, point);
-}
-
-/** Waits until the server has everything that was drawn. */
-export async function untilSaved(page: Page): Promise<void> {
-  await page.getByText(/saved at \d/).waitFor();
+  return board(page).evaluate(
+    async (surface, { x, y, restFrames }) => {
+      const place = (): DOMPoint => {
+        const matrix = surface.querySelector('g')?.getScreenCTM();
+        if (matrix === null || matrix === undefined) throw new Error('The board draws nothing.');
+        return new DOMPoint(x, y).matrixTransform(matrix);
+      };
+      let last = place();
+      for (let still = 0; still < restFrames;) {
+        await new Promise(requestAnimationFrame);
+        const now = place();
+        still = Math.hypot(now.x - last.x, now.y - last.y) < 0.01 ? still + 1 : 0;
+        last = now;
+      }
+      return { x: last.x, y: last.y };
+    },
+    { ...point, restFrames: REST_FRAMES },
+  );
 }
 
 /** Accepts every caution and releases the draft. */
 export async function release(page: Page, letter: string): Promise<void> {
   await page.getByRole('heading', { name: `Release ${letter}` }).waitFor();
-  await untilSaved(page);
   const button = page.getByRole('button', { name: `Release ${letter}` });
   for (const box of await page.getByRole('checkbox', { name: /I have seen this/ }).all()) await box.check();
   await button.click();
