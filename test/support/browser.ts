@@ -51,10 +51,10 @@ export interface TabOptions {
   readonly provoked?: readonly (number | 'ERR_INTERNET_DISCONNECTED')[];
 }
 
-/** Says breaches of the content security policy in the console, where they are noted. */
+/** Reports breaches of the content security policy like exceptions, which are noted. */
 function tellPolicyBreaches(): void {
   document.addEventListener('securitypolicyviolation', ({ violatedDirective, blockedURI }) =>
-    console.error(`policy breach: ${violatedDirective}, ${blockedURI}`),
+    reportError(new Error(`policy breach: ${violatedDirective}, ${blockedURI}`)),
   );
 }
 
