@@ -36,7 +36,7 @@ const PROJECTS = [
   { name: 'node', workers: 2 },
   { name: 'database', workers: 2, usesDatabase: true },
   { name: 'web', workers: 2 },
-  { name: 'e2e', workers: 1, usesDatabase: true, usesBuild: true },
+  { name: 'e2e', workers: 2, usesDatabase: true, usesBuild: true },
 ];
 
 const NAMES = [...CHECKS.flat(), ...PROJECTS].map(({ name }) => name);
