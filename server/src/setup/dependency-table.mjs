@@ -93,7 +93,7 @@ const WEB = packageNames([
   'passport-local',
   'rate-limiter-flexible',
 ]);
-const BYTES = packageNames(['dxf-writer', 'makerjs', 'pdfkit', 'sharp', 'file-type', '@techstark/opencv-js', 'zod']);
+const BYTES = packageNames(['dxf-writer', 'makerjs', 'pdfkit', 'sharp', 'zod']);
 const OUTSIDE = packageNames(['nodemailer', 'stripe', 'pino', 'zod']);
 const NODE = 'node:';
 const INSIDE = ['\\./', '(?:\\.\\./)+'];
