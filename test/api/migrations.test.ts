@@ -68,7 +68,8 @@ describe('migrations', () => {
 
   it('undo a step that fails, whole', async () => {
     await withMigrator(url, password, async (umzug) => {
-      await umzug.down();
+      // Whichever step makes the table that is in the way: it has to leave nothing of itself behind.
+      await umzug.down({ to: '20261201-0300-orders-and-mail' });
       await asOwner(url, (client) => client.query('CREATE TABLE mails (id integer)'));
       await expect(umzug.up()).rejects.toThrow(/already exists/);
       const { rows } = await asOwner(url, (client) => client.query("SELECT to_regclass('orders') AS orders"));

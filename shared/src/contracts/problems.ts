@@ -12,6 +12,8 @@ export const PROBLEMS = {
   'command-refused': { status: 409, title: 'The drawing can’t take this change' },
   'already-exists': { status: 409, title: 'That exists already' },
   'wrong-state': { status: 409, title: 'It’s too late or too early for that' },
+  'not-enough-stock': { status: 409, title: 'There are not that many' },
+  'offer-changed': { status: 409, title: 'The shop’s prices or stock have changed' },
   'stale-row': { status: 412, title: 'Somebody else changed this' },
   'if-match-missing': { status: 428, title: 'The revision you saw is missing' },
   'idempotency-key-missing': { status: 428, title: 'The key against double orders is missing' },

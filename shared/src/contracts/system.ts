@@ -28,6 +28,9 @@ export const liveEventSchema = z.discriminatedUnion('kind', [
     partId: z.nullable(z.uuid()),
   }),
   z.object({ kind: z.literal('order-changed'), seq: z.int(), orderId: z.uuid() }),
+  z.object({ kind: z.literal('stock-changed'), seq: z.int(), positionId: z.uuid() }),
+  z.object({ kind: z.literal('sale-changed'), seq: z.int(), saleId: z.uuid() }),
+  z.object({ kind: z.literal('question-changed'), seq: z.int(), questionId: z.uuid() }),
   z.object({ kind: z.literal('mail-changed'), seq: z.int(), mailId: z.uuid() }),
 ]);
 export type LiveEvent = z.output<typeof liveEventSchema>;
