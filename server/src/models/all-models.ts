@@ -3,18 +3,39 @@ import type { WorkshopRow } from '../database/scoped-rows';
 import { ScopedRows } from '../database/scoped-rows';
 import { defineAuditEntry } from './audit-entry';
 import { defineCommandBatch } from './command-batch';
+import { defineCutAssignment } from './cut-assignment';
 import { defineDraft } from './draft';
+import { defineHardwareItem } from './hardware-item';
 import { defineIdempotencyKey } from './idempotency-key';
 import { defineJob } from './job';
+import { defineKit } from './kit';
+import { defineKitLine } from './kit-line';
+import { defineLedgerEntry } from './ledger-entry';
+import { defineLedgerPosting } from './ledger-posting';
+import { defineListing } from './listing';
+import { defineListingPhoto } from './listing-photo';
 import { defineMail } from './mail';
 import { defineMembership } from './membership';
 import { defineOrder } from './order';
 import { defineOrderEvent } from './order-event';
 import { definePart } from './part';
+import { definePartHardware } from './part-hardware';
 import { definePhoto } from './photo';
+import { defineQuestion } from './question';
+import { defineQuestionMessage } from './question-message';
 import { defineQuote } from './quote';
+import { defineRefund } from './refund';
 import { defineRevision } from './revision';
 import { defineRevisionFile } from './revision-file';
+import { defineSale } from './sale';
+import { defineSaleFact } from './sale-fact';
+import { defineSaleItem } from './sale-item';
+import { defineSaleLine } from './sale-line';
+import { defineShipment } from './shipment';
+import { defineShipmentItem } from './shipment-item';
+import { defineShop } from './shop';
+import { defineStockMove } from './stock-move';
+import { defineStockPosition } from './stock-position';
 import { defineUser } from './user';
 import { defineWebhookEvent } from './webhook-event';
 import { defineWorkshop } from './workshop';
@@ -40,6 +61,27 @@ export function defineModels(sequelize: Sequelize) {
     orderEvents: defineOrderEvent(sequelize),
     mails: defineMail(sequelize),
     webhookEvents: defineWebhookEvent(sequelize),
+    hardwareItems: defineHardwareItem(sequelize),
+    partHardware: definePartHardware(sequelize),
+    kits: defineKit(sequelize),
+    kitLines: defineKitLine(sequelize),
+    stockPositions: defineStockPosition(sequelize),
+    stockMoves: defineStockMove(sequelize),
+    shops: defineShop(sequelize),
+    listings: defineListing(sequelize),
+    listingPhotos: defineListingPhoto(sequelize),
+    sales: defineSale(sequelize),
+    saleLines: defineSaleLine(sequelize),
+    saleItems: defineSaleItem(sequelize),
+    saleFacts: defineSaleFact(sequelize),
+    shipments: defineShipment(sequelize),
+    shipmentItems: defineShipmentItem(sequelize),
+    refunds: defineRefund(sequelize),
+    cutAssignments: defineCutAssignment(sequelize),
+    questions: defineQuestion(sequelize),
+    questionMessages: defineQuestionMessage(sequelize),
+    ledgerEntries: defineLedgerEntry(sequelize),
+    ledgerPostings: defineLedgerPosting(sequelize),
   };
 }
 export type Models = ReturnType<typeof defineModels>;
@@ -63,6 +105,27 @@ export function workshopRows(models: Models, workshopId: string, transaction: Tr
     orderEvents: of(models.orderEvents),
     mails: of(models.mails),
     webhookEvents: of(models.webhookEvents),
+    hardwareItems: of(models.hardwareItems),
+    partHardware: of(models.partHardware),
+    kits: of(models.kits),
+    kitLines: of(models.kitLines),
+    stockPositions: of(models.stockPositions),
+    stockMoves: of(models.stockMoves),
+    shops: of(models.shops),
+    listings: of(models.listings),
+    listingPhotos: of(models.listingPhotos),
+    sales: of(models.sales),
+    saleLines: of(models.saleLines),
+    saleItems: of(models.saleItems),
+    saleFacts: of(models.saleFacts),
+    shipments: of(models.shipments),
+    shipmentItems: of(models.shipmentItems),
+    refunds: of(models.refunds),
+    cutAssignments: of(models.cutAssignments),
+    questions: of(models.questions),
+    questionMessages: of(models.questionMessages),
+    ledgerEntries: of(models.ledgerEntries),
+    ledgerPostings: of(models.ledgerPostings),
   };
 }
 export type WorkshopRows = ReturnType<typeof workshopRows>;

@@ -7,6 +7,7 @@ export class Mail extends Model<InferAttributes<Mail>, InferCreationAttributes<M
   declare workshopId: string;
   declare key: string;
   declare orderId: string | null;
+  declare saleId: CreationOptional<string | null>;
   declare recipient: string;
   declare subject: string;
   declare body: string;
@@ -27,6 +28,7 @@ export function defineMail(sequelize: Sequelize): ModelStatic<Mail> {
       workshopId: { type: DataTypes.UUID, allowNull: false },
       key: { type: DataTypes.TEXT, allowNull: false },
       orderId: { type: DataTypes.UUID, allowNull: true },
+      saleId: { type: DataTypes.UUID, allowNull: true, defaultValue: null },
       recipient: { type: DataTypes.TEXT, allowNull: false },
       subject: { type: DataTypes.TEXT, allowNull: false },
       body: { type: DataTypes.TEXT, allowNull: false },

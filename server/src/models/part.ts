@@ -1,3 +1,4 @@
+import type { Hand } from '@foldwright/shared/contracts/stock';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, ModelStatic, Sequelize } from 'sequelize';
 import { DataTypes, Model } from 'sequelize';
 
@@ -7,6 +8,9 @@ export class Part extends Model<InferAttributes<Part>, InferCreationAttributes<P
   declare workshopId: string;
   declare number: string;
   declare name: string;
+  /** Counts for revisions released from now on; each revision keeps the one it was released with. */
+  declare hand: CreationOptional<Hand>;
+  declare otherHandOf: CreationOptional<string | null>;
   declare revision: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
@@ -21,6 +25,8 @@ export function definePart(sequelize: Sequelize): ModelStatic<Part> {
       workshopId: { type: DataTypes.UUID, allowNull: false },
       number: { type: DataTypes.TEXT, allowNull: false },
       name: { type: DataTypes.TEXT, allowNull: false },
+      hand: { type: DataTypes.TEXT, allowNull: false, defaultValue: 'either' },
+      otherHandOf: { type: DataTypes.UUID, allowNull: true, defaultValue: null },
       revision: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
       createdAt: { type: DataTypes.DATE, allowNull: false, defaultValue: DataTypes.NOW },
       updatedAt: { type: DataTypes.DATE, allowNull: false, defaultValue: DataTypes.NOW },

@@ -1,3 +1,4 @@
+import type { Hand } from '@foldwright/shared/contracts/stock';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, ModelStatic, Sequelize } from 'sequelize';
 import { DataTypes, Model } from 'sequelize';
 
@@ -9,6 +10,7 @@ export class Revision extends Model<InferAttributes<Revision>, InferCreationAttr
   declare letter: string;
   declare position: number;
   declare hash: string;
+  declare hand: CreationOptional<Hand>;
   declare note: string;
   declare document: unknown;
   declare computedTrial: unknown;
@@ -31,6 +33,7 @@ export function defineRevision(sequelize: Sequelize): ModelStatic<Revision> {
       letter: { type: DataTypes.TEXT, allowNull: false },
       position: { type: DataTypes.INTEGER, allowNull: false },
       hash: { type: DataTypes.TEXT, allowNull: false },
+      hand: { type: DataTypes.TEXT, allowNull: false, defaultValue: 'either' },
       note: { type: DataTypes.TEXT, allowNull: false },
       document: { type: DataTypes.JSONB, allowNull: false },
       computedTrial: { type: DataTypes.JSONB, allowNull: false },

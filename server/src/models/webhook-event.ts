@@ -8,7 +8,8 @@ export class WebhookEvent extends Model<InferAttributes<WebhookEvent>, InferCrea
   declare provider: 'payments' | 'cutting';
   declare eventId: string;
   declare kind: string;
-  declare orderId: string;
+  declare orderId: string | null;
+  declare saleId: CreationOptional<string | null>;
   declare happenedAt: Date;
   declare body: string;
   declare receivedAt: Date;
@@ -24,7 +25,8 @@ export function defineWebhookEvent(sequelize: Sequelize): ModelStatic<WebhookEve
       provider: { type: DataTypes.TEXT, allowNull: false },
       eventId: { type: DataTypes.TEXT, allowNull: false },
       kind: { type: DataTypes.TEXT, allowNull: false },
-      orderId: { type: DataTypes.UUID, allowNull: false },
+      orderId: { type: DataTypes.UUID, allowNull: true },
+      saleId: { type: DataTypes.UUID, allowNull: true, defaultValue: null },
       happenedAt: { type: DataTypes.DATE, allowNull: false },
       body: { type: DataTypes.TEXT, allowNull: false },
       receivedAt: { type: DataTypes.DATE, allowNull: false },
