@@ -14,6 +14,9 @@ const KINDS = [
   'part-changed',
   'job-changed',
   'order-changed',
+  'stock-changed',
+  'sale-changed',
+  'question-changed',
   'mail-changed',
 ] as const satisfies readonly LiveEvent['kind'][];
 const FIRST_WAIT_MS = 1000;
