@@ -52,6 +52,15 @@ describe('ApiClient', () => {
     await expect(answer).rejects.toMatchObject({ slug: 'unreadable-answer' });
   });
 
+  it('counts a request that nobody answers in time as no connection', async () => {
+    const { client, http } = open();
+    const answer = client.call(readPart, { params: { partId: PART_ID } }, 15_000);
+    const sent = http.expectOne(`/api/parts/${PART_ID}`);
+    expect(sent.request.timeout).toBe(15_000);
+    sent.error(new ProgressEvent('timeout'), { status: 0, statusText: 'Request timeout' });
+    await expect(answer).rejects.toMatchObject({ slug: 'offline' });
+  });
+
   it('tells problems by slug, with the field that is wrong', async () => {
     const { client, http } = open();
     const answer = client.call(renamePart, { params: { partId: PART_ID }, body: { name: '', number: '' }, ifMatch: 2 });

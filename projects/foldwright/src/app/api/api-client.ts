@@ -54,9 +54,12 @@ export class ApiClient {
   private readonly http = inject(HttpClient);
   private readonly token = inject(SessionToken);
 
-  /** Sends one request and answers what the contract promises. */
-  async call<R extends RouteContract>(route: R, input: RouteInput<R>): Promise<RouteResponse<R>> {
-    const answer = await firstValueFrom(this.send(route, input));
+  /**
+   * Sends one request and answers what the contract promises.
+   * @param withinMs after so long without an answer it counts as no connection; forever when not said
+   */
+  async call<R extends RouteContract>(route: R, input: RouteInput<R>, withinMs?: number): Promise<RouteResponse<R>> {
+    const answer = await firstValueFrom(this.send(route, input, withinMs));
     return this.parse(route, answer);
   }
 
@@ -117,13 +120,13 @@ export class ApiClient {
     return routeUrl(route.path, urlValues(given.params), urlValues(given.query));
   }
 
-  private send<R extends RouteContract>(route: R, input: RouteInput<R>): Observable<unknown> {
-    return this.attempt(route, input).pipe(
+  private send<R extends RouteContract>(route: R, input: RouteInput<R>, withinMs?: number): Observable<unknown> {
+    return this.attempt(route, input, withinMs).pipe(
       catchError((error: unknown) => {
         const problem = problemFromError(error);
         if (problem.slug !== 'bad-csrf-token') throw problem;
         // Another tab signed in again, so this page's token is old. The session tells the new one; once is enough.
-        return this.renewToken().pipe(switchMap(() => this.attempt(route, input)));
+        return this.renewToken().pipe(switchMap(() => this.attempt(route, input, withinMs)));
       }),
       catchError((error: unknown): never => {
         throw problemFromError(error);
@@ -131,12 +134,13 @@ export class ApiClient {
     );
   }
 
-  private attempt<R extends RouteContract>(route: R, input: RouteInput<R>): Observable<unknown> {
+  private attempt<R extends RouteContract>(route: R, input: RouteInput<R>, withinMs?: number): Observable<unknown> {
     const given: AnyInput = input;
     return this.http.request(route.method, this.url(route, input), {
       ...(given.body === undefined ? {} : { body: given.body }),
       headers: this.headers(given),
       responseType: 'json',
+      ...(withinMs === undefined ? {} : { timeout: withinMs }),
     });
   }
 

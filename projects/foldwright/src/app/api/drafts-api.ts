@@ -21,6 +21,9 @@ import type { ApiProblem } from './api-problem';
 export type CommandLogEntry = z.output<typeof commandLogEntrySchema>;
 export type CommandBatch = RouteBody<typeof sendCommands>;
 
+/** A connection that broke without a word hangs; edits are sent again after so long, and count once. */
+const EDIT_WITHIN_MS = 15_000;
+
 /** The draft of a part: its document, its commands and what the server computes of it. */
 @Injectable({ providedIn: 'root' })
 export class DraftsApi {
@@ -34,12 +37,12 @@ export class DraftsApi {
   }
 
   readDraft(draftId: string): Promise<Draft> {
-    return this.client.call(readDraft, { params: { draftId } });
+    return this.client.call(readDraft, { params: { draftId } }, EDIT_WITHIN_MS);
   }
 
   /** Sends a batch of commands; a batch that arrives twice counts once. */
   sendCommands(draftId: string, batch: CommandBatch): Promise<Draft> {
-    return this.client.call(sendCommands, { params: { draftId }, body: batch });
+    return this.client.call(sendCommands, { params: { draftId }, body: batch }, EDIT_WITHIN_MS);
   }
 
   /** What came in between, of a `draft-moved-on` problem; null for any other. */
