@@ -13,7 +13,6 @@ const VIEWS = [
   { theme: 'light', width: 1280 },
   { theme: 'dark', width: 1280 },
   { theme: 'dark', width: 390 },
-  { theme: 'light', width: 390 },
 ] as const;
 
 describe('every page, by day and by night, wide and narrow', () => {
