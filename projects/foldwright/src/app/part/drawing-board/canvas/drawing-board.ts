@@ -16,7 +16,7 @@ import {
 } from '@angular/core';
 import { ScaleBar } from '@foldwright/ui/scale-bar/scale-bar';
 import type { DrawnDimension } from '../drawing/dimensions';
-import type { DrawnNote } from '../drawing/notes';
+import type { DrawnNote } from '../drawing/note-room';
 import type { SheetDrawing } from '../drawing/sheet-drawing';
 import type { EditorEvent, Modifiers, PointerKind } from '../tools/tool';
 import { type Insets, type Viewport, fitBounds, panBy, roundStepMm, zoomAt } from '../viewport';

@@ -7,39 +7,27 @@ import { findHoleDiameterMm } from '@foldwright/shared/stock/hole-diameter';
 import { formatDecimal } from '@foldwright/shared/units/length';
 import { edgesOfLoop, featureCentre } from '../geometry/layout-edges';
 import { type Viewport, toLayout, toScreen } from '../viewport';
+import {
+  ABOVE_CREASE_PX,
+  BELOW_CREASE_PX,
+  type Box,
+  CAPITAL_PX,
+  type DrawnNote,
+  LETTER_PX,
+  LINE_PX,
+  boxesAlong,
+  isFree,
+  noteBox,
+} from './note-room';
 
-/** A few words on the metal, or in ink where a large hole shows the bench. */
-export interface DrawnNote {
-  readonly key: string;
-  readonly lines: readonly string[];
-  readonly xPx: number;
-  readonly yPx: number;
-  readonly turnDeg: number;
-  readonly anchor: 'start' | 'middle' | 'end';
-  /** From the thing to the words, or nothing. */
-  readonly leader: string;
-  readonly isOnMetal: boolean;
-}
-
-/** Measures of the note's face, px: advance of a letter, line height, height of capitals over the base line. */
-const LETTER_PX = 7.9;
-const LINE_PX = 16;
-const CAPITAL_PX = 11;
 /** A hole that large holds its own words. */
 const ROOMY_RADIUS_PX = 40;
-/** Words may lie over so much of something else; more, and neither can be read. */
-const MOST_COVERED_PX2 = 90;
-
-interface Box {
-  readonly left: number;
-  readonly top: number;
-  readonly right: number;
-  readonly bottom: number;
-}
+/** Where along a crease its words may stand, as shares of its length, the best first. */
+const ALONG_CREASE = [0.5, 0.3, 0.7, 0.2, 0.8] as const;
 
 /**
- * Words along each bend, and at the first hole or slot of each kind ("4 × M5, Ø 5.5"), placed where they cover nothing
- * else if there is such a place.
+ * Words along each bend, and at the first hole or slot of each kind ("4 × M5, Ø 5.5"), each where it covers nothing else.
+ * Words that find no such place are left out: letters over lines can't be read, and the list has every size.
  */
 export function drawingNotes(
   layout: Layout,
@@ -47,8 +35,14 @@ export function drawingNotes(
   names: ReadonlyMap<string, string>,
 ): readonly DrawnNote[] {
   const taken: Box[] = layout.features.map((feature) => featureBox(feature, viewport));
-  const bends = bendNotes(layout, viewport, names);
-  taken.push(...bends.map(noteBox));
+  for (const { line } of layout.bends)
+    taken.push(...boxesAlong(toScreen(viewport, line.from), toScreen(viewport, line.to)));
+  const bends = layout.bends.flatMap((bend): readonly DrawnNote[] => {
+    const free = bendPlaces(bend, layout, viewport, names).find((note) => isFree(noteBox(note), taken));
+    if (free === undefined) return [];
+    taken.push(noteBox(free));
+    return [free];
+  });
   const sheet = edgesOfLoop(layout.outer).map(({ segment }) => segment);
   const openings = openingGroups(layout).flatMap((group) => {
     const note = placeNote(group, viewport, taken, sheet);
@@ -59,33 +53,43 @@ export function drawingNotes(
   return [...bends, ...openings];
 }
 
-function bendNotes(layout: Layout, viewport: Viewport, names: ReadonlyMap<string, string>): readonly DrawnNote[] {
-  return layout.bends.flatMap((bend): readonly DrawnNote[] => {
-    const from = toScreen(viewport, bend.line.from);
-    const to = toScreen(viewport, bend.line.to);
-    const words = `${names.get(bend.id) ?? ''} ${bend.direction} ${formatDecimal(bend.bendAngleDeg, 1)}°`;
-    if (Math.hypot(to.xPx - from.xPx, to.yPx - from.yPx) < words.length * LETTER_PX) return [];
-    const raw = (Math.atan2(to.yPx - from.yPx, to.xPx - from.xPx) * 180) / Math.PI;
-    // Words read from the left or from below, never upside down.
-    const turnDeg = raw > 89.9 ? raw - 180 : raw <= -90.1 ? raw + 180 : raw;
-    const turnRad = (turnDeg * Math.PI) / 180;
-    // A little off the crease, towards the base panel when the bend is not at it.
-    const middle = { x: (bend.line.from.x + bend.line.to.x) / 2, y: (bend.line.from.y + bend.line.to.y) / 2 };
-    const toBase = { x: layout.baseAnchor.x - middle.x, y: -(layout.baseAnchor.y - middle.y) };
-    const isBelow = toBase.x * -Math.sin(turnRad) + toBase.y * Math.cos(turnRad) > 0;
-    const asidePx = isBelow ? 20 : -9;
-    const note = {
-      key: bend.id,
-      lines: [words],
-      xPx: (from.xPx + to.xPx) / 2 - Math.sin(turnRad) * asidePx,
-      yPx: (from.yPx + to.yPx) / 2 + Math.cos(turnRad) * asidePx,
-      turnDeg,
-      anchor: 'middle' as const,
-      leader: '',
-      isOnMetal: true,
-    };
-    return [note];
-  });
+/** Every place along a crease where its words may stand, the best first: a little off it, on the side of the base panel. */
+function bendPlaces(
+  bend: Layout['bends'][number],
+  layout: Layout,
+  viewport: Viewport,
+  names: ReadonlyMap<string, string>,
+): readonly DrawnNote[] {
+  const from = toScreen(viewport, bend.line.from);
+  const to = toScreen(viewport, bend.line.to);
+  const lengthPx = Math.hypot(to.xPx - from.xPx, to.yPx - from.yPx);
+  const words = `${names.get(bend.id) ?? ''} ${bend.direction} ${formatDecimal(bend.bendAngleDeg, 1)}°`;
+  const wordsPx = words.length * LETTER_PX;
+  const raw = (Math.atan2(to.yPx - from.yPx, to.xPx - from.xPx) * 180) / Math.PI;
+  // Words read from the left or from below, never upside down.
+  const turnDeg = raw > 89.9 ? raw - 180 : raw <= -90.1 ? raw + 180 : raw;
+  const turnRad = (turnDeg * Math.PI) / 180;
+  const middle = { x: (bend.line.from.x + bend.line.to.x) / 2, y: (bend.line.from.y + bend.line.to.y) / 2 };
+  const toBase = { x: layout.baseAnchor.x - middle.x, y: -(layout.baseAnchor.y - middle.y) };
+  const isBaseBelow = toBase.x * -Math.sin(turnRad) + toBase.y * Math.cos(turnRad) > 0;
+  const asides = isBaseBelow ? [BELOW_CREASE_PX, ABOVE_CREASE_PX] : [ABOVE_CREASE_PX, BELOW_CREASE_PX];
+  return asides.flatMap((asidePx) =>
+    ALONG_CREASE.flatMap((share): readonly DrawnNote[] => {
+      if (Math.min(share, 1 - share) * lengthPx < wordsPx / 2) return [];
+      return [
+        {
+          key: bend.id,
+          lines: [words],
+          xPx: from.xPx + (to.xPx - from.xPx) * share - Math.sin(turnRad) * asidePx,
+          yPx: from.yPx + (to.yPx - from.yPx) * share + Math.cos(turnRad) * asidePx,
+          turnDeg,
+          anchor: 'middle',
+          leader: '',
+          isOnMetal: true,
+        },
+      ];
+    }),
+  );
 }
 
 interface OpeningGroup {
@@ -109,18 +113,13 @@ function openingGroups(layout: Layout): readonly OpeningGroup[] {
   });
 }
 
-/**
- * The place on the sheet, at any of the group's things and on any side of it, where the words cover least. Words that find
- * no room on the metal are left out: letters over lines or on the card can't be read, and the list has every size.
- */
+/** The first place on the sheet, at any of the group's things and on any side of it, where the words cover nothing. */
 function placeNote(
   { key, lines, features }: OpeningGroup,
   viewport: Viewport,
   taken: readonly Box[],
   sheet: Loop,
 ): DrawnNote | null {
-  let best: DrawnNote | null = null;
-  let least = Infinity;
   for (const feature of features) {
     const at = toScreen(viewport, featureCentre(feature));
     const radiusPx = (sizeMm(feature) / 2) * viewport.pxPerMm;
@@ -130,12 +129,10 @@ function placeNote(
     }
     for (const candidate of besides(key, lines, at.xPx, at.yPx, reachPx(feature, viewport))) {
       const box = noteBox(candidate);
-      if (!isOnSheet(box, viewport, sheet)) continue;
-      const covered = taken.reduce((sum, other) => sum + overlapPx(box, other), 0);
-      if (covered < least) [best, least] = [candidate, covered];
+      if (isOnSheet(box, viewport, sheet) && isFree(box, taken)) return candidate;
     }
   }
-  return least > MOST_COVERED_PX2 ? null : best;
+  return null;
 }
 
 function isOnSheet(box: Box, viewport: Viewport, sheet: Loop): boolean {
@@ -175,21 +172,6 @@ function besides(
   return [...straight, ...corners];
 }
 
-function noteBox(note: DrawnNote): Box {
-  const widthPx = Math.max(...note.lines.map((line) => line.length)) * LETTER_PX;
-  const heightPx = (note.lines.length - 1) * LINE_PX + CAPITAL_PX + 4;
-  if (Math.abs(note.turnDeg) > 45) {
-    return {
-      left: note.xPx - CAPITAL_PX,
-      right: note.xPx + 4,
-      top: note.yPx - widthPx / 2,
-      bottom: note.yPx + widthPx / 2,
-    };
-  }
-  const left = note.anchor === 'start' ? note.xPx : note.anchor === 'end' ? note.xPx - widthPx : note.xPx - widthPx / 2;
-  return { left, right: left + widthPx, top: note.yPx - CAPITAL_PX, bottom: note.yPx - CAPITAL_PX + heightPx };
-}
-
 function featureBox(feature: Feature, viewport: Viewport): Box {
   const at = toScreen(viewport, featureCentre(feature));
   const reach = reachPx(feature, viewport);
@@ -203,12 +185,6 @@ function reachPx(feature: Feature, viewport: Viewport): { readonly xPx: number; 
     xPx: (radius + Math.abs(feature.to.x - feature.from.x) / 2) * viewport.pxPerMm,
     yPx: (radius + Math.abs(feature.to.y - feature.from.y) / 2) * viewport.pxPerMm,
   };
-}
-
-function overlapPx(a: Box, b: Box): number {
-  const across = Math.min(a.right, b.right) - Math.max(a.left, b.left);
-  const down = Math.min(a.bottom, b.bottom) - Math.max(a.top, b.top);
-  return across > 0 && down > 0 ? across * down : 0;
 }
 
 function sizeMm(feature: Feature): number {
