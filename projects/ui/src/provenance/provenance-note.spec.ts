@@ -15,6 +15,11 @@ describe('ProvenanceNote', () => {
     );
   });
 
+  it('says common practice once', async () => {
+    const of = { text: 'usual die', source: 'common practice, no source', confidence: 'common-practice' };
+    expect(await read(of)).toBe('usual die, common practice, no source');
+  });
+
   it('does not name the source twice and owns up to memory', async () => {
     expect(await read({ text: 'factors of trade charts', source: 'trade charts', confidence: 'memory' })).toBe(
       'factors of trade charts (from memory, check it)',

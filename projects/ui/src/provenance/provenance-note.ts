@@ -17,7 +17,10 @@ export function confidenceWords(confidence: Confidence): string {
 /** Where a number comes from, in half a line of plain words. The source's own name follows where it says more. */
 @Component({
   selector: 'fw-provenance',
-  template: `{{ line() }}<span class="trust"> ({{ trust() }})</span>`,
+  template: `{{ line() }}
+    @if (trust(); as words) {
+      <span class="trust"> ({{ words }})</span>
+    }`,
   styles: `
     :host {
       font: var(--fw-note);
@@ -37,5 +40,9 @@ export class ProvenanceNote {
     const { text, source } = this.of();
     return source === '' || text.includes(source) ? text : `${text}, ${source}`;
   });
-  protected readonly trust = computed(() => confidenceWords(this.of().confidence));
+  /** Said once: a source that says it itself needs no second word. */
+  protected readonly trust = computed(() => {
+    const words = confidenceWords(this.of().confidence);
+    return this.line().includes(words) ? null : words;
+  });
 }
