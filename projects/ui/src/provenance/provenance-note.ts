@@ -19,7 +19,7 @@ export function confidenceWords(confidence: Confidence): string {
   selector: 'fw-provenance',
   template: `{{ line() }}
     @if (trust(); as words) {
-      &ngsp;<span class="trust">({{ words }})</span>
+      <span class="trust">({{ words }})</span>
     }`,
   styles: `
     :host {
