@@ -41,6 +41,7 @@ export async function startWorkerProcess(
       { queue: 'mail', handle: ({ data }) => commerce.mail(data) },
       { queue: 'cutting-order', handle: ({ data }) => commerce['cutting-order'](data) },
       { queue: 'payment', handle: ({ data }) => commerce.payment(data) },
+      { queue: 'sale', handle: ({ data }) => commerce.sale(data) },
     ],
   });
   logger.info({ workerId: worker.workerId }, 'worker waits for work');

@@ -148,7 +148,7 @@ export async function startCommerce({
       let failures = 0;
       for (let isIdle = false; !isIdle;) {
         isIdle = true;
-        for (const name of ['mail', 'cutting-order', 'payment'] as const) {
+        for (const name of ['mail', 'cutting-order', 'payment', 'sale'] as const) {
           for (const job of await queue.boss.fetch(name)) {
             isIdle = false;
             try {

@@ -4,6 +4,7 @@ import type { FileStore } from '../files/file-store';
 import type { PaymentHost } from '../payments/payment-host';
 import type { SendMailTools } from '../services/send-mail';
 import { sendMail } from '../services/send-mail';
+import { closeSaleCheckout, expireSale, sendRefund } from '../services/sales/settle-sale';
 import { closeCheckout, refundPayment } from '../services/settle-payment';
 import { submitCuttingOrder } from '../services/submit-cutting-order';
 import type { QueueName } from './queue';
@@ -25,6 +26,12 @@ const paymentWork = z.discriminatedUnion('task', [
   z.object({ task: z.literal('close-checkout'), ...orderWork.shape }),
 ]);
 
+const saleWork = z.discriminatedUnion('task', [
+  z.object({ task: z.literal('refund'), workshopId: z.uuid(), refundId: z.uuid() }),
+  z.object({ task: z.literal('expire'), workshopId: z.uuid(), saleId: z.uuid() }),
+  z.object({ task: z.literal('close-checkout'), workshopId: z.uuid(), saleId: z.uuid() }),
+]);
+
 /** The handlers of everything that follows an order: mail, the cutting service, the payment host. */
 export function commerceWork(tools: CommerceTools): Readonly<Record<Exclude<QueueName, 'trace'>, Handle>> {
   return {
@@ -34,6 +41,12 @@ export function commerceWork(tools: CommerceTools): Readonly<Record<Exclude<Queu
       const work = paymentWork.parse(data);
       if (work.task === 'refund') await refundPayment(tools.payments, work);
       else await closeCheckout(tools, work);
+    },
+    sale: async (data) => {
+      const work = saleWork.parse(data);
+      if (work.task === 'refund') await sendRefund(tools, work);
+      else if (work.task === 'expire') await expireSale(tools, work);
+      else await closeSaleCheckout(tools, work);
     },
   };
 }

@@ -12,6 +12,14 @@ export interface CheckoutRequest {
   readonly idempotencyKey: string;
 }
 
+export interface RefundRequest {
+  readonly orderId: string;
+  readonly paymentId: string;
+  /** Part of the payment, minor units; null for all that is left of it. */
+  readonly amountMinor: number | null;
+  readonly idempotencyKey: string;
+}
+
 export interface CheckoutSession {
   readonly id: string;
   readonly state: 'open' | 'paid' | 'expired';
@@ -36,6 +44,9 @@ export type PaymentEvent = {
   | { readonly kind: 'refunded'; readonly orderId: string; readonly paymentId: string; readonly refundedMinor: number }
   | { readonly kind: 'of-no-concern'; readonly type: string }
 );
+
+/** An event about money or a payment page of ours. */
+export type MoneyEvent = Exclude<PaymentEvent, { kind: 'of-no-concern' }>;
 
 /** A message that does not prove where it comes from, or is too old to count. */
 export class UnprovenMessage extends Error {}
@@ -68,10 +79,12 @@ export interface PaymentHost {
    */
   closeCheckout(sessionId: string): Promise<CheckoutSession>;
   /**
-   * Send a whole payment back; one that went back already counts as done.
+   * Send a payment back, whole or in part. The same key gives the same refund, however often it is sent; a payment that
+   * went back whole already counts as done.
+   * @returns whether the money has gone through; if not, an event tells of it later
    * @throws PaymentHostUnreachable, PaymentHostRefused
    */
-  refund(paymentId: string, orderId: string): Promise<void>;
+  refund(request: RefundRequest): Promise<{ readonly isDone: boolean }>;
   /**
    * Prove and read a message, from its bytes as they came.
    * @throws UnprovenMessage

@@ -1,5 +1,5 @@
 import Stripe from 'stripe';
-import type { CheckoutRequest, CheckoutSession, PaymentEvent, PaymentHost } from './payment-host';
+import type { CheckoutRequest, CheckoutSession, PaymentEvent, PaymentHost, RefundRequest } from './payment-host';
 import { PaymentHostRefused, PaymentHostUnreachable, UnprovenMessage } from './payment-host';
 
 export interface StripePaymentHostOptions {
@@ -85,16 +85,28 @@ export class StripePaymentHost implements PaymentHost {
     }
   }
 
-  async refund(paymentId: string, orderId: string): Promise<void> {
+  async refund({ orderId, paymentId, amountMinor, idempotencyKey }: RefundRequest): Promise<{ isDone: boolean }> {
     try {
-      await this.ask(() =>
+      const refund = await this.ask(() =>
         this.stripe.refunds.create(
-          { payment_intent: paymentId, metadata: { orderId } },
-          { idempotencyKey: `refund-${paymentId}` },
+          {
+            payment_intent: paymentId,
+            metadata: { orderId },
+            ...(amountMinor === null ? {} : { amount: amountMinor }),
+          },
+          { idempotencyKey },
         ),
       );
+      if (refund.status === 'failed' || refund.status === 'canceled') {
+        throw new PaymentHostRefused(
+          refund.failure_reason ?? refund.status,
+          'The payment host could not send it back.',
+        );
+      }
+      return { isDone: refund.status === 'succeeded' };
     } catch (error) {
-      if (error instanceof PaymentHostRefused && error.code === 'charge_already_refunded') return;
+      const isAllBack = error instanceof PaymentHostRefused && error.code === 'charge_already_refunded';
+      if (isAllBack && amountMinor === null) return { isDone: true };
       throw error;
     }
   }

@@ -21,13 +21,13 @@ export async function receiveCuttingCallback(
     provider: 'cutting',
     eventId: id,
     kind: step,
-    orderId: orderReference,
+    aboutId: orderReference,
     happenedAt: at,
     body,
   } as const;
-  await takeMessage(tools, 'find the workshop of a cutting callback', message, () =>
-    Promise.resolve([factOf(progress)]),
-  );
+  await takeMessage(tools, 'find the workshop of a cutting callback', message, {
+    order: () => Promise.resolve([factOf(progress)]),
+  });
 }
 
 async function provenProgress(

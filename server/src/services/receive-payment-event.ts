@@ -2,12 +2,11 @@ import type { AppDependencies } from '../app-dependencies';
 import type { WorkshopScope } from '../database/workshop-scope';
 import type { Queue } from '../jobs/queue';
 import type { Order } from '../models/order';
-import type { PaymentEvent, PaymentHost } from '../payments/payment-host';
+import type { MoneyEvent, PaymentEvent, PaymentHost } from '../payments/payment-host';
 import { UnprovenMessage } from '../payments/payment-host';
 import type { OrderFact } from './order-state';
+import { saleFactsOf } from './sales/payment-facts';
 import { refuseMessage, takeMessage } from './take-message';
-
-type OrderPaymentEvent = Exclude<PaymentEvent, { kind: 'of-no-concern' }>;
 
 /**
  * Take a signed event of the payment host, from its bytes as they came.
@@ -21,10 +20,11 @@ export async function receivePaymentEvent(
   const event = await provenEvent(tools, tools.payments, body, signature);
   if (event.kind === 'of-no-concern') return;
   const { id, at, kind, orderId } = event;
-  const message = { provider: 'payments', eventId: id, kind, orderId, happenedAt: at, body } as const;
-  await takeMessage(tools, 'find the workshop of a payment event', message, (scope, order) =>
-    factsOf(scope, order, event, tools.queue),
-  );
+  const message = { provider: 'payments', eventId: id, kind, aboutId: orderId, happenedAt: at, body } as const;
+  await takeMessage(tools, 'find the workshop of a payment event', message, {
+    order: (scope, order) => factsOf(scope, order, event, tools.queue),
+    sale: (scope, sale) => saleFactsOf(scope, sale, event, tools),
+  });
 }
 
 async function provenEvent(
@@ -45,7 +45,7 @@ async function provenEvent(
 async function factsOf(
   scope: WorkshopScope,
   order: Order,
-  event: OrderPaymentEvent,
+  event: MoneyEvent,
   queue: Queue,
 ): Promise<readonly OrderFact[]> {
   const base = { at: event.at, source: event.id };

@@ -5,6 +5,7 @@ import type { Mailer } from '../mail/mailer';
 import { MailNotTaken } from '../mail/mailer';
 import type { Mail } from '../models/mail';
 import type { TellOrderTools } from './tell-order';
+import { tellSale } from './sales/tell-sale';
 import { tellOrder } from './tell-order';
 
 export interface MailWork {
@@ -79,16 +80,23 @@ async function tryToSend(mailer: Mailer, { recipient, subject, body, messageId }
 
 /** In a transaction of its own: the one that held the mail must not be run again for the sake of a timeline. */
 async function tellOrderOfMail(tools: SendMailTools, mail: Mail): Promise<void> {
-  const { orderId, sentAt } = mail;
-  if (orderId === null || sentAt === null) return;
+  const { orderId, saleId, sentAt } = mail;
+  if (sentAt === null) return;
+  const details = { subject: mail.subject };
+  const fact = {
+    key: `mail-sent:${mail.key}`,
+    kind: 'mail-sent',
+    at: sentAt,
+    source: mail.messageId,
+    details,
+  } as const;
   await tools.database.inWorkshop(mail.workshopId, async (scope) => {
-    const order = await scope.rows.orders.get(orderId, { lock: true });
-    const details = { subject: mail.subject };
-    await tellOrder(
-      scope,
-      order,
-      [{ key: `mail-sent:${mail.key}`, kind: 'mail-sent', at: sentAt, source: mail.messageId, details }],
-      tools,
-    );
+    if (orderId !== null) {
+      await tellOrder(scope, await scope.rows.orders.get(orderId, { lock: true }), [fact], tools);
+    }
+    // What the workshop is told itself stands in the sale already.
+    if (saleId !== null && !mail.key.endsWith(':workshop')) {
+      await tellSale(scope, await scope.rows.sales.get(saleId, { lock: true }), [fact], tools);
+    }
   });
 }

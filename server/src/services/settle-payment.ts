@@ -12,7 +12,7 @@ export interface RefundWork {
  * @throws PaymentHostUnreachable, PaymentHostRefused for the queue to try again
  */
 export async function refundPayment(payments: PaymentHost, { orderId, paymentId }: RefundWork): Promise<void> {
-  await payments.refund(paymentId, orderId);
+  await payments.refund({ orderId, paymentId, amountMinor: null, idempotencyKey: `refund-${paymentId}` });
 }
 
 /**

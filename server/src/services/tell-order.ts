@@ -6,6 +6,7 @@ import { letterAbout } from './order-letters';
 import { factOf, factRowId } from './order-rows';
 import type { OrderFact } from './order-state';
 import { joinFact, paymentsOf, standingOf, workDue } from './order-state';
+import { bookCutting } from './sales/book-ledger';
 import { writeMail } from './write-mail';
 
 export interface TellOrderTools {
@@ -48,6 +49,7 @@ export async function tellOrder(
     } else await scope.rows.orderEvents.change(row, { at, source, details });
   }
   await scope.rows.orders.change(order, standingOf(after));
+  await bookMoney(scope, order, { before, after });
   await enqueueWork(scope, order, { before, after }, tools.queue);
   await writeLetters(scope, order, { before, after }, tools);
   await recordEvent(scope, { kind: 'order-changed', orderId: order.id });
@@ -57,6 +59,13 @@ export async function tellOrder(
 interface Change {
   readonly before: readonly OrderFact[];
   readonly after: readonly OrderFact[];
+}
+
+/** Every payment and every refund goes into the books, those made in vain too. */
+async function bookMoney(scope: WorkshopScope, order: Order, { before, after }: Change): Promise<void> {
+  for (const { kind, key, at } of after.filter((one) => !before.some((known) => known.key === one.key))) {
+    if (kind === 'paid' || kind === 'refunded') await bookCutting(scope, order, { kind, key, at });
+  }
 }
 
 async function enqueueWork(scope: WorkshopScope, order: Order, { before, after }: Change, queue: Queue): Promise<void> {

@@ -8,6 +8,7 @@ export interface NewMail extends Letter {
   /** What the mail is about: a second mail of the same key is not written. */
   readonly key: string;
   readonly orderId: string | null;
+  readonly saleId?: string | null;
   readonly recipient: string;
 }
 
@@ -19,13 +20,13 @@ const MESSAGE_ID_DOMAIN = 'foldwright.example.test';
  * the end of a transaction, as `recordEvent`.
  */
 export async function writeMail(scope: WorkshopScope, queue: Queue, mail: NewMail, now: Date): Promise<void> {
-  const { key, orderId, recipient, subject, body } = mail;
+  const { key, orderId, saleId = null, recipient, subject, body } = mail;
   const id = randomUUID();
   // The unique key decides between two transactions that want to write the same mail.
   const written = await scope.sql(
-    `INSERT INTO mails (id, workshop_id, key, order_id, recipient, subject, body, message_id, created_at)
-     VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9) ON CONFLICT (workshop_id, key) DO NOTHING RETURNING id`,
-    [id, scope.workshopId, key, orderId, recipient, subject, body, `<${id}@${MESSAGE_ID_DOMAIN}>`, now],
+    `INSERT INTO mails (id, workshop_id, key, order_id, sale_id, recipient, subject, body, message_id, created_at)
+     VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10) ON CONFLICT (workshop_id, key) DO NOTHING RETURNING id`,
+    [id, scope.workshopId, key, orderId, saleId, recipient, subject, body, `<${id}@${MESSAGE_ID_DOMAIN}>`, now],
   );
   if (written.length === 0) return;
   await queue.enqueue(scope.transaction, 'mail', { workshopId: scope.workshopId, mailId: id });
