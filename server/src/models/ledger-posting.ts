@@ -1,4 +1,4 @@
-import type { Ledger } from '@foldwright/shared/contracts/sales';
+import type { Ledger } from '@foldwright/shared/contracts/ledger';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, ModelStatic, Sequelize } from 'sequelize';
 import { DataTypes, Model } from 'sequelize';
 

@@ -6,6 +6,7 @@ import { partRoutes } from './parts';
 import { photoRoutes } from './photos';
 import { revisionRoutes } from './revisions';
 import { sessionRoutes } from './session';
+import { stockRoutes } from './stock';
 import { systemRoutes } from './system';
 
 /** Every route of the product. `serveRoutes` refuses to start when one of the registry is missing here. */
@@ -16,6 +17,7 @@ export function allRoutes(dependencies: AppDependencies): BoundRoute[] {
     ...photoRoutes(dependencies),
     ...revisionRoutes(dependencies),
     ...orderRoutes(dependencies),
+    ...stockRoutes(dependencies),
     ...officeMailRoutes(dependencies),
     ...systemRoutes(dependencies),
   ];

@@ -30,7 +30,7 @@ const PLACEHOLDER: Starter = { shape: 'flat-plate', widthMm: 100, heightMm: 60 }
 const numberRow = z.object({ prefix: z.string(), highest: z.int() });
 
 /** The workshop's prefix and one more than the highest number with it. Held until the transaction ends. */
-async function nextNumber(scope: WorkshopScope): Promise<string> {
+export async function nextNumber(scope: WorkshopScope): Promise<string> {
   await scope.sql("SELECT pg_advisory_xact_lock(hashtextextended('part number:' || $1, 0))", [scope.workshopId]);
   const [row] = await scope.sql(
     `SELECT w.number_prefix AS prefix, COALESCE(MAX(substring(p.number FROM '^' || w.number_prefix || '-(\\d{1,9})$')::int), 0) AS highest

@@ -38,13 +38,14 @@ interface Prepared {
 }
 
 /**
- * SHA-256 over what a release freezes: which part and letter, the document, both computed tables, and the versions of
+ * SHA-256 over what a release freezes: which part, letter and hand, the document, both computed tables, and the versions of
  * rules and tables. Orders and drawings carry it.
  */
 function releaseHash(part: Part, draft: Draft, document: PartDocument, computations: PartComputations): string {
   const frozen = {
     partId: part.id,
     letter: draft.letter,
+    hand: part.hand,
     document,
     trial: computations.trial.computed,
     production: computations.production.computed,
@@ -104,6 +105,7 @@ async function freeze(
     letter: draft.letter,
     position: await scope.rows.revisions.count({ partId: part.id }),
     hash,
+    hand: part.hand,
     note: input.note,
     document,
     computedTrial: computations.trial.computed,

@@ -5,6 +5,7 @@ import * as photos from './photos';
 import * as revisions from './revisions';
 import type { RouteContract } from './route';
 import * as session from './session';
+import * as stock from './stock';
 import * as system from './system';
 
 /** Every route of the product. One that is not listed here does not exist. */
@@ -44,6 +45,20 @@ export const ROUTE_CONTRACTS: readonly RouteContract[] = [
   orders.cancelOrder,
   orders.receivePaymentEvent,
   orders.receiveCuttingCallback,
+  stock.listStock,
+  stock.receiveStock,
+  stock.adjustStock,
+  stock.listStockMoves,
+  stock.createHardware,
+  stock.changeHardware,
+  stock.listKits,
+  stock.createKit,
+  stock.changeKit,
+  stock.listReleasedBrackets,
+  stock.listEarnings,
+  stock.setPartHardware,
+  stock.setPartHand,
+  stock.makeOtherHand,
   office.listMails,
   office.listMembers,
   office.listAuditTrail,

@@ -2,8 +2,9 @@ import * as z from 'zod/mini';
 import { partDocumentSchema } from './part-document-schema';
 import { defineRoute } from './route';
 import { moneySchema, oneLine, rowId, timestamp } from './scalars';
-import { addressSchema, questionSchema, shopFrontSchema } from './shop';
+import { questionSchema } from './questions';
 import { bracketRefSchema, finishId, handSchema } from './stock';
+import { addressSchema } from './storefront';
 
 /** How far a sale to a customer is, derived from its facts. */
 export const SALE_STATES = ['placed', 'paid', 'partly-shipped', 'shipped', 'delivered', 'cancelled'] as const;
@@ -99,7 +100,8 @@ const totalsShape = {
   refunded: moneySchema,
 };
 
-const saleShape = {
+/** What a workshop and its customer both see of a sale. */
+export const saleShape = {
   id: rowId,
   number: z.int(),
   state: z.enum(SALE_STATES),
@@ -133,17 +135,6 @@ export const saleSchema = z.object({
 });
 export type Sale = z.output<typeof saleSchema>;
 
-/** The same as its customer sees it, behind a private link. */
-export const customerOrderSchema = z.object({
-  shop: shopFrontSchema,
-  ...saleShape,
-  canPay: z.boolean(),
-  canCancel: z.boolean(),
-  hasFittingSheet: z.boolean(),
-  hasInvoice: z.boolean(),
-});
-export type CustomerOrder = z.output<typeof customerOrderSchema>;
-
 export const saleSummarySchema = z.object({
   id: rowId,
   number: z.int(),
@@ -159,53 +150,10 @@ export const saleSummarySchema = z.object({
 });
 export type SaleSummary = z.output<typeof saleSummarySchema>;
 
-export const LEDGER_ACCOUNTS = ['payment-host', 'sales', 'postage', 'tax', 'refunds', 'cutting', 'paid-out'] as const;
-/** Money in double entry: every entry’s postings add up to nothing; a debit is above zero. */
-export const ledgerSchema = z.object({
-  money: z.object({
-    accounts: z.array(z.object({ account: z.enum(LEDGER_ACCOUNTS), balance: moneySchema })),
-    entries: z.array(
-      z.object({
-        id: rowId,
-        at: timestamp,
-        text: z.string(),
-        saleId: z.nullable(rowId),
-        orderId: z.nullable(rowId),
-        postings: z.array(z.object({ account: z.enum(LEDGER_ACCOUNTS), amount: moneySchema })),
-      }),
-    ),
-    /** Sum over all accounts; anything but 0 is a fault of ours. */
-    difference: moneySchema,
-    /** What the books say customers paid less refunds, and what the sales themselves say. */
-    proof: z.object({ books: moneySchema, sales: moneySchema }),
-  }),
-  units: z.object({
-    rows: z.array(
-      z.object({
-        positionId: rowId,
-        what: z.string(),
-        received: z.int(),
-        adjusted: z.int(),
-        returned: z.int(),
-        shipped: z.int(),
-        onHand: z.int(),
-        reserved: z.int(),
-        /** What sales say is reserved and shipped for this position. */
-        salesReserved: z.int(),
-        salesShipped: z.int(),
-        difference: z.int(),
-      }),
-    ),
-    difference: z.int(),
-  }),
-});
-export type Ledger = z.output<typeof ledgerSchema>;
-
 const owners = ['owner'] as const;
 const sellers = ['owner', 'fabricator'] as const;
 const crew = ['owner', 'fabricator', 'viewer'] as const;
 const saleIdParams = z.strictObject({ saleId: rowId });
-const linkParams = z.strictObject({ link: z.string().check(z.regex(/^[A-Za-z0-9_-]{20,80}$/)) });
 const pieces = z.int().check(z.gte(1), z.lte(100_000));
 const minor = z.int().check(z.gte(0), z.lte(100_000_000));
 
@@ -378,17 +326,6 @@ export const recordReturn = defineRoute({
   idempotent: true,
   problems: ['wrong-state', 'stale-row'],
 });
-export const readLedger = defineRoute({
-  id: 'readLedger',
-  method: 'GET',
-  path: '/api/ledger',
-  tag: 'sales',
-  access: owners,
-  summary: 'The books: money to the cent and brackets to the piece, with the proof that both balance',
-  answer: 'json',
-  response: ledgerSchema,
-  successStatus: 200,
-});
 export const listBuyers = defineRoute({
   id: 'listBuyers',
   method: 'GET',
@@ -413,112 +350,6 @@ export const listBuyers = defineRoute({
         bought: z.int(),
         shipped: z.int(),
         returned: z.int(),
-      }),
-    ),
-  }),
-  successStatus: 200,
-});
-
-// --- the customer, behind a private link -----------------------------------------------------------------------------
-
-export const readSaleByLink = defineRoute({
-  id: 'readSaleByLink',
-  method: 'GET',
-  path: '/api/sale-links/:link',
-  tag: 'storefront',
-  access: 'public',
-  summary: 'A customer’s order by its private link',
-  params: linkParams,
-  answer: 'json',
-  response: customerOrderSchema,
-  successStatus: 200,
-});
-export const openSaleCheckout = defineRoute({
-  id: 'openSaleCheckout',
-  method: 'POST',
-  path: '/api/sale-links/:link/checkout',
-  tag: 'storefront',
-  access: 'public',
-  summary: 'Open the hosted payment page, or answer the one that is open',
-  params: linkParams,
-  answer: 'json',
-  response: z.object({ url: z.url() }),
-  successStatus: 201,
-  idempotent: true,
-  problems: ['wrong-state', 'service-unreachable'],
-});
-export const cancelSaleByLink = defineRoute({
-  id: 'cancelSaleByLink',
-  method: 'POST',
-  path: '/api/sale-links/:link/cancel',
-  tag: 'storefront',
-  access: 'public',
-  summary: 'Cancel the order as long as nothing of it was shipped; what was paid goes back',
-  params: linkParams,
-  answer: 'json',
-  response: customerOrderSchema,
-  successStatus: 200,
-  ifMatch: true,
-  problems: ['wrong-state', 'stale-row'],
-});
-export const askByLink = defineRoute({
-  id: 'askByLink',
-  method: 'POST',
-  path: '/api/sale-links/:link/messages',
-  tag: 'storefront',
-  access: 'public',
-  summary: 'Ask about fit on the order; the workshop gets it by mail',
-  params: linkParams,
-  body: z.strictObject({ text: z.string().check(z.trim(), z.minLength(1), z.maxLength(3000)) }),
-  bodyKind: 'json',
-  answer: 'json',
-  response: customerOrderSchema,
-  successStatus: 201,
-  idempotent: true,
-  problems: ['too-many-requests'],
-});
-export const readFittingSheet = defineRoute({
-  id: 'readFittingSheet',
-  method: 'GET',
-  path: '/api/sale-links/:link/fitting-sheet',
-  tag: 'storefront',
-  access: 'public',
-  summary: 'Fitting sheet (PDF): what it is, hardware, steps, cautions',
-  params: linkParams,
-  answer: 'file',
-  successStatus: 200,
-});
-export const readInvoiceByLink = defineRoute({
-  id: 'readInvoiceByLink',
-  method: 'GET',
-  path: '/api/sale-links/:link/invoice',
-  tag: 'storefront',
-  access: 'public',
-  summary: 'Invoice (PDF) once it is paid',
-  params: linkParams,
-  answer: 'file',
-  successStatus: 200,
-  problems: ['wrong-state'],
-});
-export const listPurchases = defineRoute({
-  id: 'listPurchases',
-  method: 'GET',
-  path: '/api/purchases',
-  tag: 'storefront',
-  access: 'signed-in',
-  summary: 'What the person who is signed in has bought, in every shop',
-  answer: 'json',
-  response: z.object({
-    purchases: z.array(
-      z.object({
-        link: z.string(),
-        number: z.int(),
-        shopName: z.string(),
-        shopSlug: z.string(),
-        placedAt: timestamp,
-        what: z.string(),
-        total: moneySchema,
-        state: z.enum(SALE_STATES),
       }),
     ),
   }),

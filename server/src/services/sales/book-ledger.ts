@@ -1,4 +1,4 @@
-import type { Ledger } from '@foldwright/shared/contracts/sales';
+import type { Ledger } from '@foldwright/shared/contracts/ledger';
 import { partMinor } from '@foldwright/shared/pricing/included-tax';
 import type { WorkshopScope } from '../../database/workshop-scope';
 import type { Order } from '../../models/order';
