@@ -31,3 +31,16 @@ export const cautionsFor = (input: DocumentInput): readonly string[] => [
   ...input.document.declaredUses.map((use) => BY_USE[use]),
   ...ALWAYS,
 ];
+
+/** What whoever fits a bought bracket is told (common practice, no source). */
+const WHEN_FITTING = [
+  'Edges are deburred, corners still bite: wear gloves and eye protection while you fit it.',
+  'If a size or the revision differs from what is printed here, don’t fit it; ask the workshop.',
+  'Strength, fatigue and vibration are not worked out. Where failure could hurt someone, ask a licensed engineer and follow the local code.',
+] as const;
+
+/** Cautions for a buyer, those of the declared uses of all brackets first. */
+export const cautionsForBuyers = (uses: Iterable<DeclaredUse>): readonly string[] => [
+  ...[...new Set(uses)].map((use) => BY_USE[use]),
+  ...WHEN_FITTING,
+];
