@@ -1,7 +1,3 @@
-import { layOutMesh, poseFormed } from '@foldwright/shared/bending/formed-mesh';
-import { type ScreenPoint, TO_LIGHT, project } from '@foldwright/shared/drawing/axonometry';
-import { paintSolid } from '@foldwright/shared/drawing/solid-view';
-import { dot3 } from '@foldwright/shared/geometry/vector3';
 import type { Point } from '@foldwright/shared/geometry/point';
 import { cautionsFor } from './cautions';
 import { type DocumentInput, documentDate, revisionWords } from './document-input';
@@ -9,6 +5,7 @@ import { drawDimensions } from './drawing-dimensions';
 import { DRAWING_BORDER, DRAWING_PAGE, TITLE_BLOCK_HEIGHT_MM, TITLE_BLOCK_WIDTH_MM, drawFrame } from './drawing-frame';
 import { TableColumn } from './drawing-table-column';
 import { bendTable, formedSizeTable, openingTable } from './drawing-tables';
+import { drawFormedPicture } from './formed-picture';
 import { type FlatViewPlace, drawFlat, labelBends, labelOpenings } from './flat-view';
 import { PdfSheet } from './pdf-sheet';
 
@@ -66,38 +63,17 @@ function drawFormed(sheet: PdfSheet, input: DocumentInput, topMm: number): void 
   const bottom = DRAWING_BORDER.otherMm + TITLE_BLOCK_HEIGHT_MM + 4;
   const height = topMm - bottom;
   if (height < 28) return;
-  const items = paintSolid(poseFormed(layOutMesh(input.development), 1));
-  const seen = items.flatMap((item) => (item.kind === 'face' ? item.points.map(project) : []));
-  if (seen.length === 0) return;
-  const [minX, minY] = [Math.min(...seen.map(({ x }) => x)), Math.min(...seen.map(({ y }) => y))];
-  const [maxX, maxY] = [Math.max(...seen.map(({ x }) => x)), Math.max(...seen.map(({ y }) => y))];
-  const scale = Math.min((TITLE_BLOCK_WIDTH_MM - 10) / (maxX - minX), (height - 4) / (maxY - minY), 1.2);
-  const centre = { x: RIGHT_COLUMN_LEFT_MM + TITLE_BLOCK_WIDTH_MM / 2, y: bottom + height / 2 };
-  // The projection counts y down, as screens do; the sheet counts it up.
-  const place = ({ x, y }: ScreenPoint): Point => ({
-    x: centre.x + (x - (minX + maxX) / 2) * scale,
-    y: centre.y - (y - (minY + maxY) / 2) * scale,
+  drawFormedPicture(sheet, input.development, {
+    centre: { x: RIGHT_COLUMN_LEFT_MM + TITLE_BLOCK_WIDTH_MM / 2, y: bottom + height / 2 },
+    widthMm: TITLE_BLOCK_WIDTH_MM - 10,
+    heightMm: height - 4,
+    largestScale: 1.2,
   });
-  for (const item of items) {
-    if (item.kind === 'line') sheet.line(place(project(item.from)), place(project(item.to)), { widthMm: 0.2 });
-    else
-      sheet.polygon(
-        item.points.map((point) => place(project(point))),
-        grey(dot3(item.normal, TO_LIGHT)),
-      );
-  }
   sheet.text(
     'Formed, face A up in the base panel; not to scale',
     { x: RIGHT_COLUMN_LEFT_MM, y: topMm - 1 },
     { font: 'sans', sizeMm: 2.2, colour: '#595145' },
   );
-}
-
-/** Printed grey of a face: light where it looks at the light, never so dark that edges drown. */
-function grey(light: number): string {
-  const level = Math.round(185 + 60 * Math.max(0, Math.min(1, light)));
-  const hex = level.toString(16).padStart(2, '0');
-  return `#${hex}${hex}${hex}`;
 }
 
 /**

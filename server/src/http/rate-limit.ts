@@ -7,6 +7,8 @@ const table = { tableName: 'rate_limits', tableCreated: true, clearExpiredByTime
 const SIGN_IN_TRIES = 10;
 const SIGN_IN_TRIES_FROM_ADDRESS = 100;
 const SIGN_IN_WINDOW_S = 15 * 60;
+const VISITOR_POSTS = 60;
+const VISITOR_WINDOW_S = 10 * 60;
 
 /** Limits on how often one address or one account may try, kept in PostgreSQL so that all web processes share them. */
 export interface RateLimits {
@@ -14,6 +16,8 @@ export interface RateLimits {
   countRequest(request: Request): Promise<void>;
   /** Count a try to sign in before it is made. @throws Problem `too-many-requests` */
   countSignIn(address: string, email: string): Promise<void>;
+  /** Count something that anybody may write without an account: an order, a question. @throws Problem `too-many-requests` */
+  countVisitorPost(request: Request): Promise<void>;
   /** Forget the tries of an account that signed in. */
   forgiveSignIn(address: string, email: string): Promise<void>;
 }
@@ -44,9 +48,12 @@ export function rateLimits(pool: Pool, requestsPerMinute: number): RateLimits {
   const requests = limiter('requests', requestsPerMinute, 60);
   const perAccount = limiter('sign-in', SIGN_IN_TRIES, SIGN_IN_WINDOW_S);
   const perAddress = limiter('sign-in-from', SIGN_IN_TRIES_FROM_ADDRESS, SIGN_IN_WINDOW_S);
+  const visitorPosts = limiter('visitor-posts', VISITOR_POSTS, VISITOR_WINDOW_S);
   const accountKey = (address: string, email: string) => `${address}|${email}`.slice(0, 200);
   return {
     countRequest: (request) => consume(requests, request.ip ?? 'unknown', 'That was very often in a minute.'),
+    countVisitorPost: (request) =>
+      consume(visitorPosts, request.ip ?? 'unknown', 'That was very often from this address.'),
     async countSignIn(address, email) {
       await consume(perAccount, accountKey(address, email), 'That was wrong too often for this account.');
       await consume(perAddress, address, 'There were too many tries to sign in from this address.');

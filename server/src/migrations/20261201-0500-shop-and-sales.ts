@@ -203,6 +203,7 @@ const SALES = `
     reason text NOT NULL,
     state text NOT NULL CHECK (state IN ('asked', 'sent', 'done', 'failed')),
     problem text,
+    attempt integer NOT NULL DEFAULT 1 CHECK (attempt > 0),
     asked_at timestamptz NOT NULL,
     UNIQUE (workshop_id, id),
     CONSTRAINT refunds_once UNIQUE (sale_id, key),

@@ -12,6 +12,8 @@ export class Refund extends Model<InferAttributes<Refund>, InferCreationAttribut
   declare amountMinor: number;
   declare reason: string;
   declare state: SaleContract['refunds'][number]['state'];
+  /** Counts definite refusals: each new try goes under a key of its own at the payment host. */
+  declare attempt: CreationOptional<number>;
   declare problem: CreationOptional<string | null>;
   declare askedAt: Date;
 }
@@ -29,6 +31,7 @@ export function defineRefund(sequelize: Sequelize): ModelStatic<Refund> {
       amountMinor: { type: DataTypes.INTEGER, allowNull: false },
       reason: { type: DataTypes.TEXT, allowNull: false },
       state: { type: DataTypes.TEXT, allowNull: false },
+      attempt: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
       problem: { type: DataTypes.TEXT, allowNull: true, defaultValue: null },
       askedAt: { type: DataTypes.DATE, allowNull: false },
     },

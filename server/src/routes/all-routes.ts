@@ -6,6 +6,8 @@ import { partRoutes } from './parts';
 import { photoRoutes } from './photos';
 import { revisionRoutes } from './revisions';
 import { sessionRoutes } from './session';
+import { saleLinkRoutes, saleRoutes } from './sales';
+import { shopRoutes, storefrontRoutes } from './shop';
 import { stockRoutes } from './stock';
 import { systemRoutes } from './system';
 
@@ -18,6 +20,10 @@ export function allRoutes(dependencies: AppDependencies): BoundRoute[] {
     ...revisionRoutes(dependencies),
     ...orderRoutes(dependencies),
     ...stockRoutes(dependencies),
+    ...shopRoutes(dependencies),
+    ...storefrontRoutes(dependencies),
+    ...saleRoutes(dependencies),
+    ...saleLinkRoutes(dependencies),
     ...officeMailRoutes(dependencies),
     ...systemRoutes(dependencies),
   ];

@@ -1,11 +1,17 @@
+import * as ledger from './ledger';
 import * as office from './office';
 import * as orders from './orders';
 import * as parts from './parts';
 import * as photos from './photos';
+import * as questions from './questions';
 import * as revisions from './revisions';
 import type { RouteContract } from './route';
+import * as saleLinks from './sale-links';
+import * as sales from './sales';
 import * as session from './session';
+import * as shop from './shop';
 import * as stock from './stock';
+import * as storefront from './storefront';
 import * as system from './system';
 
 /** Every route of the product. One that is not listed here does not exist. */
@@ -59,6 +65,46 @@ export const ROUTE_CONTRACTS: readonly RouteContract[] = [
   stock.setPartHardware,
   stock.setPartHand,
   stock.makeOtherHand,
+  shop.readShopSettings,
+  shop.changeShopSettings,
+  shop.listListings,
+  shop.createListing,
+  shop.readListing,
+  shop.changeListing,
+  shop.setListingState,
+  shop.addListingPhoto,
+  shop.removeListingPhoto,
+  storefront.readShop,
+  storefront.searchShop,
+  storefront.readShopListing,
+  storefront.readShopPhoto,
+  storefront.priceCart,
+  storefront.placeSale,
+  questions.askShop,
+  questions.readQuestionByLink,
+  questions.askMoreByLink,
+  questions.listQuestions,
+  questions.answerQuestion,
+  sales.listSales,
+  sales.readSale,
+  sales.cutMissing,
+  sales.shipSale,
+  sales.markDelivered,
+  sales.readPackingSlip,
+  sales.readInvoice,
+  sales.cancelSale,
+  sales.refundSale,
+  sales.retryRefund,
+  sales.recordReturn,
+  sales.listBuyers,
+  ledger.readLedger,
+  saleLinks.readSaleByLink,
+  saleLinks.openSaleCheckout,
+  saleLinks.cancelSaleByLink,
+  saleLinks.askByLink,
+  saleLinks.readFittingSheet,
+  saleLinks.readInvoiceByLink,
+  saleLinks.listPurchases,
   office.listMails,
   office.listMembers,
   office.listAuditTrail,

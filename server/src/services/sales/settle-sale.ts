@@ -16,7 +16,7 @@ export interface SettleSaleTools extends TellTools {
 }
 
 /**
- * Send a refund to the payment host. The host does it once under the row's key, however often it is asked: an answer that
+ * Send a refund to the payment host. The host does it once under the key of the try, however often it is asked: an answer that
  * got lost, or a worker that died, changes nothing. What the host refuses is told to the owner.
  * @throws PaymentHostUnreachable for the queue to try again
  */
@@ -32,7 +32,7 @@ export async function sendRefund(
       orderId: refund.saleId,
       paymentId: refund.paymentId,
       amountMinor: refund.amountMinor,
-      idempotencyKey: `refund-${refund.id}`,
+      idempotencyKey: `refund-${refund.id}-${refund.attempt}`,
     });
     await database.inWorkshop(workshopId, async (scope) => {
       const sale = await scope.rows.sales.get(refund.saleId, { lock: true });
@@ -54,7 +54,7 @@ async function failRefund(scope: WorkshopScope, refundId: string, problem: strin
   await scope.rows.refunds.change(row, { state: 'failed', problem });
   const fact = { kind: 'refund-failed', at: tools.now(), source: row.id } as const;
   const details = { amountMinor: row.amountMinor, paymentId: row.paymentId, reason: problem };
-  await tellSale(scope, sale, [{ ...fact, key: `refund-failed:${row.id}`, details }], tools);
+  await tellSale(scope, sale, [{ ...fact, key: `refund-failed:${row.id}:${row.attempt}`, details }], tools);
 }
 
 /**

@@ -21,6 +21,10 @@ export async function frontOf(scope: WorkshopScope): Promise<ShopFront> {
   return { slug, name: workshop.name, headline, about, currency, taxName, taxBasisPoints, postage };
 }
 
+/** The front of a workshop's shop, whether it is open or not. */
+export const readShopFront = (database: Database, workshopId: string): Promise<ShopFront> =>
+  database.inWorkshop(workshopId, frontOf);
+
 /** @throws Problem `not-found` */
 export async function readShop(database: Database, shopSlug: string): Promise<ShopFront> {
   return database.inWorkshop(await findShop(database, shopSlug), frontOf);
