@@ -1,5 +1,6 @@
 import { createHash, randomUUID } from 'node:crypto';
 import { partDocumentSchema } from '@foldwright/shared/contracts/part-document-schema';
+import type { Hand } from '@foldwright/shared/contracts/stock';
 import type { PartDocument } from '@foldwright/shared/part/part-document';
 import { Client } from 'pg';
 import * as z from 'zod/mini';
@@ -16,6 +17,7 @@ import pumpTray from '../setup/demo/parts/pump-tray.json';
 import regulatorBracket from '../setup/demo/parts/regulator-bracket.json';
 import signBracket from '../setup/demo/parts/sign-bracket.json';
 import type { Database } from './database';
+import { seedShop } from './seed-shop';
 
 const peopleSchema = z.object({
   workshop: z.string(),
@@ -33,13 +35,20 @@ interface DemoPart {
   readonly number: string;
   readonly name: string;
   readonly file: unknown;
+  readonly hand?: Hand;
   /** Note of its release; null for a part that stays in draft. */
   readonly releaseNote: string | null;
 }
 
 const LARKFIELD_PARTS: readonly DemoPart[] = [
   { number: 'LC-02', name: 'Pump tray', file: pumpTray, releaseNote: 'Fits both pump sizes.' },
-  { number: 'LC-03', name: 'Regulator bracket', file: regulatorBracket, releaseNote: 'Hose clears by 6 mm.' },
+  {
+    number: 'LC-03',
+    name: 'Regulator bracket',
+    file: regulatorBracket,
+    hand: 'left',
+    releaseNote: 'Hose clears by 6 mm.',
+  },
   { number: 'LC-04', name: 'Battery strap anchor', file: batteryStrapAnchor, releaseNote: 'As tried in steel.' },
   { number: 'LC-07', name: 'Grinder cradle', file: grinderCradle, releaseNote: null },
   { number: 'LC-11', name: 'Sign bracket', file: signBracket, releaseNote: null },
@@ -175,8 +184,10 @@ async function demoDraft({ database, now }: SeedOptions, member: Member, part: D
   return database.inWorkshop(member.workshopId, async (scope) => {
     const known = await scope.rows.parts.findOne({ number: part.number });
     if (known !== null) return (await scope.rows.drafts.findOne({ partId: known.id, closedAt: null }))?.id ?? null;
-    const { name, number } = part;
-    return (await addPart(scope, member, { name, number, document, hasOutline: true }, now())).draftId;
+    const { name, number, hand } = part;
+    const { partId, draftId } = await addPart(scope, member, { name, number, document, hasOutline: true }, now());
+    if (hand !== undefined) await scope.rows.parts.changeWhere({ id: partId }, { hand });
+    return draftId;
   });
 }
 
@@ -205,6 +216,7 @@ export async function seedDemo(options: SeedOptions): Promise<boolean> {
     const progress = await beginOrResume(client);
     if (progress === null || progress.state === 'done') return false;
     for (const part of LARKFIELD_PARTS) await addDemoPart(options, progress.owner, part);
+    await seedShop(options.database, progress.owner, options.now());
     for (const part of NEIGHBOUR_PARTS) await addDemoPart(options, progress.neighbour, part);
     const done = JSON.stringify({ ...progress, state: 'done' });
     await client.query('UPDATE installation_facts SET value = $2 WHERE name = $1', [FACT, done]);

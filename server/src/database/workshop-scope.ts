@@ -2,6 +2,7 @@ import type { Transaction } from 'sequelize';
 import { QueryTypes } from 'sequelize';
 import type { Models, WorkshopRows } from '../models/all-models';
 import { workshopRows } from '../models/all-models';
+import type { Workshop } from '../models/workshop';
 
 /**
  * One workshop inside one transaction. Row-level security in the database holds the transaction to the same workshop,
@@ -14,6 +15,8 @@ export interface WorkshopScope {
   readonly rows: WorkshopRows;
   /** Tables outside of workshops (users), to be read with `transaction`. */
   readonly models: Models;
+  /** The workshop itself, which belongs to no workshop and so has no repository. */
+  workshop(): Promise<Workshop>;
   /** One statement in this transaction; answers its rows, still unparsed. */
   sql(statement: string, bind?: readonly unknown[]): Promise<unknown[]>;
 }
@@ -25,6 +28,7 @@ export function scopeOf(models: Models, workshopId: string, transaction: Transac
     transaction,
     models,
     rows: workshopRows(models, workshopId, transaction),
+    workshop: () => models.workshops.findByPk(workshopId, { transaction, rejectOnEmpty: true }),
     sql: (statement, bind = []) =>
       models.sequelize.query(statement, { bind: [...bind], transaction, type: QueryTypes.SELECT }),
   };

@@ -35,7 +35,7 @@ export function shopRoutes(dependencies: AppDependencies): BoundRoute[] {
       addListingPhoto(dependencies, actor, params.listingId, upload, body.description),
     ),
     bind(contracts.removeListingPhoto, ({ actor, params }) =>
-      removeListingPhoto(dependencies, actor, params.listingId, params.photoId),
+      removeListingPhoto(dependencies, actor, params.listingId, params.listingPhotoId),
     ),
     bind(questions.listQuestions, async ({ actor }) => ({ questions: await listQuestions(database, actor) })),
     bind(questions.answerQuestion, ({ actor, params, body, idempotencyKey }) =>

@@ -213,11 +213,11 @@ export const addListingPhoto = defineRoute({
 export const removeListingPhoto = defineRoute({
   id: 'removeListingPhoto',
   method: 'DELETE',
-  path: '/api/shop/listings/:listingId/photos/:photoId',
+  path: '/api/shop/listings/:listingId/photos/:listingPhotoId',
   tag: 'shop',
   access: owners,
   summary: 'Take a photo off a listing',
-  params: z.strictObject({ listingId: rowId, photoId: rowId }),
+  params: z.strictObject({ listingId: rowId, listingPhotoId: rowId }),
   answer: 'json',
   response: listingSchema,
   successStatus: 200,

@@ -18,10 +18,7 @@ export async function openSaleCheckout(tools: Tools, link: string): Promise<stri
   return openHostedPage(tools, workshopId, {
     async read(scope) {
       const sale = payable(await scope.rows.sales.get(saleId));
-      const workshop = await scope.models.workshops.findByPk(workshopId, {
-        transaction: scope.transaction,
-        rejectOnEmpty: true,
-      });
+      const workshop = await scope.workshop();
       return {
         id: sale.id,
         name: `Order ${sale.number}`,

@@ -32,8 +32,7 @@ const pdf = (bytes: Buffer, fileName: string): FileAnswer => ({
 });
 
 async function headOf(scope: WorkshopScope, sale: Sale): Promise<SaleHead> {
-  const { models, transaction, workshopId } = scope;
-  const workshop = await models.workshops.findByPk(workshopId, { transaction, rejectOnEmpty: true });
+  const workshop = await scope.workshop();
   const { name, street, more, postcode, city, country } = z.parse(addressSchema, sale.address);
   return {
     shopName: workshop.name,

@@ -116,8 +116,7 @@ async function writeLetters(
 }
 
 async function subjectOf(scope: WorkshopScope, sale: Sale, publicUrl: string): Promise<LetterSubject> {
-  const { transaction, models, workshopId } = scope;
-  const workshop = await models.workshops.findByPk(workshopId, { transaction, rejectOnEmpty: true });
+  const workshop = await scope.workshop();
   const lines = await scope.rows.saleLines.list({ where: { saleId: sale.id }, order: [['position', 'ASC']] });
   return {
     sale,

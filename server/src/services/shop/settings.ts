@@ -23,8 +23,8 @@ function firstSlug(name: string, workshopId: string): string {
 export async function shopOf(scope: WorkshopScope): Promise<Shop> {
   const known = await scope.rows.shops.findOne({});
   if (known !== null) return known;
-  const { models, transaction, workshopId } = scope;
-  const workshop = await models.workshops.findByPk(workshopId, { transaction, rejectOnEmpty: true });
+  const { workshopId } = scope;
+  const workshop = await scope.workshop();
   const [owner] = await scope.sql(
     `SELECT u.email FROM memberships m JOIN users u ON u.id = m.user_id
      WHERE m.workshop_id = $1 AND m.role = 'owner' ORDER BY m.created_at, m.id LIMIT 1`,

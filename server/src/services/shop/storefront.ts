@@ -14,8 +14,7 @@ const BARE = 'bare';
 
 /** The front of a workshop's shop, in the caller's transaction. */
 export async function frontOf(scope: WorkshopScope): Promise<ShopFront> {
-  const { models, transaction, workshopId } = scope;
-  const workshop = await models.workshops.findByPk(workshopId, { transaction, rejectOnEmpty: true });
+  const workshop = await scope.workshop();
   const { slug, headline, about, currency, taxName, taxBasisPoints, postageMinor } = await shopOf(scope);
   const postage = { amountMinor: postageMinor, currency };
   return { slug, name: workshop.name, headline, about, currency, taxName, taxBasisPoints, postage };
