@@ -4,6 +4,7 @@ import type { Role, RouteContract } from '@foldwright/shared/contracts/route';
 import { ROLES } from '@foldwright/shared/contracts/route';
 import type request from 'supertest';
 import { plainJpeg } from '../support/jpeg';
+import { ADDRESS, HARDWARE, KIT, LISTING, SETTINGS } from '../support/shop-inputs';
 import { TestBrowser, addPerson, addWorkshop, asOwner } from '../support/people';
 import type { TestApp } from '../support/test-app';
 import { startTestApp } from '../support/test-app';
@@ -21,44 +22,6 @@ type Ids = Readonly<Record<(typeof ID_NAMES)[number], string>> & {
 };
 
 const PLATE = { shape: 'flat-plate', widthMm: 80, heightMm: 60 } as const;
-const ADDRESS = { name: 'Ravi Sandle', street: 'Quay Row 8', more: '', postcode: '1', city: 'Westmere', country: 'IE' };
-const HARDWARE = (name: string) => ({
-  name,
-  specification: 'ISO 4762',
-  cost: { amountMinor: 10, currency: 'EUR' },
-  isInUse: true,
-});
-const KIT = (hardwareId: string) => ({
-  name: 'Kit',
-  note: '',
-  lines: [{ kind: 'hardware', hardwareId, quantity: 2 }],
-});
-const LISTING = (revisionId: string, slug: string) => ({
-  what: { kind: 'bracket', revisionId },
-  slug,
-  title: 'Bracket',
-  summary: '',
-  fits: '',
-  doesNotFit: '',
-  fittingSteps: '',
-  priceMinor: 1200,
-  finishes: [{ finishId: 'bare', surchargeMinor: 0 }],
-  leadTimeDays: 5,
-});
-const SETTINGS = {
-  slug: 'matrix',
-  isOpen: true,
-  headline: 'Brackets',
-  about: '',
-  currency: 'EUR',
-  taxName: 'VAT',
-  taxBasisPoints: 1900,
-  taxNumber: '',
-  postageMinor: 500,
-  packingDays: 1,
-  senderAddress: '',
-  questionsTo: 'owner@example.test',
-} as const;
 const idempotencyKey = (): [string, string] => ['idempotency-key', randomUUID()];
 
 /** Sound input for each route that takes any, so that a refusal is about who asks and never about what. */

@@ -42,6 +42,8 @@ export interface Commerce extends TestApp {
   startMail(): Promise<void>;
   /** Make the cutting shop slow, closed, unclear or unwilling; nothing given means well-behaved. */
   setMood(mood: object): Promise<void>;
+  /** Make the payment host refuse refunds, or do them and hang up; nothing given means well-behaved. */
+  setPaymentMood(mood: { readonly refunds?: 'refused' | 'lost' }): Promise<void>;
   /** Do the work that is due, as the worker would; answers how many pieces of it failed. */
   runWork(): Promise<number>;
   /** Let work that waits for its next try be due now. */
@@ -143,6 +145,10 @@ export async function startCommerce({
     async setMood(mood) {
       const headers = { authorization: `Bearer ${CUTTING_KEY}`, 'content-type': 'application/json' };
       await fetch(`${cutting.url}/mood`, { method: 'PUT', headers, body: JSON.stringify(mood) });
+    },
+    async setPaymentMood(mood) {
+      const headers = { authorization: `Bearer ${PAYMENT_KEY}`, 'content-type': 'application/json' };
+      await fetch(`${payments.url}/v1/mood`, { method: 'PUT', headers, body: JSON.stringify(mood) });
     },
     async runWork() {
       let failures = 0;

@@ -69,6 +69,10 @@ export const refundSchema = z.object({
 });
 export type Refund = z.output<typeof refundSchema>;
 
+/** How the desk behaves towards refunds; nothing given means well. */
+export const refundMoodSchema = z.object({ refunds: z.enum(['refused', 'lost']).optional() });
+export type RefundMood = z.output<typeof refundMoodSchema>;
+
 /** What a session shows on its page besides the sum. */
 const sessionLines = z.array(z.object({ name: z.string(), quantity: z.number(), unitAmountMinor: z.number() }));
 

@@ -9,7 +9,8 @@ import { listenOnLoopback } from '../listening-server';
 import { StateFile } from '../state-file';
 import { checkoutPage, closedPage, DESK_STYLE } from './checkout-page';
 import { parseFormBody, textAt } from './form-body';
-import { EMPTY_PAYMENT_STATE, paymentStateSchema } from './objects';
+import type { RefundMood } from './objects';
+import { EMPTY_PAYMENT_STATE, paymentStateSchema, refundMoodSchema } from './objects';
 import { HostRefusal, PaymentLedger } from './payment-ledger';
 import { signEvent } from './sign-event';
 
@@ -100,10 +101,13 @@ export async function startPaymentHost(settings: FakeSettings): Promise<Listenin
     response.locals['keep'] = { key, fingerprint };
     next();
   });
-  const answer = (response: Response, object: object) => {
-    const body = JSON.stringify(object);
+  const keepAnswer = (response: Response, body: string) => {
     const keep: unknown = response.locals['keep'];
     if (isKeep(keep)) state.answers[keep.key] = { fingerprint: keep.fingerprint, status: 200, body };
+  };
+  const answer = (response: Response, object: object) => {
+    const body = JSON.stringify(object);
+    keepAnswer(response, body);
     save();
     response
       .set('request-id', `req_${randomBytes(7).toString('hex')}`)
@@ -116,7 +120,22 @@ export async function startPaymentHost(settings: FakeSettings): Promise<Listenin
     answer(response, ledger.expireSession(request.params.id)),
   );
   app.get('/v1/payment_intents/:id', (request, response) => answer(response, ledger.intent(request.params.id)));
-  app.post('/v1/refunds', (request, response) => answer(response, ledger.refund(form(request))));
+  // How the desk behaves towards refunds, for whoever tries what happens then: refuse them, or do them and hang up.
+  let mood: RefundMood = {};
+  app.put('/v1/mood', express.json(), (request, response) => {
+    mood = refundMoodSchema.parse(request.body);
+    response.json(mood);
+  });
+  app.post('/v1/refunds', (request, response) => {
+    if (mood.refunds === 'refused') {
+      throw new HostRefusal(400, 'balance_insufficient', 'There is not enough money in the balance of this account.');
+    }
+    const refund = ledger.refund(form(request));
+    if (mood.refunds !== 'lost') return answer(response, refund);
+    keepAnswer(response, JSON.stringify(refund));
+    save();
+    request.socket.destroy();
+  });
 
   app.use((request) => {
     throw new HostRefusal(404, 'url_invalid', `Unrecognized request URL (${request.method} ${request.path}).`);
