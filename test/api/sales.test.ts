@@ -282,15 +282,13 @@ describe('a sale to a customer', () => {
     const saleId = await pay(await place(guest, [line()]));
     await test.setPaymentMood({ refunds: 'lost' });
     await act(owner, saleId, 'refunds', { amountMinor: 1000, reason: 'A scratch' });
-    expect(await test.runWork()).toBeGreaterThan(0);
-    expect((await readSale(owner, saleId)).totals.refunded.amountMinor).toBe(0);
+    // The SDK itself asks once more after a connection that broke; whoever does, the key is the same.
+    await test.runWork();
     await test.setPaymentMood({});
     await test.forgetPauses();
     await test.runWork();
-    await eventually(
-      'it is told once',
-      async () => (await readSale(owner, saleId)).totals.refunded.amountMinor === 1000,
-    );
+    await eventually('it is told', async () => (await readSale(owner, saleId)).totals.refunded.amountMinor === 1000);
+    expect((await readSale(owner, saleId)).events.filter(({ kind }) => kind === 'refunded')).toHaveLength(1);
     await expectBalance(owner);
   });
 
