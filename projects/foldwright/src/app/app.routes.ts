@@ -8,6 +8,7 @@ const maker = withRole('owner', 'fabricator');
 export const routes: Routes = [
   { path: 'sign-in', title: 'Sign in', loadComponent: () => import('./account/sign-in').then((m) => m.SignIn) },
   { path: 'trouble', title: 'Trouble', loadComponent: () => import('./shell/trouble').then((m) => m.Trouble) },
+  { path: 'shop', loadChildren: () => import('./storefront/routes').then((m) => m.STOREFRONT_ROUTES) },
   {
     path: '',
     canActivate: [signedIn],
@@ -55,6 +56,11 @@ export const routes: Routes = [
         title: 'Installation',
         canActivate: [withRole('operator')],
         loadComponent: () => import('./operator/installation-page').then((m) => m.InstallationPage),
+      },
+      {
+        path: 'purchases',
+        title: 'Your orders',
+        loadComponent: () => import('./storefront/purchases-page').then((m) => m.PurchasesPage),
       },
       { path: 'welcome', title: 'Welcome', loadComponent: () => import('./account/welcome').then((m) => m.Welcome) },
       {

@@ -23,6 +23,7 @@ export function areasFor(role: Role | null): readonly Area[] {
     case 'operator':
       return [{ path: '/operator', label: 'Installation' }];
     case 'customer':
+      return [{ path: '/purchases', label: 'Your orders' }];
     case null:
       return [];
   }

@@ -11,7 +11,7 @@ import { Notices } from '../api/notices';
 import { SessionApi } from '../api/session-api';
 import { areasFor } from './areas';
 import { initialsOf } from './initials-of';
-import { NoticeCard } from './notice-card';
+import { NoticeCard } from '@foldwright/ui/notice-card/notice-card';
 import { ThemeChoice } from './theme-choice';
 
 /** The frame around every page of somebody signed in: mark, areas, workshop, theme, the person, and notices. */

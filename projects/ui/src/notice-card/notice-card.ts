@@ -1,7 +1,17 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
-import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
-import { FindingSign } from '@foldwright/ui/finding-note/finding-sign';
-import type { Notice } from '../api/notices';
+import { Pictogram } from '../pictogram/pictogram';
+import { FindingSign } from '../finding-note/finding-sign';
+
+/** What a notice says; pages put it up. */
+export interface NoticeWords {
+  readonly tone: 'stop' | 'know';
+  readonly title: string;
+  readonly detail: string;
+  readonly kept: string | null;
+  readonly next: string | null;
+  /** For the workshop's operator, when it broke on our side. */
+  readonly requestId: string | null;
+}
 
 /** A notice: what happened, what was kept, what to do. */
 @Component({
@@ -31,7 +41,7 @@ import type { Notice } from '../api/notices';
   host: { '[class]': 'notice().tone' },
 })
 export class NoticeCard {
-  readonly notice = input.required<Notice>();
+  readonly notice = input.required<NoticeWords>();
 
   readonly dismissed = output<void>();
 
