@@ -1,5 +1,5 @@
 import * as fc from 'fast-check';
-import { addMoney, formatMoney, minorDigits, shareMinor } from './money';
+import { addMoney, formatMoney, minorDigits, parseMoneyMinor, shareMinor, typedMoney } from './money';
 import { formatAngle, formatMass, formatPercent } from './quantity';
 
 describe('money', () => {
@@ -41,5 +41,29 @@ describe('quantities', () => {
     expect(formatPercent(0.125)).toBe('12.5 %');
     expect(formatAngle(75)).toBe('75°');
     expect(() => formatAngle(Number.NaN)).toThrow(RangeError);
+  });
+});
+
+describe('an amount that was typed', () => {
+  it.each([
+    ['148', 14800],
+    ['148.5', 14850],
+    ['148,50', 14850],
+    [' 1 204.00 ', 120400],
+    ["1'204", 120400],
+    ['0.07', 7],
+    ['1.234', null],
+    ['12.', null],
+    ['-3', null],
+    ['', null],
+    ['12 34', null],
+  ])('%s is %s', (typed, minor) => {
+    expect(parseMoneyMinor(typed, 'EUR')).toBe(minor);
+  });
+
+  it('is read back as it is shown', () => {
+    for (const amountMinor of [0, 7, 14800, 120499]) {
+      expect(parseMoneyMinor(typedMoney({ amountMinor, currency: 'EUR' }), 'EUR')).toBe(amountMinor);
+    }
   });
 });

@@ -26,6 +26,26 @@ export function formatMoney(money: Money, locale = 'en-IE'): string {
 }
 
 /**
+ * What somebody typed as an amount, in minor units: "148", "148.5", "148,50", "1 204.00"; null when it is none, or has
+ * more digits than the currency.
+ */
+export function parseMoneyMinor(typed: string, currency: string): number | null {
+  const digits = minorDigits(currency);
+  const found = /^(\d{1,3}(?:[ \u00a0']?\d{3})*|\d+)(?:[.,](\d+))?$/.exec(typed.trim());
+  if (found === null) return null;
+  const [, whole = '', part = ''] = found;
+  if (part.length > digits) return null;
+  const minor = Number(whole.replace(/\D/g, '') + part.padEnd(digits, '0'));
+  return Number.isSafeInteger(minor) ? minor : null;
+}
+
+/** An amount as somebody would type it: "148.00". */
+export function typedMoney(money: Money): string {
+  const digits = minorDigits(money.currency);
+  return (money.amountMinor / 10 ** digits).toFixed(digits);
+}
+
+/**
  * Sum of two amounts of one currency.
  * @throws RangeError when the currencies differ
  */

@@ -46,6 +46,16 @@ export const routes: Routes = [
         loadComponent: () => import('./materials/materials-page').then((m) => m.MaterialsPage),
       },
       {
+        path: 'stock',
+        canActivate: [member],
+        loadChildren: () => import('./stock/routes').then((m) => m.STOCK_ROUTES),
+      },
+      {
+        path: 'shop-desk',
+        canActivate: [member],
+        loadChildren: () => import('./shop-desk/routes').then((m) => m.SHOP_DESK_ROUTES),
+      },
+      {
         path: 'office',
         title: 'Office',
         canActivate: [member],

@@ -9,6 +9,8 @@ export interface Area {
 const MEMBER_AREAS: readonly Area[] = [
   { path: '/parts', label: 'Parts' },
   { path: '/materials', label: 'Materials & tooling' },
+  { path: '/stock', label: 'Stock & kits' },
+  { path: '/shop-desk', label: 'Shop' },
   { path: '/orders', label: 'Orders' },
   { path: '/office', label: 'Office' },
 ];

@@ -1,4 +1,14 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  DestroyRef,
+  ElementRef,
+  afterNextRender,
+  computed,
+  inject,
+  input,
+  signal,
+} from '@angular/core';
 import type { PartDocument } from '@foldwright/shared/part/part-document';
 import { drawPart } from '@foldwright/ui/formed-preview/draw-part';
 import { lookOfFinish } from '@foldwright/ui/formed-preview/finish-look';
@@ -13,6 +23,10 @@ export interface LaidPiece {
   /** Number on the bench and in the legend; null where there is no legend. */
   readonly number: number | null;
 }
+
+/** Room for the widest piece, px: all are drawn at the scale at which it fits. */
+const MOST_ROOM_PX = 340;
+const MARGINS_PX = 96;
 
 /** Parts of what is sold, laid out on the bench at one scale and numbered. */
 @Component({
@@ -41,9 +55,12 @@ export interface LaidPiece {
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class PiecesBoard {
+  private readonly host: HTMLElement = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;
+  private readonly destroyed = inject(DestroyRef);
+
   readonly pieces = input.required<readonly LaidPiece[]>();
-  /** Room for the widest piece, px: all are drawn at the scale at which it fits. */
-  readonly roomPx = input(340);
+
+  private readonly widthPx = signal(MOST_ROOM_PX);
 
   protected readonly laid = computed(() =>
     this.pieces().map((piece) => ({ ...piece, madeOf: lookOfFinish(piece.finishId) })),
@@ -53,6 +70,16 @@ export class PiecesBoard {
       const { widthPx, heightPx } = drawPart(document, madeOf);
       return Math.max(widthPx, heightPx * 1.3);
     });
-    return Math.min(2.4, this.roomPx() / Math.max(1, ...sizes));
+    const roomPx = Math.min(MOST_ROOM_PX, this.widthPx() - MARGINS_PX);
+    return Math.min(2.4, roomPx / Math.max(1, ...sizes));
   });
+
+  constructor() {
+    afterNextRender(() => {
+      if (typeof ResizeObserver === 'undefined') return;
+      const observer = new ResizeObserver(([entry]) => this.widthPx.set(entry?.contentRect.width ?? MOST_ROOM_PX));
+      observer.observe(this.host);
+      this.destroyed.onDestroy(() => observer.disconnect());
+    });
+  }
 }
