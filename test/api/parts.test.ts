@@ -69,6 +69,8 @@ describe('parts and drafts', () => {
       canEdit: true,
       revisions: [],
       photos: [],
+      hand: 'either',
+      otherHandPartId: null,
     });
     expect(body.draft).toMatchObject({ letter: 'A', revision: 0, furthestStep: 'outline', updatedBy: 'Imogen Harrow' });
     const list = await viewer.get('/api/parts?search=regul').expect(200);

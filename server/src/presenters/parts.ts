@@ -62,6 +62,7 @@ export interface PartWithAll {
   readonly revisions: readonly RevisionHead[];
   /** Newest first. */
   readonly photos: readonly { readonly photo: Photo; readonly job: Job | null }[];
+  readonly otherHandPartId: string | null;
 }
 
 export function presentPart(row: PartWithAll, canEdit: boolean, nameOf: NameOf): PartDetail {
@@ -74,6 +75,8 @@ export function presentPart(row: PartWithAll, canEdit: boolean, nameOf: NameOf):
     draft: draft === null ? null : presentDraftSummary(draft, nameOf),
     revisions: row.revisions.map((revision) => presentRevisionSummary(revision, nameOf)),
     photos: row.photos.map(({ photo, job }) => presentPhoto(photo, job, nameOf)),
+    hand: part.hand,
+    otherHandPartId: row.otherHandPartId,
     canEdit,
   };
 }

@@ -37,5 +37,6 @@ export async function loadPart(scope: WorkshopScope, part: Part): Promise<{ row:
     ...revisions.map(({ releasedBy }) => releasedBy),
     ...photos.map(({ photo }) => photo.uploadedBy),
   ]);
-  return { row: { part, draft, revisions, photos }, nameOf };
+  const otherHandPartId = part.otherHandOf ?? (await scope.rows.parts.findOne({ otherHandOf: part.id }))?.id ?? null;
+  return { row: { part, draft, revisions, photos, otherHandPartId }, nameOf };
 }

@@ -5,6 +5,7 @@ import { photoSchema } from './photos';
 import { revisionSummarySchema } from './revisions';
 import { defineRoute } from './route';
 import { oneLine, pdfPaper, rowId, timestamp } from './scalars';
+import { handSchema } from './stock';
 
 /** Steps of a part, in order; the furthest one reached is stored with the draft's state. */
 export const PART_STEPS = ['mock-up', 'outline', 'bends', 'checks', 'full-size-print', 'release'] as const;
@@ -69,6 +70,9 @@ export const partDetailSchema = z.object({
   draft: z.nullable(draftSummarySchema),
   revisions: z.array(revisionSummarySchema),
   photos: z.array(photoSchema),
+  hand: handSchema,
+  /** The part that is its mirror image, if there is one. */
+  otherHandPartId: z.nullable(rowId),
   canEdit: z.boolean(),
 });
 export type PartDetail = z.output<typeof partDetailSchema>;

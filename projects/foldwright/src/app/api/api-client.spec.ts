@@ -18,6 +18,8 @@ const PART = {
   draft: null,
   revisions: [],
   photos: [],
+  hand: 'either',
+  otherHandPartId: null,
   canEdit: true,
 };
 const problem = (slug: string, status: number, more: object = {}) => ({

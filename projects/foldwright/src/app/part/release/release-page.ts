@@ -19,12 +19,13 @@ import { ComputedParts } from '../computed-parts';
 import { startDraftWords } from '../next-letter';
 import { PartRoad } from '../part-road';
 import { PartStore } from '../part-store';
+import { PartHand } from './part-hand';
 import { ReleasedRevision } from './released-revision';
 
 /** The release step: what will be frozen and what has to be accepted first; afterwards the revision with its files and orders. */
 @Component({
   selector: 'fw-release-page',
-  imports: [FindingNote, MatButtonModule, ReactiveFormsModule, ReleasedRevision],
+  imports: [FindingNote, MatButtonModule, PartHand, ReactiveFormsModule, ReleasedRevision],
   templateUrl: './release-page.html',
   styleUrl: './release-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

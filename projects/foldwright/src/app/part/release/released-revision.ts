@@ -8,6 +8,7 @@ import { Notices } from '../../api/notices';
 import { OrdersApi } from '../../api/orders-api';
 import { type RevisionFileKind, RevisionsApi } from '../../api/revisions-api';
 import { QuoteCard } from './quote-card';
+import { RevisionBuyers } from './revision-buyers';
 
 const QUANTITIES = [1, 10, 50] as const;
 const FILE_WORDS: Readonly<Record<RevisionFileKind, string>> = {
@@ -19,7 +20,7 @@ const FILE_WORDS: Readonly<Record<RevisionFileKind, string>> = {
 /** A frozen revision: its fingerprint, its files in either sheet, prices from the cutting service, and the order. */
 @Component({
   selector: 'fw-released-revision',
-  imports: [MatButtonModule, Pictogram, QuoteCard],
+  imports: [MatButtonModule, Pictogram, QuoteCard, RevisionBuyers],
   templateUrl: './released-revision.html',
   styleUrl: './released-revision.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

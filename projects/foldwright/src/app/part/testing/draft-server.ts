@@ -56,6 +56,8 @@ export class DraftServer {
       draft: { id, letter, revision, furthestStep, updatedAt, updatedBy, blockers: 0, cautions: 0, hints: 0 },
       revisions: [],
       photos: [],
+      hand: 'either',
+      otherHandPartId: null,
       canEdit: this.canEdit,
     };
   }
