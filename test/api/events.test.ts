@@ -55,7 +55,7 @@ describe('live events', () => {
       .expect(201);
   /** An event as any process of the installation would record it. */
   const record = (workshopId: string, orderId: string = randomUUID()) =>
-    test.database.inWorkshop(workshopId, (scope) => recordEvent(scope, { kind: 'order-changed', orderId }));
+    test.database.inWorkshop(workshopId, async (scope) => recordEvent(scope, { kind: 'order-changed', orderId }));
 
   it('tells a page of its own workshop, and nobody else', async () => {
     const [here, there, buyer] = [await open(viewer), await open(stranger), await open(customer)];

@@ -5,7 +5,7 @@ import type { Models } from '../models/all-models';
 import { defineModels } from '../models/all-models';
 import { retryOnConflict } from './retry-on-conflict';
 import type { WorkshopScope } from './workshop-scope';
-import { scopeOf } from './workshop-scope';
+import { workInScope } from './workshop-scope';
 
 /**
  * Why code may look across workshops. Reading only: the policies let nobody write outside a workshop. Each reason has
@@ -86,12 +86,12 @@ export function connectDatabase(options: DatabaseOptions): Database {
     url: options.url,
     inWorkshop: (workshopId, work) =>
       inTransaction({ 'foldwright.workshop': workshopId }, (transaction) =>
-        work(scopeOf(models, workshopId, transaction)),
+        workInScope(models, workshopId, transaction, work),
       ),
     viewWorkshop: (workshopId, work) =>
       inTransaction(
         { 'foldwright.workshop': workshopId },
-        (transaction) => work(scopeOf(models, workshopId, transaction)),
+        (transaction) => workInScope(models, workshopId, transaction, work),
         SequelizeTransaction.ISOLATION_LEVELS.REPEATABLE_READ,
       ),
     forUser: (userId, work) => inTransaction({ 'foldwright.user': userId }, work),

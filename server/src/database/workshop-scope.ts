@@ -19,11 +19,31 @@ export interface WorkshopScope {
   workshop(): Promise<Workshop>;
   /** One statement in this transaction; answers its rows, still unparsed. */
   sql(statement: string, bind?: readonly unknown[]): Promise<unknown[]>;
+  /** Have something done last in this transaction, after all other work and before the commit. */
+  atEnd(work: () => Promise<void>): void;
 }
 
-/** Repositories of all tables with a workshop, bound to one workshop and one transaction. */
-export function scopeOf(models: Models, workshopId: string, transaction: Transaction): WorkshopScope {
+/** Run work in a scope bound to one workshop and one transaction, and then what it left for the end. */
+export async function workInScope<T>(
+  models: Models,
+  workshopId: string,
+  transaction: Transaction,
+  work: (scope: WorkshopScope) => Promise<T>,
+): Promise<T> {
+  const last: (() => Promise<void>)[] = [];
+  const result = await work(scopeOf(models, workshopId, transaction, (one) => void last.push(one)));
+  for (const one of last) await one();
+  return result;
+}
+
+function scopeOf(
+  models: Models,
+  workshopId: string,
+  transaction: Transaction,
+  atEnd: WorkshopScope['atEnd'],
+): WorkshopScope {
   return {
+    atEnd,
     workshopId,
     transaction,
     models,

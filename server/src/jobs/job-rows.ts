@@ -39,7 +39,7 @@ export function stagesDone(trace: Trace): JobStages {
 }
 
 /** Tell the pages that show this job. */
-export const tellJob = (scope: WorkshopScope, job: Job): Promise<void> =>
+export const tellJob = (scope: WorkshopScope, job: Job): void =>
   recordEvent(scope, { kind: 'job-changed', jobId: job.id, photoId: job.photoId, partId: job.partId });
 
 /** Put a job of reading a photo into the workshop and the queue, in the caller's transaction. */
@@ -67,5 +67,5 @@ export async function sendTrace(scope: WorkshopScope, queue: Queue, job: Job): P
   const data = { workshopId: scope.workshopId, jobId: job.id };
   const queueJobId = await queue.enqueue(scope.transaction, 'trace', data);
   await scope.rows.jobs.change(job, { queueJobId });
-  await tellJob(scope, job);
+  tellJob(scope, job);
 }

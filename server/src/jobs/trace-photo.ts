@@ -72,14 +72,14 @@ async function begin(
     if (job.attempt >= MOST_ATTEMPTS) {
       // It took its worker down every time.
       await scope.rows.jobs.change(job, { state: 'failed', failure: FAILURE_ON_OUR_SIDE, updatedAt: now() });
-      await tellJob(scope, job);
+      tellJob(scope, job);
       return null;
     }
     const attempt = job.attempt + 1;
     const stages = freshStages();
     await scope.rows.jobs.change(job, { state: 'running', attempt, workerId, stages, failure: null, updatedAt: now() });
     const photo = await scope.rows.photos.get(job.photoId);
-    await tellJob(scope, job);
+    tellJob(scope, job);
     return { workshopId, jobId, attempt, photo };
   });
 }
@@ -113,7 +113,7 @@ async function read(
   const report = async (stage: TraceStage): Promise<void> => {
     const isMine = await whileMine(dependencies, attempt, async (scope, job) => {
       await scope.rows.jobs.change(job, { stages: stagesAt(stage), updatedAt: now() });
-      await tellJob(scope, job);
+      tellJob(scope, job);
     });
     if (!isMine) stop.abort(new Error('The job was stopped or given to another worker.'));
   };
@@ -145,8 +145,8 @@ async function conclude(dependencies: TraceDependencies, attempt: Attempt, readi
     await scope.rows.photos.change(photo, { trace: reading.trace, rectified, rectifiedStoredAs });
     const stages = stagesDone(reading.trace);
     await scope.rows.jobs.change(job, { state: 'done', stages, workerId: null, updatedAt: now() });
-    await tellJob(scope, job);
-    await recordEvent(scope, { kind: 'part-changed', partId: photo.partId });
+    tellJob(scope, job);
+    recordEvent(scope, { kind: 'part-changed', partId: photo.partId });
   });
   const superfluous = isMine ? replaced : rectifiedStoredAs;
   if (superfluous !== null) await files.remove(superfluous);
@@ -155,6 +155,6 @@ async function conclude(dependencies: TraceDependencies, attempt: Attempt, readi
 async function fail(dependencies: TraceDependencies, attempt: Attempt, failure: JobFailure): Promise<void> {
   await whileMine(dependencies, attempt, async (scope, job) => {
     await scope.rows.jobs.change(job, { state: 'failed', failure, workerId: null, updatedAt: dependencies.now() });
-    await tellJob(scope, job);
+    tellJob(scope, job);
   });
 }

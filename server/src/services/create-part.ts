@@ -60,7 +60,7 @@ export async function addPart(
     updatedAt: now,
   });
   await recordAudit(scope, member, 'Started the part', `${part.number} ${part.name}`);
-  await recordEvent(scope, { kind: 'part-changed', partId: row.id });
+  recordEvent(scope, { kind: 'part-changed', partId: row.id });
   return { partId: row.id, draftId: draft.id };
 }
 

@@ -120,7 +120,7 @@ async function freeze(
   await scope.rows.drafts.change(draft, { closedAt: now, releasedRevisionId: revision.id, furthestStep: 'release' });
   await scope.rows.parts.changeWhere({ id: part.id }, { updatedAt: now });
   await recordAudit(scope, member, `Released revision ${draft.letter}`, `${part.number} ${part.name}`);
-  await recordEvent(scope, { kind: 'part-changed', partId: part.id });
+  recordEvent(scope, { kind: 'part-changed', partId: part.id });
   return presentRevisionSummary(revision, () => member.userName);
 }
 

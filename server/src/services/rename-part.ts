@@ -41,7 +41,7 @@ export function renamePart(
       const before = `${part.number} ${part.name}`;
       await scope.rows.parts.change(part, { ...naming, revision: part.revision + 1, updatedAt: now });
       await recordAudit(scope, member, `Renamed the part from ${before}`, `${naming.number} ${naming.name}`);
-      await recordEvent(scope, { kind: 'part-changed', partId });
+      recordEvent(scope, { kind: 'part-changed', partId });
       const { row, nameOf } = await loadPart(scope, part);
       return presentPart(row, canEditParts(member.role), nameOf);
     }),

@@ -121,7 +121,7 @@ export async function sendCommands(
       createdAt: now,
     });
     await scope.rows.parts.changeWhere({ id: draft.partId }, { updatedAt: now });
-    await recordEvent(scope, {
+    recordEvent(scope, {
       kind: 'draft-changed',
       draftId,
       partId: draft.partId,

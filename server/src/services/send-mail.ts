@@ -52,7 +52,7 @@ export async function sendMail(tools: SendMailTools, { workshopId, mailId }: Mai
       });
       if (!isOver) await sendLater(scope.transaction, tools.queue, { workshopId, mailId }, attempts);
     }
-    await recordEvent(scope, { kind: 'mail-changed', mailId });
+    recordEvent(scope, { kind: 'mail-changed', mailId });
     return failure === null ? mail : null;
   });
   if (sent !== null) await tellOrderOfMail(tools, sent);

@@ -49,7 +49,7 @@ export function startDraft(database: Database, member: Member, partId: string, n
       `Started draft ${letter} from revision ${latest.letter}`,
       `${part.number} ${part.name}`,
     );
-    await recordEvent(scope, { kind: 'part-changed', partId });
+    recordEvent(scope, { kind: 'part-changed', partId });
     return presentDraft(draft, await namesOfPeople(scope, [member.userId]));
   });
 }

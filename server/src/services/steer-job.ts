@@ -30,7 +30,7 @@ export function stopJob({ database, queue }: Dependencies, member: Member, jobId
       await queue.cancel(scope.transaction, 'trace', job.queueJobId);
     }
     await scope.rows.jobs.change(job, { state: 'stopped', workerId: null, updatedAt: now });
-    await tellJob(scope, job);
+    tellJob(scope, job);
     return presentJob(job);
   });
 }

@@ -52,7 +52,7 @@ export async function tellOrder(
   await bookMoney(scope, order, { before, after });
   await enqueueWork(scope, order, { before, after }, tools.queue);
   await writeLetters(scope, order, { before, after }, tools);
-  await recordEvent(scope, { kind: 'order-changed', orderId: order.id });
+  recordEvent(scope, { kind: 'order-changed', orderId: order.id });
   return true;
 }
 

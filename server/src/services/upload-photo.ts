@@ -71,7 +71,7 @@ export async function uploadPhoto(
       await scope.rows.parts.change(part, { updatedAt: now });
       await recordAudit(scope, member, `Added the photo ${upload.originalName}`, `${part.number} ${part.name}`);
       const job = await enqueueTrace(scope, queue, photo, now);
-      await recordEvent(scope, { kind: 'part-changed', partId });
+      recordEvent(scope, { kind: 'part-changed', partId });
       return presentPhoto(photo, job, () => member.userName);
     });
   } catch (error) {

@@ -16,8 +16,7 @@ export interface NewMail extends Letter {
 const MESSAGE_ID_DOMAIN = 'foldwright.example.test';
 
 /**
- * Put a mail into the outbox, in the transaction that makes it necessary. It is sent after commit, or never. Call it at
- * the end of a transaction, as `recordEvent`.
+ * Put a mail into the outbox, in the transaction that makes it necessary. It is sent after commit, or never.
  */
 export async function writeMail(scope: WorkshopScope, queue: Queue, mail: NewMail, now: Date): Promise<void> {
   const { key, orderId, saleId = null, recipient, subject, body } = mail;
@@ -30,5 +29,5 @@ export async function writeMail(scope: WorkshopScope, queue: Queue, mail: NewMai
   );
   if (written.length === 0) return;
   await queue.enqueue(scope.transaction, 'mail', { workshopId: scope.workshopId, mailId: id });
-  await recordEvent(scope, { kind: 'mail-changed', mailId: id });
+  recordEvent(scope, { kind: 'mail-changed', mailId: id });
 }

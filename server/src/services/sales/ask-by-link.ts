@@ -11,7 +11,7 @@ export async function askByLink(tools: SaleTools, link: string, text: string, ke
   return tools.database.inWorkshop(workshopId, async (scope) => {
     const sale = await scope.rows.sales.get(saleId, { lock: true });
     await askOnSale(scope, sale, text, key, tools);
-    await recordEvent(scope, { kind: 'sale-changed', saleId });
+    recordEvent(scope, { kind: 'sale-changed', saleId });
     return presentCustomerOrder(scope, sale);
   });
 }

@@ -108,7 +108,7 @@ async function cancelLines(
   const fact = { key: `cancelled:${key}`, kind: 'cancelled', at: now, source: key, details } as const;
   await tellSale(scope, sale, [fact], tools);
   for (const target of freed) await serveWaitingSales(scope, target, tools);
-  await announceStock(scope, touched);
+  announceStock(scope, touched);
 }
 
 function refuseShipped(line: SaleLine, items: readonly SaleItem[], quantity: number): void {

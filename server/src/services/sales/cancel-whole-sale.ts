@@ -38,5 +38,5 @@ export async function cancelWholeSale(
     tools,
   );
   for (const target of freed) await serveWaitingSales(scope, target, tools);
-  await announceStock(scope, touched);
+  announceStock(scope, touched);
 }

@@ -153,6 +153,6 @@ export function recordReturn(
     if (refundMinor > 0)
       await askForPart(scope, sale, { key: `return:${key}`, amountMinor: refundMinor, reason }, tools);
     if (isBackOnShelf) await serveWaitingSales(scope, target, tools);
-    await announceStock(scope, [position.id]);
+    announceStock(scope, [position.id]);
   });
 }

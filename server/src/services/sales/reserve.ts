@@ -51,7 +51,7 @@ export async function reserveForSale(scope: WorkshopScope, sale: Sale, now: Date
     const position = await findPosition(scope, targetOf(item));
     if (position !== null && (await keepFree(scope, sale, item, position, now)) > 0) touched.push(position.id);
   }
-  await announceStock(scope, touched);
+  announceStock(scope, touched);
 }
 
 /**
@@ -112,5 +112,5 @@ export async function serveWaitingSales(scope: WorkshopScope, target: StockTarge
       await tellSale(scope, sale, [{ key, kind: 'stock-arrived', at: now, source: key, details }], tools);
     }
   }
-  await announceStock(scope, [position.id]);
+  announceStock(scope, [position.id]);
 }

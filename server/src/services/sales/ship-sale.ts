@@ -58,7 +58,7 @@ export function shipSale(
     };
     const fact = { key: `shipped:${shipment.id}`, kind: 'shipped', at: now, source: shipment.id, details } as const;
     await tellSale(scope, sale, [fact], tools);
-    await announceStock(scope, touched);
+    announceStock(scope, touched);
   });
 }
 

@@ -53,7 +53,7 @@ export async function tellSale(
   await bookPayments(scope, sale, change);
   await closeCheckoutOfCancelled(scope, sale, change, tools);
   await writeLetters(scope, sale, change, tools);
-  await recordEvent(scope, { kind: 'sale-changed', saleId: sale.id });
+  recordEvent(scope, { kind: 'sale-changed', saleId: sale.id });
   return true;
 }
 

@@ -91,7 +91,7 @@ async function addQuestion(
     },
     at,
   );
-  await recordEvent(scope, { kind: 'question-changed', questionId: question.id });
+  recordEvent(scope, { kind: 'question-changed', questionId: question.id });
 }
 
 export interface QuestionBefore {
@@ -211,8 +211,8 @@ export function answerQuestion(
       },
       at,
     );
-    await recordEvent(scope, { kind: 'question-changed', questionId });
-    if (sale !== null) await recordEvent(scope, { kind: 'sale-changed', saleId: sale.id });
+    recordEvent(scope, { kind: 'question-changed', questionId });
+    if (sale !== null) recordEvent(scope, { kind: 'sale-changed', saleId: sale.id });
     return presentOne(scope, question);
   });
 }

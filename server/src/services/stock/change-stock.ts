@@ -56,7 +56,7 @@ export function receiveStock(tools: Tools, actor: Member, receipt: Receipt, key:
       });
       await recordAudit(scope, actor, `Put ${receipt.quantity} on the shelf`, receipt.reason || null);
       await serveWaitingSales(scope, receipt.what, tools);
-      await announceStock(scope, [position.id]);
+      announceStock(scope, [position.id]);
       return shelved(await scope.rows.stockPositions.get(position.id));
     }),
   );
@@ -127,7 +127,7 @@ export function adjustStock(
       });
       await recordAudit(scope, actor, `Corrected the shelf by ${change > 0 ? '+' : '−'}${Math.abs(change)}`, reason);
       if (change > 0) await serveWaitingSales(scope, targetOf(position), tools);
-      await announceStock(scope, [position.id]);
+      announceStock(scope, [position.id]);
       return shelved(await scope.rows.stockPositions.get(position.id));
     }),
   );

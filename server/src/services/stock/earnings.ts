@@ -36,7 +36,7 @@ export function setPartHardware(
       await scope.rows.partHardware.add({ partId, hardwareId, quantity });
     }
     await recordAudit(scope, actor, 'Changed the hardware that goes with it', `${part.number} ${part.name}`);
-    await recordEvent(scope, { kind: 'part-changed', partId });
+    recordEvent(scope, { kind: 'part-changed', partId });
     return hardwareOf(scope, partId);
   });
 }

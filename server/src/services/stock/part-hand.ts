@@ -37,7 +37,7 @@ export function setPartHand(
         `Said it is the ${hand === 'either' ? 'only' : hand} hand`,
         `${part.number} ${part.name}`,
       );
-      await recordEvent(scope, { kind: 'part-changed', partId });
+      recordEvent(scope, { kind: 'part-changed', partId });
     }
     return { partId, hand, otherHandPartId: (await otherHandOf(scope, part))?.id ?? null };
   });
@@ -90,7 +90,7 @@ export function makeOtherHand(
       await scope.rows.parts.change(mirrored, { hand, otherHandOf: part.id });
       if (part.hand === 'either') await scope.rows.parts.change(part, { hand: 'left' });
       await recordAudit(scope, actor, 'Made the other hand', `${number} ${name}, of ${part.number} ${part.name}`);
-      await recordEvent(scope, { kind: 'part-changed', partId });
+      recordEvent(scope, { kind: 'part-changed', partId });
       return { partId: added.partId, draftId: added.draftId, number, hand };
     }),
   );

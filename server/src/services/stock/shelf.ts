@@ -87,7 +87,7 @@ export async function moveStock(scope: WorkshopScope, position: StockPosition, m
   return true;
 }
 
-/** Tell every open page that these positions changed; last in a transaction, as `recordEvent`. */
-export async function announceStock(scope: WorkshopScope, positionIds: Iterable<string>): Promise<void> {
-  for (const positionId of new Set(positionIds)) await recordEvent(scope, { kind: 'stock-changed', positionId });
+/** Tell every open page that these positions changed. */
+export function announceStock(scope: WorkshopScope, positionIds: Iterable<string>): void {
+  for (const positionId of new Set(positionIds)) recordEvent(scope, { kind: 'stock-changed', positionId });
 }
