@@ -12,7 +12,7 @@ import { startTestApp } from '../support/test-app';
 /** Ids of one row of every kind that an address can name. */
 const ID_NAMES = [
   ...['partId', 'draftId', 'photoId', 'jobId', 'revisionId', 'orderId', 'quoteId', 'hardwareId', 'kitId', 'positionId'],
-  ...['listingId', 'listingPhotoId', 'saleId', 'shipmentId', 'refundId', 'questionId'],
+  ...['listingId', 'listingPhotoId', 'saleId', 'shipmentId', 'refundId', 'questionId', 'memberId', 'invitationId'],
 ] as const;
 type Ids = Readonly<Record<(typeof ID_NAMES)[number], string>> & {
   /** Addresses of the shop and of what is public in it. */
@@ -73,6 +73,16 @@ const BODIES: Readonly<Record<string, (ids: Ids, workshopId: string) => object>>
   }),
   askShop: () => ({ name: 'Ravi', email: 'ravi@example.test', listingSlug: null, text: 'Does it fit?' }),
   askMoreByLink: () => ({ text: 'And this?' }),
+  signUp: () => ({
+    name: 'Noor Vale',
+    email: `${randomUUID()}@example.test`,
+    password: 'a long enough secret',
+    workshopName: 'Vale',
+    numberPrefix: 'V',
+  }),
+  inviteMember: () => ({ email: `${randomUUID()}@example.test`, role: 'viewer' }),
+  changeMemberRole: () => ({ role: 'fabricator' }),
+  acceptInvitation: () => ({ account: null }),
   askByLink: () => ({ text: 'And this?' }),
 };
 const FIELDS: Readonly<Record<string, Readonly<Record<string, string>>>> = {
@@ -214,10 +224,18 @@ describe('who may call what', () => {
       .field({ description: 'On the cart' })
       .attach('file', jpeg, 'cart.jpg')
       .expect(201);
+    const invited = await owner
+      .post('/api/office/invitations')
+      .set(...idempotencyKey())
+      .send({ email: 'invited@example.test', role: 'viewer' })
+      .expect(201);
+    const spare = await addPerson(test.ownerUrl, 'Spare Member', { [workshop]: 'viewer' });
+    const members = { memberId: spare.id, invitationId: String(invited.body.id) };
     const questionId = String(questions.questions[0].id);
     const listingPhotoId = String(photo.body.photos[0].id);
     const link = String(placed.body.link);
     return {
+      ...members,
       shop: 'matrix',
       listing: 'matrix',
       link,
@@ -289,8 +307,10 @@ describe('who may call what', () => {
     return { status: answer.status, type: answer.headers['content-type'], rest };
   };
 
-  // Signing out ends the browser the other routes need; the stream never ends by itself. Both are tested elsewhere.
-  const CONTRACTS = ROUTE_CONTRACTS.filter(({ id }) => id !== 'signOut' && id !== 'streamEvents');
+  // Signing out and another workshop take the browser away from the other routes; the stream never ends by itself.
+  // They are tested elsewhere.
+  const ELSEWHERE = ['signOut', 'streamEvents', 'createWorkshop'];
+  const CONTRACTS = ROUTE_CONTRACTS.filter(({ id }) => !ELSEWHERE.includes(id));
   const guarded = CONTRACTS.filter(({ access }) => access !== 'public' && access !== 'service');
   const withRow = guarded.filter(({ path, access }) => path.includes('/:') && Array.isArray(access));
 
@@ -351,9 +371,10 @@ describe('who may call what', () => {
   });
 
   it('serves what is for everybody to everybody, and takes from services only what is signed', async () => {
-    const stranger = await new TestBrowser(test.app).open();
     for (const contract of CONTRACTS) {
       if (contract.access !== 'public' && contract.access !== 'service') continue;
+      // Somebody new each time: signing up gives the session another token.
+      const stranger = await new TestBrowser(test.app).open();
       const answer = await call(stranger, contract, own);
       if (contract.access === 'service') expect([400, 401, 403]).toContain(answer.status);
       // A sale’s link opens no thread, an old offer is refused, an outside service may be away: nobody is sent away.

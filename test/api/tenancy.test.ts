@@ -119,6 +119,7 @@ describe('walls between workshops in the database', () => {
   it('are passed by few, each for a stated reason', () => {
     const callers = sources().filter(([, text]) => /\.asSystem\(/.test(text));
     expect(callers.map(([file]) => file).sort()).toEqual([
+      'services/members/invitations.ts',
       'services/read-installation.ts',
       'services/sales/find-by-link.ts',
       'services/take-message.ts',

@@ -124,10 +124,10 @@ describe('the two-pump water kit', () => {
     await owner.goto('/office');
     for (const words of ['noted', 'paid', 'parcel 1', 'being cut', 'parcel 2', 'return noted', 'money sent back']) {
       await owner
-        .getByText(new RegExp(`order ${number}: .*${words}`))
+        .getByText(new RegExp(`order ${number}: ${words}`))
         .first()
         .waitFor();
-      expect(await owner.getByText(new RegExp(`order ${number}: .*${words}`)).count()).toBe(1);
+      expect(await owner.getByText(new RegExp(`order ${number}: ${words}`)).count()).toBe(1);
     }
 
     // Which revision did they get?

@@ -14,6 +14,7 @@ import { workInScope } from './workshop-scope';
 export type SystemReason =
   | 'find the workshop of a payment event'
   | 'find the workshop of a cutting callback'
+  | 'find the workshop of an invitation'
   | 'find the workshop of a shop address'
   | 'find the sale behind a link'
   | 'find the question behind a link'

@@ -17,6 +17,8 @@ export interface WorkshopScope {
   readonly models: Models;
   /** The workshop itself, which belongs to no workshop and so has no repository. */
   workshop(): Promise<Workshop>;
+  /** Make the workshop that this transaction works in, where there is none yet. */
+  addWorkshop(workshop: { readonly name: string; readonly numberPrefix: string }): Promise<void>;
   /** One statement in this transaction; answers its rows, still unparsed. */
   sql(statement: string, bind?: readonly unknown[]): Promise<unknown[]>;
   /** Have something done last in this transaction, after all other work and before the commit. */
@@ -49,6 +51,9 @@ function scopeOf(
     models,
     rows: workshopRows(models, workshopId, transaction),
     workshop: () => models.workshops.findByPk(workshopId, { transaction, rejectOnEmpty: true }),
+    addWorkshop: async (workshop) => {
+      await models.workshops.create({ id: workshopId, ...workshop }, { transaction });
+    },
     sql: (statement, bind = []) =>
       models.sequelize.query(statement, { bind: [...bind], transaction, type: QueryTypes.SELECT }),
   };

@@ -16,7 +16,7 @@ export interface RateLimits {
   countRequest(request: Request): Promise<void>;
   /** Count a try to sign in before it is made. @throws Problem `too-many-requests` */
   countSignIn(address: string, email: string): Promise<void>;
-  /** Count something that anybody may write without an account: an order, a question. @throws Problem `too-many-requests` */
+  /** Count something that anybody may write without an account: an order, its payment page, a question. @throws Problem `too-many-requests` */
   countVisitorPost(request: Request): Promise<void>;
   /** Forget the tries of an account that signed in. */
   forgiveSignIn(address: string, email: string): Promise<void>;

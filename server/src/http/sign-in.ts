@@ -33,6 +33,13 @@ export function signInWithPassword(authenticator: passport.Authenticator, reques
   });
 }
 
+/** Sign somebody in who has just proved who they are in another way; the session gets a new id here too. */
+export function signInAs(request: Request, userId: string): Promise<void> {
+  return new Promise((resolve, reject) => {
+    request.logIn({ id: userId }, (failure: unknown) => (failure ? reject(failure) : resolve()));
+  });
+}
+
 /** End the session: its row goes, so the cookie is worth nothing even where it was copied. */
 export function endSession(request: Request): Promise<void> {
   return new Promise((resolve, reject) => {

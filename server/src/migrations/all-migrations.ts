@@ -3,6 +3,7 @@ import { partsAndPhotos } from './20261201-0200-parts-and-photos';
 import { ordersAndMail } from './20261201-0300-orders-and-mail';
 import { stockAndKits } from './20261201-0400-stock-and-kits';
 import { shopAndSales } from './20261201-0500-shop-and-sales';
+import { invitations } from './20261201-0600-invitations';
 import type { Migration } from './migration';
 
 /** Every step of the schema in order. A list rather than a folder, so that it survives bundling. */
@@ -12,4 +13,5 @@ export const ALL_MIGRATIONS: readonly Migration[] = [
   ordersAndMail,
   stockAndKits,
   shopAndSales,
+  invitations,
 ];

@@ -7,6 +7,7 @@ import { defineCutAssignment } from './cut-assignment';
 import { defineDraft } from './draft';
 import { defineHardwareItem } from './hardware-item';
 import { defineIdempotencyKey } from './idempotency-key';
+import { defineInvitation } from './invitation';
 import { defineJob } from './job';
 import { defineKit } from './kit';
 import { defineKitLine } from './kit-line';
@@ -61,6 +62,7 @@ export function defineModels(sequelize: Sequelize) {
     orderEvents: defineOrderEvent(sequelize),
     mails: defineMail(sequelize),
     webhookEvents: defineWebhookEvent(sequelize),
+    invitations: defineInvitation(sequelize),
     hardwareItems: defineHardwareItem(sequelize),
     partHardware: definePartHardware(sequelize),
     kits: defineKit(sequelize),
@@ -105,6 +107,7 @@ export function workshopRows(models: Models, workshopId: string, transaction: Tr
     orderEvents: of(models.orderEvents),
     mails: of(models.mails),
     webhookEvents: of(models.webhookEvents),
+    invitations: of(models.invitations),
     hardwareItems: of(models.hardwareItems),
     partHardware: of(models.partHardware),
     kits: of(models.kits),

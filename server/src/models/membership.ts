@@ -8,6 +8,7 @@ export class Membership extends Model<InferAttributes<Membership>, InferCreation
   declare workshopId: string;
   declare userId: string;
   declare role: Exclude<Role, 'operator'>;
+  declare revision: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
 }
 
@@ -20,6 +21,7 @@ export function defineMembership(sequelize: Sequelize): ModelStatic<Membership> 
       workshopId: { type: DataTypes.UUID, allowNull: false },
       userId: { type: DataTypes.UUID, allowNull: false },
       role: { type: DataTypes.TEXT, allowNull: false },
+      revision: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
       createdAt: { type: DataTypes.DATE, allowNull: false, defaultValue: DataTypes.NOW },
     },
     { sequelize, modelName: 'Membership', tableName: 'memberships', underscored: true, timestamps: false },

@@ -1,5 +1,6 @@
 import type { AppDependencies } from '../app-dependencies';
 import type { BoundRoute } from '../http/route-call';
+import { memberRoutes } from './members';
 import { officeMailRoutes } from './office-mails';
 import { orderRoutes } from './orders';
 import { partRoutes } from './parts';
@@ -24,6 +25,7 @@ export function allRoutes(dependencies: AppDependencies): BoundRoute[] {
     ...storefrontRoutes(dependencies),
     ...saleRoutes(dependencies),
     ...saleLinkRoutes(dependencies),
+    ...memberRoutes(dependencies),
     ...officeMailRoutes(dependencies),
     ...systemRoutes(dependencies),
   ];

@@ -57,8 +57,14 @@ export function saleLinkRoutes(dependencies: AppDependencies): BoundRoute[] {
   const { database, limits } = dependencies;
   return [
     bind(links.readSaleByLink, ({ params }) => readSaleByLink(database, params.link)),
-    bind(links.openSaleCheckout, async ({ params }) => ({ url: await openSaleCheckout(dependencies, params.link) })),
-    bind(links.cancelSaleByLink, ({ params, ifMatch }) => cancelSaleByLink(dependencies, params.link, ifMatch)),
+    bind(links.openSaleCheckout, async ({ params, request }) => {
+      await limits.countVisitorPost(request);
+      return { url: await openSaleCheckout(dependencies, params.link) };
+    }),
+    bind(links.cancelSaleByLink, async ({ params, ifMatch, request }) => {
+      await limits.countVisitorPost(request);
+      return cancelSaleByLink(dependencies, params.link, ifMatch);
+    }),
     bind(links.askByLink, async ({ params, body, idempotencyKey, request }) => {
       await limits.countVisitorPost(request);
       return askByLink(dependencies, params.link, body.text, idempotencyKey);

@@ -17,9 +17,9 @@ export function listMembers(database: Database, member: Member): Promise<z.outpu
     });
     const byId = new Map(users.map((user) => [user.id, user]));
     return memberships
-      .flatMap(({ userId, role }) => {
+      .flatMap(({ userId, role, revision }) => {
         const user = byId.get(userId);
-        return user === undefined ? [] : [{ userId, name: user.name, email: user.email, role }];
+        return user === undefined ? [] : [{ userId, name: user.name, email: user.email, role, revision }];
       })
       .sort((a, b) => a.name.localeCompare(b.name, 'en') || a.userId.localeCompare(b.userId));
   });

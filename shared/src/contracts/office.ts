@@ -16,7 +16,13 @@ export const mailSchema = z.object({
 });
 export type Mail = z.output<typeof mailSchema>;
 
-export const memberSchema = z.object({ userId: rowId, name: z.string(), email: z.string(), role: z.enum(ROLES) });
+export const memberSchema = z.object({
+  userId: rowId,
+  name: z.string(),
+  email: z.string(),
+  role: z.enum(ROLES),
+  revision: z.int(),
+});
 
 export const auditEntrySchema = z.object({
   id: rowId,

@@ -36,7 +36,7 @@ export const askShop = defineRoute({
   response: z.object({ link: z.string() }),
   successStatus: 201,
   idempotent: true,
-  problems: ['too-many-requests'],
+  problems: ['already-exists', 'too-many-requests'],
 });
 
 const linkParams = z.strictObject({ link: z.string().check(z.regex(/^[A-Za-z0-9_-]{20,80}$/)) });
@@ -66,7 +66,7 @@ export const askMoreByLink = defineRoute({
   response: questionSchema,
   successStatus: 201,
   idempotent: true,
-  problems: ['too-many-requests'],
+  problems: ['already-exists', 'too-many-requests'],
 });
 export const listQuestions = defineRoute({
   id: 'listQuestions',
@@ -93,4 +93,5 @@ export const answerQuestion = defineRoute({
   response: questionSchema,
   successStatus: 201,
   idempotent: true,
+  problems: ['already-exists'],
 });

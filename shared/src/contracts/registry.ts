@@ -1,4 +1,5 @@
 import * as ledger from './ledger';
+import * as members from './members';
 import * as office from './office';
 import * as orders from './orders';
 import * as parts from './parts';
@@ -105,6 +106,15 @@ export const ROUTE_CONTRACTS: readonly RouteContract[] = [
   saleLinks.readFittingSheet,
   saleLinks.readInvoiceByLink,
   saleLinks.listPurchases,
+  members.signUp,
+  members.createWorkshop,
+  members.listInvitations,
+  members.inviteMember,
+  members.withdrawInvitation,
+  members.changeMemberRole,
+  members.removeMember,
+  members.readInvitation,
+  members.acceptInvitation,
   office.listMails,
   office.listMembers,
   office.listAuditTrail,

@@ -41,7 +41,7 @@ export const openSaleCheckout = defineRoute({
   response: z.object({ url: z.url() }),
   successStatus: 201,
   idempotent: true,
-  problems: ['wrong-state', 'service-unreachable'],
+  problems: ['wrong-state', 'service-unreachable', 'too-many-requests'],
 });
 export const cancelSaleByLink = defineRoute({
   id: 'cancelSaleByLink',
@@ -55,7 +55,7 @@ export const cancelSaleByLink = defineRoute({
   response: customerOrderSchema,
   successStatus: 200,
   ifMatch: true,
-  problems: ['wrong-state', 'stale-row'],
+  problems: ['wrong-state', 'stale-row', 'too-many-requests'],
 });
 export const askByLink = defineRoute({
   id: 'askByLink',
@@ -71,7 +71,7 @@ export const askByLink = defineRoute({
   response: customerOrderSchema,
   successStatus: 201,
   idempotent: true,
-  problems: ['too-many-requests'],
+  problems: ['already-exists', 'too-many-requests'],
 });
 export const readFittingSheet = defineRoute({
   id: 'readFittingSheet',

@@ -61,9 +61,15 @@ const listingInput = z.strictObject({
   doesNotFit: paragraph(800),
   /** Steps of fitting, one a line: they stand on the fitting sheet. */
   fittingSteps: paragraph(3000),
-  /** Price with tax, in the shop's currency. */
-  priceMinor: minor,
-  finishes: z.array(finishOffer).check(z.minLength(1), z.maxLength(10)),
+  /** Price with tax, in the shop's currency. Nothing is given away: a payment page can't be opened for nothing. */
+  priceMinor: z.int().check(z.gte(1), z.lte(100_000_000)),
+  finishes: z.array(finishOffer).check(
+    z.minLength(1),
+    z.maxLength(10),
+    z.refine((offers) => new Set(offers.map((offer) => offer.finishId)).size === offers.length, {
+      error: 'Each finish once.',
+    }),
+  ),
   /** Days when brackets have to be cut first. */
   leadTimeDays: z.int().check(z.gte(1), z.lte(365)),
 });

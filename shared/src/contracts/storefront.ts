@@ -101,6 +101,8 @@ export const offerSchema = z.object({
       /** How many of them come from the shelf; the rest is cut first. */
       fromShelf: z.int(),
       leavesInDays: z.int(),
+      /** What is in one of it, a piece a line, with the very revision: "1 × Pump tray, revision D, left hand, moss". */
+      contents: z.array(z.string()),
     }),
   ),
   /** Lines that can't be bought any more, in words; left out of the sums. */
@@ -197,7 +199,7 @@ export const placeSale = defineRoute({
   path: '/api/shops/:shop/sales',
   tag: 'storefront',
   access: 'public',
-  summary: 'Order what was offered; what is on the shelf is kept for the buyer until the payment page closes',
+  summary: 'Order what was offered; what is on the shelf is kept for the buyer for an hour',
   params: shopSlug,
   body: z.strictObject({
     lines: cartInput,
@@ -210,5 +212,5 @@ export const placeSale = defineRoute({
   response: z.object({ number: z.int(), link: z.string() }),
   successStatus: 201,
   idempotent: true,
-  problems: ['offer-changed', 'wrong-state', 'too-many-requests'],
+  problems: ['offer-changed', 'already-exists', 'wrong-state', 'too-many-requests'],
 });

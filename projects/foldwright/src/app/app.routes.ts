@@ -7,6 +7,16 @@ const maker = withRole('owner', 'fabricator');
 /** The areas of the application; each is loaded when it is first visited. */
 export const routes: Routes = [
   { path: 'sign-in', title: 'Sign in', loadComponent: () => import('./account/sign-in').then((m) => m.SignIn) },
+  {
+    path: 'sign-up',
+    title: 'Start a workshop',
+    loadComponent: () => import('./account/sign-up').then((m) => m.SignUp),
+  },
+  {
+    path: 'invitation/:link',
+    title: 'Invitation',
+    loadComponent: () => import('./account/invitation-page').then((m) => m.InvitationPage),
+  },
   { path: 'trouble', title: 'Trouble', loadComponent: () => import('./shell/trouble').then((m) => m.Trouble) },
   { path: 'shop', loadChildren: () => import('./storefront/routes').then((m) => m.STOREFRONT_ROUTES) },
   {

@@ -5,17 +5,27 @@ import { notFound } from '../../http/problem';
 const shopRow = z.object({ workshop_id: z.uuid(), is_open: z.boolean() });
 const saleRow = z.object({ workshop_id: z.uuid(), id: z.uuid() });
 
+/** The workshop whose shop has this address, open or closed. @throws Problem `not-found` when there is none */
+export async function findAnyShop(
+  database: Database,
+  slug: string,
+): Promise<{ readonly workshopId: string; readonly isOpen: boolean }> {
+  const found = await database.asSystem('find the workshop of a shop address', async ({ select }) =>
+    select('SELECT workshop_id, is_open FROM shops WHERE slug = $1', [slug]),
+  );
+  const [row] = found.map((one) => shopRow.parse(one));
+  if (row === undefined) throw notFound();
+  return { workshopId: row.workshop_id, isOpen: row.is_open };
+}
+
 /**
  * The workshop whose shop has this address.
  * @throws Problem `not-found` when there is none, or it is closed
  */
 export async function findShop(database: Database, slug: string): Promise<string> {
-  const found = await database.asSystem('find the workshop of a shop address', async ({ select }) =>
-    select('SELECT workshop_id, is_open FROM shops WHERE slug = $1', [slug]),
-  );
-  const [row] = found.map((one) => shopRow.parse(one));
-  if (row === undefined || !row.is_open) throw notFound();
-  return row.workshop_id;
+  const { workshopId, isOpen } = await findAnyShop(database, slug);
+  if (!isOpen) throw notFound();
+  return workshopId;
 }
 
 /** The sale behind a private link. @throws Problem `not-found`, the same for every link that leads nowhere */

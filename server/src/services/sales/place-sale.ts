@@ -4,13 +4,14 @@ import { canonicalJson } from '@foldwright/shared/part/canonical-json';
 import * as z from 'zod/mini';
 import type { AppDependencies } from '../../app-dependencies';
 import type { WorkshopScope } from '../../database/workshop-scope';
-import { Problem } from '../../http/problem';
+import { Problem, notFound } from '../../http/problem';
 import type { Visitor } from '../../http/visitor';
 import type { Sale } from '../../models/sale';
 import type { MadeOffer, OfferedLine } from '../shop/offer';
 import { makeOffer } from '../shop/offer';
+import { shopOf } from '../shop/settings';
 import { lockShelf } from '../stock/shelf';
-import { findShop } from './find-by-link';
+import { findAnyShop } from './find-by-link';
 import { reserveForSale } from './reserve';
 import { tellSale } from './tell-sale';
 
@@ -25,6 +26,8 @@ export interface SaleWish {
 type Tools = Pick<AppDependencies, 'database' | 'queue' | 'publicUrl' | 'now'>;
 
 const FIRST_NUMBER = 1001;
+/** Largest sum that a payment page takes, minor units: eight digits, as card networks have it. */
+const LARGEST_TOTAL_MINOR = 99_999_999;
 /** How long what is on the shelf is kept for somebody who has not paid. */
 const KEPT_FOR_S = 60 * 60;
 const numberRow = z.tuple([z.object({ next: z.int() })]);
@@ -35,7 +38,8 @@ const hashOf = (wish: SaleWish): string => createHash('sha256').update(canonical
  * is offered anew. Nobody pays what they did not see.
  * @param key made by the browser for this one order: pressing twice gives one order
  * @returns number and private link of the order
- * @throws Problem `not-found`, `offer-changed` with the offer as it is now, `already-exists` for a key used otherwise
+ * @throws Problem `not-found`, `offer-changed` with the offer as it is now, `already-exists` for a key used otherwise,
+ *   `wrong-state` for a sum that can't be paid in one go
  */
 export async function placeSale(
   tools: Tools,
@@ -44,14 +48,17 @@ export async function placeSale(
   wish: SaleWish,
   key: string,
 ): Promise<{ readonly number: number; readonly link: string }> {
-  const workshopId = await findShop(tools.database, shopSlug);
+  const { workshopId } = await findAnyShop(tools.database, shopSlug);
   return tools.database.inWorkshop(workshopId, async (scope) => {
     // Also what makes a second press of the same button wait for the first.
     await lockShelf(scope);
     const known = await scope.rows.sales.findOne({ idempotencyKey: key });
     if (known !== null) return sameAgain(known, wish);
+    // Asked only now: whoever ordered before the shop closed, and lost the answer, still gets it.
+    if (!(await shopOf(scope)).isOpen) throw notFound();
     const made = await makeOffer(scope, wish.lines);
     refuseOtherOffer(made, wish.offerHash);
+    refuseTooMuch(made);
     const sale = await addSale(scope, visitor, wish, made, key, tools.now());
     await reserveForSale(scope, sale, tools.now());
     const { workshopId: id, transaction } = scope;
@@ -78,6 +85,15 @@ function refuseOtherOffer({ offer }: MadeOffer, seenHash: string): void {
     kept: 'Nothing was ordered and nothing charged. Your cart is as it was.',
     next: 'Look at what changed, then order again.',
     extra: { offer },
+  });
+}
+
+function refuseTooMuch({ offer }: MadeOffer): void {
+  if (offer.total.amountMinor <= LARGEST_TOTAL_MINOR) return;
+  throw new Problem('wrong-state', {
+    detail: 'That is more than can be paid in one go.',
+    kept: 'Nothing was ordered and nothing charged. Your cart is as it was.',
+    next: 'Order fewer, or ask the workshop.',
   });
 }
 

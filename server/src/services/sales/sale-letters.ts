@@ -7,6 +7,8 @@ import type { SaleFact } from './sale-state';
 export interface LetterSubject {
   readonly sale: Sale;
   readonly shopName: string;
+  /** Whether a payment came in, now or before. */
+  readonly isPaid: boolean;
   /** "1 × Two-pump water kit, moss" a line. */
   readonly lines: readonly string[];
   readonly publicUrl: string;
@@ -18,7 +20,7 @@ export const orderPageUrl = (publicUrl: string, link: string): string => `${publ
 /** The letter to the customer about something that happened; null for what nobody has to be told by mail. */
 export function letterToCustomer(subject: LetterSubject, fact: SaleFact): Letter | null {
   const { sale, shopName, lines, publicUrl } = subject;
-  const words = wordsAbout(sale, fact);
+  const words = wordsAbout(subject, fact);
   if (words === null) return null;
   const body = [
     `Hello ${sale.customerName},`,
@@ -44,12 +46,15 @@ export function letterToWorkshop(subject: LetterSubject, fact: SaleFact): Letter
 
 const totalOf = (sale: Sale) => formatMoney({ amountMinor: sale.totalMinor, currency: sale.currency });
 
-function wordsAbout(sale: Sale, fact: SaleFact): { subject: string; text: string } | null {
+function wordsAbout({ sale, isPaid }: LetterSubject, fact: SaleFact): { subject: string; text: string } | null {
   const { reason, what, parcel, carrier, trackingCode, amountMinor, isWhole } = fact.details;
   const because = reason === undefined ? [] : [reason];
   switch (fact.kind) {
     case 'placed':
-      return { subject: 'noted', text: 'Your order is noted. What is on the shelf is kept for you while you pay.' };
+      return {
+        subject: 'noted',
+        text: 'Your order is noted. What is on the shelf is kept for you for an hour; pay for it on the page below.',
+      };
     case 'paid':
       return { subject: 'paid', text: 'Your payment came in. Thank you. We tell you when the parcel leaves.' };
     case 'cut-ordered':
@@ -72,7 +77,7 @@ function wordsAbout(sale: Sale, fact: SaleFact): { subject: string; text: string
         text: [
           isWhole === true ? 'Your order is cancelled.' : `Part of your order is cancelled: ${what ?? 'see below'}.`,
           ...because,
-          'What was paid for it goes back to the card that paid.',
+          isPaid ? 'What was paid for it goes back to the card that paid.' : 'Nothing was charged.',
         ].join('\n'),
       };
     case 'returned':

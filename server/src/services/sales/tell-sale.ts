@@ -95,7 +95,7 @@ async function writeLetters(
 ): Promise<void> {
   const fresh = after.filter((one) => !before.some(({ key }) => key === one.key));
   const [payment] = paymentsOf(after);
-  const subject = await subjectOf(scope, sale, publicUrl);
+  const subject = await subjectOf(scope, sale, publicUrl, payment !== undefined);
   const shop = await scope.rows.shops.findOne({});
   for (const fact of fresh) {
     // Money that came too late or twice is told of when it goes back.
@@ -115,12 +115,13 @@ async function writeLetters(
   }
 }
 
-async function subjectOf(scope: WorkshopScope, sale: Sale, publicUrl: string): Promise<LetterSubject> {
+async function subjectOf(scope: WorkshopScope, sale: Sale, publicUrl: string, isPaid: boolean): Promise<LetterSubject> {
   const workshop = await scope.workshop();
   const lines = await scope.rows.saleLines.list({ where: { saleId: sale.id }, order: [['position', 'ASC']] });
   return {
     sale,
     shopName: workshop.name,
+    isPaid,
     publicUrl,
     lines: lines.map(({ quantity, title, finishId }) => `${quantity} × ${title}, ${finishWords(finishId)}`),
   };

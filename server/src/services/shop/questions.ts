@@ -4,8 +4,10 @@ import type { AppDependencies } from '../../app-dependencies';
 import type { Database } from '../../database/database';
 import type { WorkshopScope } from '../../database/workshop-scope';
 import { recordEvent } from '../../events/record-event';
+import { Problem } from '../../http/problem';
 import type { Member } from '../../http/visitor';
 import type { Question } from '../../models/question';
+import type { QuestionMessage } from '../../models/question-message';
 import type { Sale } from '../../models/sale';
 import { findQuestionByLink, findShop } from '../sales/find-by-link';
 import { orderPageUrl } from '../sales/sale-letters';
@@ -62,6 +64,18 @@ async function presentOne(scope: WorkshopScope, question: Question): Promise<Que
   return only;
 }
 
+const usedOtherwise = (): Problem =>
+  new Problem('already-exists', {
+    detail: 'This key was used for something else before.',
+    kept: 'Nothing was sent.',
+    next: 'Send a new Idempotency-Key.',
+  });
+
+/** @throws Problem `already-exists` when the key of a message comes with other words */
+function refuseOtherText(known: QuestionMessage, text: string): void {
+  if (known.text !== text) throw usedOtherwise();
+}
+
 /** A message of the customer: kept once under its key, and mailed to the workshop. */
 async function addQuestion(
   scope: WorkshopScope,
@@ -69,7 +83,11 @@ async function addQuestion(
   { text, key, about }: { readonly text: string; readonly key: string; readonly about: string },
   { queue, publicUrl, now }: Tools,
 ): Promise<void> {
-  if ((await scope.rows.questionMessages.findOne({ questionId: question.id, key })) !== null) return;
+  const known = await scope.rows.questionMessages.findOne({ questionId: question.id, key });
+  if (known !== null) {
+    refuseOtherText(known, text);
+    return;
+  }
   const at = now();
   const byName = question.askerName;
   await scope.rows.questionMessages.add({ questionId: question.id, key, side: 'customer', byName, text, at });
@@ -113,16 +131,23 @@ export async function askShop(
   key: string,
 ): Promise<string> {
   const workshopId = await findShop(tools.database, shopSlug);
+  const askerEmail = email.trim().toLowerCase();
   return tools.database.inWorkshop(workshopId, async (scope) => {
     await scope.sql("SELECT pg_advisory_xact_lock(hashtextextended('question:' || $1, 0))", [key]);
     const known = await scope.rows.questionMessages.findOne({ key });
-    if (known !== null) return (await scope.rows.questions.get(known.questionId)).link;
+    if (known !== null) {
+      const question = await scope.rows.questions.get(known.questionId);
+      // Whoever chances on somebody else's key must not get the link of their thread.
+      if (question.askerEmail !== askerEmail || question.saleId !== null) throw usedOtherwise();
+      refuseOtherText(known, text);
+      return question.link;
+    }
     const listing =
       listingSlug === null ? null : await scope.rows.listings.findOne({ slug: listingSlug, state: 'published' });
     const question = await scope.rows.questions.add({
       listingId: listing?.id ?? null,
       askerName: name,
-      askerEmail: email.trim().toLowerCase(),
+      askerEmail,
       link: randomBytes(32).toString('base64url'),
       askedAt: tools.now(),
     });
@@ -191,7 +216,11 @@ export function answerQuestion(
   const { database, queue, publicUrl, now } = tools;
   return database.inWorkshop(actor.workshopId, async (scope) => {
     const question = await scope.rows.questions.get(questionId, { lock: true });
-    if ((await scope.rows.questionMessages.findOne({ questionId, key })) !== null) return presentOne(scope, question);
+    const known = await scope.rows.questionMessages.findOne({ questionId, key });
+    if (known !== null) {
+      refuseOtherText(known, text);
+      return presentOne(scope, question);
+    }
     const at = now();
     await scope.rows.questionMessages.add({ questionId, key, side: 'workshop', byName: actor.userName, text, at });
     await scope.rows.questions.change(question, { isAnswered: true });

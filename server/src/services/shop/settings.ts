@@ -12,6 +12,7 @@ import { refuseStale } from '../refuse-stale';
 function firstSlug(name: string, workshopId: string): string {
   const plain = name
     .normalize('NFKD')
+    .replace(/\p{M}/gu, '')
     .toLowerCase()
     .replace(/[^a-z0-9]+/g, '-')
     .replace(/^-+|-+$/g, '')

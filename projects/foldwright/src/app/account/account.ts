@@ -6,11 +6,12 @@ import { MatInputModule } from '@angular/material/input';
 import { ApiProblem } from '../api/api-problem';
 import { Notices } from '../api/notices';
 import { SessionApi } from '../api/session-api';
+import { StartWorkshop } from './start-workshop';
 
 /** The person's own page: the name others see, and the workshops they belong to. */
 @Component({
   selector: 'fw-account',
-  imports: [MatButtonModule, MatFormFieldModule, MatInputModule, ReactiveFormsModule],
+  imports: [MatButtonModule, MatFormFieldModule, MatInputModule, ReactiveFormsModule, StartWorkshop],
   templateUrl: './account.html',
   styleUrl: './account.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -3,7 +3,7 @@ import { NonNullableFormBuilder, ReactiveFormsModule, Validators } from '@angula
 import { MatButtonModule } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInputModule } from '@angular/material/input';
-import { Router } from '@angular/router';
+import { Router, RouterLink } from '@angular/router';
 import { BrandMark } from '@foldwright/ui/brand-mark/brand-mark';
 import { FindingSign } from '@foldwright/ui/finding-note/finding-sign';
 import { ApiProblem } from '../api/api-problem';
@@ -13,7 +13,15 @@ import { SessionApi } from '../api/session-api';
 /** Sign-in with e-mail and password; says in place what is wrong and keeps what was typed. */
 @Component({
   selector: 'fw-sign-in',
-  imports: [BrandMark, FindingSign, MatButtonModule, MatFormFieldModule, MatInputModule, ReactiveFormsModule],
+  imports: [
+    BrandMark,
+    FindingSign,
+    MatButtonModule,
+    MatFormFieldModule,
+    MatInputModule,
+    ReactiveFormsModule,
+    RouterLink,
+  ],
   templateUrl: './sign-in.html',
   styleUrl: './sign-in.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -1,5 +1,6 @@
 import { Injectable, type Signal, computed, inject, signal } from '@angular/core';
-import type { Role } from '@foldwright/shared/contracts/route';
+import { acceptInvitation, createWorkshop, signUp } from '@foldwright/shared/contracts/members';
+import type { Role, RouteBody } from '@foldwright/shared/contracts/route';
 import {
   type Session,
   changeOwnName,
@@ -54,6 +55,22 @@ export class SessionApi {
 
   async changeOwnName(name: string): Promise<Session> {
     return this.keep(await this.client.call(changeOwnName, { body: { name } }));
+  }
+
+  /** Makes an account and the workshop it owns. */
+  async signUp(body: RouteBody<typeof signUp>): Promise<Session> {
+    await this.ensure();
+    return this.keep(await this.client.call(signUp, { body }));
+  }
+
+  async createWorkshop(body: RouteBody<typeof createWorkshop>): Promise<Session> {
+    return this.keep(await this.client.call(createWorkshop, { body }));
+  }
+
+  /** Joins a workshop by its invitation; with a new account where there is none for the address. */
+  async join(link: string, account: { readonly name: string; readonly password: string } | null): Promise<Session> {
+    await this.ensure();
+    return this.keep(await this.client.call(acceptInvitation, { params: { link }, body: { account } }));
   }
 
   private keep(session: Session): Session {

@@ -1,6 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
-import { MatButtonModule } from '@angular/material/button';
 import type { Mail } from '@foldwright/shared/contracts/office';
 import { momentWords } from '@foldwright/ui/date-text/date-words';
 import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
@@ -8,6 +7,7 @@ import { auditTime, filter, merge } from 'rxjs';
 import { LiveEvents } from '../api/live-events';
 import { OfficeApi } from '../api/office-api';
 import { SessionApi } from '../api/session-api';
+import { MembersSection } from './members-section';
 
 const REREAD_AFTER_MS = 400;
 
@@ -20,7 +20,7 @@ const MAIL_STATE_WORDS: Readonly<Record<Mail['state'], string>> = {
 /** The office: who belongs to the workshop, what mail went out, who did what. Each is shown to the roles it is for. */
 @Component({
   selector: 'fw-office-page',
-  imports: [MatButtonModule, Pictogram],
+  imports: [MembersSection, Pictogram],
   templateUrl: './office-page.html',
   styleUrl: './office-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -33,10 +33,8 @@ export class OfficePage {
 
   protected readonly seesMails = this.session.canMake;
   protected readonly seesAudit = computed(() => this.session.role() === 'owner');
-  protected readonly members = this.office.members();
   protected readonly mails = this.office.mails(this.seesMails);
   protected readonly audit = this.office.auditTrail(this.seesAudit);
-  protected readonly me = this.session.user;
 
   private readonly now = new Date();
   protected readonly mailRows = computed(() =>

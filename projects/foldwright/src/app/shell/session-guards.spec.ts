@@ -76,8 +76,11 @@ describe('who is let in', () => {
   });
 
   it('names only areas that are there for a role', () => {
-    expect(areasFor('viewer').map((area) => area.label)).toEqual(['Parts', 'Materials & tooling', 'Orders', 'Office']);
-    expect(areasFor('customer')).toHaveLength(0);
+    expect(areasFor('viewer').map((area) => area.label)).toEqual([
+      ...['Parts', 'Materials & tooling', 'Stock & kits', 'Shop', 'Orders', 'Office'],
+    ]);
+    expect(areasFor('customer').map((area) => area.label)).toEqual(['Your orders']);
+    expect(areasFor(null)).toHaveLength(0);
     expect(homeFor(null)).toBe('/welcome');
     expect(initialsOf('Imogen  Rose Harrow')).toBe('IH');
     expect(initialsOf('')).toBe('');
