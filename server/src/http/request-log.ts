@@ -8,6 +8,16 @@ export function requestIdOf(response: Response): string {
   return typeof id === 'string' ? id : 'none';
 }
 
+/** From this length on a part of an address is a private link or an invitation: whoever has it is let in. */
+const SHORTEST_SECRET = 40;
+
+/** An address as it may stand in a log: without what would let a reader of the log in. */
+export const loggedPath = (path: string): string =>
+  path
+    .split('/')
+    .map((part) => (part.length < SHORTEST_SECRET ? part : '…'))
+    .join('/');
+
 /** Gives every request an id and writes one line when it ends. Neither headers, bodies nor queries are logged. */
 export function requestLog(logger: Logger): RequestHandler {
   return (request, response, next) => {
@@ -20,7 +30,7 @@ export function requestLog(logger: Logger): RequestHandler {
       const line = {
         requestId,
         method: request.method,
-        path: request.path,
+        path: loggedPath(request.path),
         status: response.statusCode,
         ms: Math.round(ms * 10) / 10,
       };

@@ -2,7 +2,7 @@ import type { ErrorRequestHandler, RequestHandler, Response } from 'express';
 import { MulterError } from 'multer';
 import type { Logger } from 'pino';
 import { Problem } from './problem';
-import { requestIdOf } from './request-log';
+import { loggedPath, requestIdOf } from './request-log';
 
 /** What body-parser and its kin put on their errors. */
 function statusOf(error: unknown): number | undefined {
@@ -56,7 +56,7 @@ export function writeProblems(logger: Logger): ErrorRequestHandler {
     const problem = foreseen(error);
     if (problem === undefined) {
       logger.error(
-        { err: error, requestId: requestIdOf(response), method: request.method, path: request.path },
+        { err: error, requestId: requestIdOf(response), method: request.method, path: loggedPath(request.path) },
         'unforeseen',
       );
     }

@@ -6,7 +6,9 @@ import { bracketRefSchema, costSchema, finishId } from './stock';
 /** The last part of a public address: lower-case letters, digits and single hyphens. */
 export const slug = z.string().check(z.regex(/^[a-z0-9]+(-[a-z0-9]+)*$/), z.minLength(2), z.maxLength(60));
 export const paragraph = (maximum: number) => z.string().check(z.trim(), z.maxLength(maximum));
-const minor = z.int().check(z.gte(0), z.lte(100_000_000));
+/** Up to 100 000 in whole units: sums of a full cart stay exact. */
+const LARGEST_PRICE_MINOR = 10_000_000;
+const minor = z.int().check(z.gte(0), z.lte(LARGEST_PRICE_MINOR));
 
 export const shopSettingsSchema = z.object({
   slug,
@@ -62,7 +64,7 @@ const listingInput = z.strictObject({
   /** Steps of fitting, one a line: they stand on the fitting sheet. */
   fittingSteps: paragraph(3000),
   /** Price with tax, in the shop's currency. Nothing is given away: a payment page can't be opened for nothing. */
-  priceMinor: z.int().check(z.gte(1), z.lte(100_000_000)),
+  priceMinor: z.int().check(z.gte(1), z.lte(LARGEST_PRICE_MINOR)),
   finishes: z.array(finishOffer).check(
     z.minLength(1),
     z.maxLength(10),
@@ -199,7 +201,7 @@ export const setListingState = defineRoute({
   response: listingSchema,
   successStatus: 200,
   ifMatch: true,
-  problems: ['stale-row', 'wrong-state'],
+  problems: ['stale-row'],
 });
 export const addListingPhoto = defineRoute({
   id: 'addListingPhoto',

@@ -117,6 +117,8 @@ export async function presentCustomerOrder(scope: WorkshopScope, sale: Sale): Pr
   return {
     shop: await frontOf(scope),
     ...shared,
+    // Why the payment host would not send money back is between it and the workshop, which tries again.
+    events: shared.events.filter(({ kind }) => kind !== 'refund-failed'),
     canPay: sale.state === 'placed' && !isPaid,
     canCancel: sale.state === 'placed' || sale.state === 'paid',
     hasFittingSheet: sale.state !== 'cancelled',

@@ -39,13 +39,15 @@ export async function bookEntry(scope: WorkshopScope, entry: NewLedgerEntry): Pr
   return true;
 }
 
+const paidKey = (paymentId: string) => `paid:${paymentId}`;
+
 /** A payment of a customer came in. Every payment is booked, one that came twice too: it goes back in an entry of its own. */
 export async function bookPayment(scope: WorkshopScope, sale: Sale, paymentId: string, at: Date): Promise<void> {
   const lines = await scope.rows.saleLines.list({ where: { saleId: sale.id } });
   const itemsTax = lines.reduce((sum, line) => sum + line.taxMinor, 0);
   const postageTax = sale.taxMinor - itemsTax;
   await bookEntry(scope, {
-    key: `paid:${paymentId}`,
+    key: paidKey(paymentId),
     at,
     text: `Sale ${sale.number} paid by ${sale.customerName}`,
     saleId: sale.id,
@@ -62,16 +64,18 @@ export async function bookPayment(scope: WorkshopScope, sale: Sale, paymentId: s
 
 /**
  * Money went back to a customer. Tax goes back in proportion: what refunds of one payment have taken so far is rounded
- * as a whole, so that a payment that went back whole leaves no cent of tax.
+ * as a whole, so that a payment that went back whole leaves no cent of tax. A payment that was never booked, because it
+ * was of another sum than the sale's, goes back without a word in the books.
  * @param beforeMinor what had gone back of this payment before
  */
 export async function bookRefund(
   scope: WorkshopScope,
   sale: Sale,
-  refund: { readonly id: string; readonly amountMinor: number; readonly reason: string },
+  refund: { readonly id: string; readonly paymentId: string; readonly amountMinor: number; readonly reason: string },
   beforeMinor: number,
   at: Date,
 ): Promise<void> {
+  if ((await scope.rows.ledgerEntries.findOne({ key: paidKey(refund.paymentId) })) === null) return;
   const taxUpTo = (backMinor: number) => partMinor(sale.taxMinor, backMinor, sale.totalMinor);
   const tax = taxUpTo(beforeMinor + refund.amountMinor) - taxUpTo(beforeMinor);
   await bookEntry(scope, {

@@ -54,10 +54,13 @@ async function moneyOf(scope: WorkshopScope): Promise<Ledger['money']> {
 async function keptBySales(scope: WorkshopScope, currency: 'EUR' | 'USD'): Promise<number> {
   let kept = 0;
   for (const sale of await scope.rows.sales.list({ where: { currency } })) {
-    kept += paymentsOf(await readSaleFacts(scope, sale.id)).length * sale.totalMinor;
+    const payments = paymentsOf(await readSaleFacts(scope, sale.id));
+    const back = await scope.rows.refunds.list({
+      where: { saleId: sale.id, paymentId: [...payments], state: 'done' },
+    });
+    kept += payments.length * sale.totalMinor - sum(back, ({ amountMinor }) => amountMinor);
   }
-  const back = await scope.rows.refunds.list({ where: { state: 'done' } });
-  return kept - sum(back, ({ amountMinor }) => amountMinor);
+  return kept;
 }
 
 async function unitsOf(scope: WorkshopScope): Promise<Ledger['units']> {

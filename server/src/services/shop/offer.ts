@@ -1,7 +1,4 @@
-import { createHash } from 'node:crypto';
 import type { CartLine, Offer } from '@foldwright/shared/contracts/storefront';
-import { canonicalJson } from '@foldwright/shared/part/canonical-json';
-import { includedTaxMinor } from '@foldwright/shared/pricing/included-tax';
 import type { Database } from '../../database/database';
 import type { WorkshopScope } from '../../database/workshop-scope';
 import type { Listing } from '../../models/listing';
@@ -9,9 +6,11 @@ import type { Shop } from '../../models/shop';
 import { findShop } from '../sales/find-by-link';
 import { findPosition } from '../stock/shelf';
 import type { ListedPiece } from './pieces';
-import { piecesOf, targetOfPiece } from './pieces';
+import { pieceWords, piecesOf, targetOfPiece } from './pieces';
 import { finishesOf } from './present-listing';
 import { shopOf } from './settings';
+import type { PricedLine } from './sum-offer';
+import { joinCart, sumOffer } from './sum-offer';
 
 /** A line of an offer together with what it was made from, for whoever places the order. */
 export interface OfferedLine {
@@ -52,25 +51,14 @@ class Shelf {
 const leavesInDays = (shop: Shop, listing: Listing, isOnShelf: boolean): number =>
   shop.packingDays + (isOnShelf ? 0 : listing.leadTimeDays);
 
-/** Lines of one thing in one finish count as one. */
-function joinLines(lines: readonly CartLine[]): readonly CartLine[] {
-  const joined = new Map<string, CartLine>();
-  for (const line of lines) {
-    const key = `${line.listingId} ${line.finishId}`;
-    joined.set(key, { ...line, quantity: (joined.get(key)?.quantity ?? 0) + line.quantity });
-  }
-  return [...joined.values()];
-}
-
 /** Price a cart as it stands now, in the caller's transaction. */
 export async function makeOffer(scope: WorkshopScope, cart: readonly CartLine[]): Promise<MadeOffer> {
   const shop = await shopOf(scope);
-  const { currency, taxBasisPoints, taxName } = shop;
-  const money = (amountMinor: number) => ({ amountMinor, currency });
   const shelf = new Shelf(scope);
-  const lines: OfferedLine[] = [];
+  const made: { readonly listing: Listing; readonly pieces: readonly ListedPiece[] }[] = [];
+  const priced: PricedLine[] = [];
   const gone: Offer['gone'] = [];
-  for (const { listingId, finishId, quantity } of joinLines(cart)) {
+  for (const { listingId, finishId, quantity } of joinCart(cart)) {
     const listing = await scope.rows.listings.find(listingId);
     const finish = listing === null ? undefined : finishesOf(listing).find((one) => one.finishId === finishId);
     if (listing === null || listing.state !== 'published' || finish === undefined) {
@@ -81,36 +69,20 @@ export async function makeOffer(scope: WorkshopScope, cart: readonly CartLine[])
     }
     const pieces = await piecesOf(scope, listing);
     const fromShelf = await shelf.take(pieces, finishId, quantity);
-    const eachMinor = listing.priceMinor + finish.surchargeMinor;
-    const totalMinor = eachMinor * quantity;
-    lines.push({
-      listing,
-      pieces,
-      line: {
-        ...{ listingId, slug: listing.slug, title: listing.title, finishId, quantity, fromShelf },
-        each: money(eachMinor),
-        total: money(totalMinor),
-        tax: money(includedTaxMinor(totalMinor, taxBasisPoints)),
-        leavesInDays: leavesInDays(shop, listing, fromShelf === quantity),
-      },
+    made.push({ listing, pieces });
+    priced.push({
+      ...{ listingId, slug: listing.slug, title: listing.title, finishId, quantity, fromShelf },
+      eachMinor: listing.priceMinor + finish.surchargeMinor,
+      leavesInDays: leavesInDays(shop, listing, fromShelf === quantity),
+      contents: pieces.map((piece) => pieceWords(piece, finishId)),
     });
   }
-  const sum = (amount: (line: Offer['lines'][number]) => number) =>
-    lines.reduce((total, { line }) => total + amount(line), 0);
-  const itemsMinor = sum((line) => line.total.amountMinor);
-  const postageMinor = lines.length === 0 ? 0 : shop.postageMinor;
-  const priced = {
-    lines: lines.map(({ line }) => line),
-    gone,
-    items: money(itemsMinor),
-    postage: money(postageMinor),
-    taxName,
-    taxBasisPoints,
-    tax: money(sum((line) => line.tax.amountMinor) + includedTaxMinor(postageMinor, taxBasisPoints)),
-    total: money(itemsMinor + postageMinor),
-  };
-  const offerHash = createHash('sha256').update(canonicalJson(priced)).digest('hex');
-  return { offer: { ...priced, offerHash }, lines };
+  const offer = sumOffer(shop, priced, gone);
+  const lines = offer.lines.flatMap((line, at) => {
+    const from = made[at];
+    return from === undefined ? [] : [{ ...from, line }];
+  });
+  return { offer, lines };
 }
 
 /** What a cart costs now. @throws Problem `not-found` for a shop that isn't there or is closed */

@@ -4,6 +4,7 @@ import { computedPartSchema } from '@foldwright/shared/contracts/development-sch
 import * as z from 'zod/mini';
 import type { WorkshopScope } from '../../database/workshop-scope';
 import type { Listing } from '../../models/listing';
+import { pieceName } from '../sales/piece-words';
 import { linesOfKit } from '../stock/kits';
 import { readStoredDocument } from '../stored-document';
 import type { StockTarget } from '../stock/shelf';
@@ -31,6 +32,11 @@ export type ListedPiece =
       readonly specification: string;
       readonly quantity: number;
     };
+
+const NOTHING = {
+  ...{ partName: null, letter: null, hand: null, finishId: null },
+  ...{ hardwareName: null, hardwareSpecification: null },
+} as const;
 
 async function bracketPiece(
   scope: WorkshopScope,
@@ -70,6 +76,15 @@ export async function piecesOf(scope: WorkshopScope, listing: Listing): Promise<
     pieces.push(await hardwarePiece(scope, row.hardwareId, row.quantity));
   }
   return pieces;
+}
+
+/** A piece in words, with how many are in one of the listing: "2 × Pump tray, revision D, powder coat, moss". */
+export function pieceWords(piece: ListedPiece, chosenFinishId: string): string {
+  const named =
+    piece.kind === 'hardware'
+      ? { ...NOTHING, hardwareName: piece.name, hardwareSpecification: piece.specification }
+      : { ...NOTHING, ...piece, finishId: piece.finishId ?? chosenFinishId };
+  return `${piece.quantity} × ${pieceName(named)}`;
 }
 
 /** Where a piece lies on the shelf when the customer has chosen a finish. */

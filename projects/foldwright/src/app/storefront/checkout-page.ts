@@ -70,7 +70,7 @@ export class CheckoutPage {
           : `${line.quantity - line.fromShelf} cut for you first; ${leavesWords(line.leavesInDays)}`,
     })),
   );
-  private orderKey = newIdempotencyKey();
+  private readonly orderKeys = new Map<string, string>();
 
   constructor() {
     queueMicrotask(() => void this.price());
@@ -85,14 +85,20 @@ export class CheckoutPage {
     const { email, ...address } = this.form.getRawValue();
     const body = { lines: [...this.lines()], offerHash: offer.offerHash, email, address };
     try {
-      const { link } = await this.api.place(this.shop(), body, this.orderKey);
+      const { link } = await this.api.place(this.shop(), body, this.orderKey(JSON.stringify(body)));
       this.cart.clear(this.shop());
       await this.goToPayment(link);
     } catch (error) {
       this.isBusy.set(false);
-      this.orderKey = newIdempotencyKey();
       this.takeFailure(problemFromError(error), offer);
     }
+  }
+
+  /** The same for every try of one order: a try whose answer got lost must not become a second one. */
+  private orderKey(wish: string): string {
+    const key = this.orderKeys.get(wish) ?? newIdempotencyKey();
+    this.orderKeys.set(wish, key);
+    return key;
   }
 
   /** The order is placed: should the payment host be away, its own page says so and offers to pay again. */

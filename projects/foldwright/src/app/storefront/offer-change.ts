@@ -16,6 +16,10 @@ export function offerChanges(seen: Offer, now: Offer): readonly string[] {
         `${line.title}: ${formatMoney(line.each)} each was what you saw, now it is ${formatMoney(current.each)}.`,
       );
     }
+    const left = line.contents.filter((piece) => !current.contents.includes(piece));
+    const came = current.contents.filter((piece) => !line.contents.includes(piece));
+    if (left.length > 0) changes.push(`${line.title}: no longer in it: ${left.join('; ')}.`);
+    if (came.length > 0) changes.push(`${line.title}: now in it: ${came.join('; ')}.`);
     if (current.fromShelf !== line.fromShelf) {
       changes.push(
         `${line.title}: ${line.fromShelf} were on the shelf, now there ${current.fromShelf === 1 ? 'is' : 'are'} ${current.fromShelf}; it ${leavesWords(current.leavesInDays)}.`,
