@@ -120,6 +120,7 @@ describe('walls between workshops in the database', () => {
     const callers = sources().filter(([, text]) => /\.asSystem\(/.test(text));
     expect(callers.map(([file]) => file).sort()).toEqual([
       'services/members/invitations.ts',
+      'services/operator/troubles.ts',
       'services/read-installation.ts',
       'services/sales/find-by-link.ts',
       'services/take-message.ts',

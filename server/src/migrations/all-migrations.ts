@@ -4,6 +4,7 @@ import { ordersAndMail } from './20261201-0300-orders-and-mail';
 import { stockAndKits } from './20261201-0400-stock-and-kits';
 import { shopAndSales } from './20261201-0500-shop-and-sales';
 import { invitations } from './20261201-0600-invitations';
+import { failedMessages } from './20261201-0700-failed-messages';
 import type { Migration } from './migration';
 
 /** Every step of the schema in order. A list rather than a folder, so that it survives bundling. */
@@ -14,4 +15,5 @@ export const ALL_MIGRATIONS: readonly Migration[] = [
   stockAndKits,
   shopAndSales,
   invitations,
+  failedMessages,
 ];

@@ -2,6 +2,7 @@ import type { AppDependencies } from '../app-dependencies';
 import type { BoundRoute } from '../http/route-call';
 import { memberRoutes } from './members';
 import { officeMailRoutes } from './office-mails';
+import { operatorRoutes } from './operator';
 import { orderRoutes } from './orders';
 import { partRoutes } from './parts';
 import { photoRoutes } from './photos';
@@ -27,6 +28,7 @@ export function allRoutes(dependencies: AppDependencies): BoundRoute[] {
     ...saleLinkRoutes(dependencies),
     ...memberRoutes(dependencies),
     ...officeMailRoutes(dependencies),
+    ...operatorRoutes(dependencies),
     ...systemRoutes(dependencies),
   ];
 }

@@ -2,6 +2,7 @@ import type { AppDependencies } from '../app-dependencies';
 import type { CuttingProgress } from '../cutting/cutting-service';
 import { UnprovenCallback } from '../cutting/cutting-service';
 import type { OrderFact } from './order-state';
+import { keepingFailures } from './operator/failed-messages';
 import { refuseMessage, takeMessage } from './take-message';
 
 /**
@@ -15,7 +16,15 @@ export async function receiveCuttingCallback(
   header: (name: string) => string | undefined,
 ): Promise<void> {
   const progress = await provenProgress(tools, body, header);
-  if (progress === null) return;
+  if (progress !== null) await handleCuttingProgress(tools, progress, body);
+}
+
+/** Act on progress that has proved where it comes from; taken before, it changes nothing. */
+export async function handleCuttingProgress(
+  tools: Pick<AppDependencies, 'database' | 'queue' | 'publicUrl' | 'now'>,
+  progress: CuttingProgress,
+  body: Buffer,
+): Promise<void> {
   const { id, at, step, orderReference } = progress;
   const message = {
     provider: 'cutting',
@@ -25,9 +34,11 @@ export async function receiveCuttingCallback(
     happenedAt: at,
     body,
   } as const;
-  await takeMessage(tools, 'find the workshop of a cutting callback', message, {
-    order: () => Promise.resolve([factOf(progress)]),
-  });
+  await keepingFailures(tools.database, { provider: 'cutting', told: progress, body }, tools.now, () =>
+    takeMessage(tools, 'find the workshop of a cutting callback', message, {
+      order: () => Promise.resolve([factOf(progress)]),
+    }),
+  );
 }
 
 async function provenProgress(

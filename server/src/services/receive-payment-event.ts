@@ -5,6 +5,7 @@ import type { Order } from '../models/order';
 import type { MoneyEvent, PaymentEvent, PaymentHost } from '../payments/payment-host';
 import { UnprovenMessage } from '../payments/payment-host';
 import type { OrderFact } from './order-state';
+import { keepingFailures } from './operator/failed-messages';
 import { saleFactsOf } from './sales/payment-facts';
 import { refuseMessage, takeMessage } from './take-message';
 
@@ -19,12 +20,23 @@ export async function receivePaymentEvent(
 ): Promise<void> {
   const event = await provenEvent(tools, tools.payments, body, signature);
   if (event.kind === 'of-no-concern') return;
+  await handlePaymentEvent(tools, event, body);
+}
+
+/** Act on an event that has proved where it comes from; taken before, it changes nothing. */
+export async function handlePaymentEvent(
+  tools: Pick<AppDependencies, 'database' | 'queue' | 'publicUrl' | 'now'>,
+  event: MoneyEvent,
+  body: Buffer,
+): Promise<void> {
   const { id, at, kind, orderId } = event;
   const message = { provider: 'payments', eventId: id, kind, aboutId: orderId, happenedAt: at, body } as const;
-  await takeMessage(tools, 'find the workshop of a payment event', message, {
-    order: (scope, order) => factsOf(scope, order, event, tools.queue),
-    sale: (scope, sale) => saleFactsOf(scope, sale, event, tools),
-  });
+  await keepingFailures(tools.database, { provider: 'payments', told: event, body }, tools.now, () =>
+    takeMessage(tools, 'find the workshop of a payment event', message, {
+      order: (scope, order) => factsOf(scope, order, event, tools.queue),
+      sale: (scope, sale) => saleFactsOf(scope, sale, event, tools),
+    }),
+  );
 }
 
 async function provenEvent(

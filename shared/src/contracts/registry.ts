@@ -1,6 +1,7 @@
 import * as ledger from './ledger';
 import * as members from './members';
 import * as office from './office';
+import * as operator from './operator';
 import * as orders from './orders';
 import * as parts from './parts';
 import * as photos from './photos';
@@ -119,6 +120,10 @@ export const ROUTE_CONTRACTS: readonly RouteContract[] = [
   office.listMembers,
   office.listAuditTrail,
   office.readInstallation,
+  operator.readTroubles,
+  operator.retryWork,
+  operator.replayMessage,
+  operator.sendMailAgain,
   system.readHealth,
   system.readOpenApi,
   system.streamEvents,
