@@ -68,9 +68,8 @@ const listingInput = z.strictObject({
   finishes: z.array(finishOffer).check(
     z.minLength(1),
     z.maxLength(10),
-    z.refine((offers) => new Set(offers.map((offer) => offer.finishId)).size === offers.length, {
-      error: 'Each finish once.',
-    }),
+    // Each finish once.
+    z.refine((offers) => new Set(offers.map((offer) => offer.finishId)).size === offers.length),
   ),
   /** Days when brackets have to be cut first. */
   leadTimeDays: z.int().check(z.gte(1), z.lte(365)),
