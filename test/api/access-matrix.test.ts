@@ -4,110 +4,15 @@ import type { Role, RouteContract } from '@foldwright/shared/contracts/route';
 import { ROLES } from '@foldwright/shared/contracts/route';
 import type request from 'supertest';
 import { plainJpeg } from '../support/jpeg';
+import type { Ids } from '../support/route-inputs';
+import { BODIES, FIELDS, ID_NAMES, PLATE, QUERIES } from '../support/route-inputs';
 import { ADDRESS, HARDWARE, KIT, LISTING, SETTINGS } from '../support/shop-inputs';
 import { TestBrowser, addPerson, addWorkshop, asOwner } from '../support/people';
 import type { TestApp } from '../support/test-app';
 import { startTestApp } from '../support/test-app';
 
 /** Ids of one row of every kind that an address can name. */
-const ID_NAMES = [
-  ...['partId', 'draftId', 'photoId', 'jobId', 'revisionId', 'orderId', 'quoteId', 'hardwareId', 'kitId', 'positionId'],
-  ...[
-    'listingId',
-    'listingPhotoId',
-    'saleId',
-    'shipmentId',
-    'refundId',
-    'questionId',
-    'memberId',
-    'invitationId',
-    'workId',
-    'messageId',
-    'mailId',
-  ],
-] as const;
-type Ids = Readonly<Record<(typeof ID_NAMES)[number], string>> & {
-  /** Addresses of the shop and of what is public in it. */
-  readonly shop?: string;
-  readonly listing?: string;
-  readonly link?: string;
-};
-
-const PLATE = { shape: 'flat-plate', widthMm: 80, heightMm: 60 } as const;
 const idempotencyKey = (): [string, string] => ['idempotency-key', randomUUID()];
-
-/** Sound input for each route that takes any, so that a refusal is about who asks and never about what. */
-const BODIES: Readonly<Record<string, (ids: Ids, workshopId: string) => object>> = {
-  signIn: () => ({ email: 'nobody@example.test', password: 'x' }),
-  switchWorkshop: (_ids, workshopId) => ({ workshopId }),
-  changeOwnName: () => ({ name: 'Somebody' }),
-  createPart: () => ({ name: 'New', starter: PLATE }),
-  renamePart: () => ({ name: 'Renamed', number: `R-${randomUUID().slice(0, 8)}` }),
-  sendCommands: () => ({
-    baseRevision: 0,
-    batchId: randomUUID(),
-    clientId: 'matrix',
-    commands: [{ kind: 'setBaseAnchor', to: { x: 10, y: 10 } }],
-  }),
-  releaseDraft: () => ({ baseRevision: 0, note: '', acceptedCautionIds: [] }),
-  rereadPhoto: () => ({ templateKind: 'card', templateThicknessMm: 0.5 }),
-  askForQuote: () => ({ stock: 'production', quantities: [1] }),
-  placeOrder: ({ quoteId }) => ({ quoteId, quantity: 1 }),
-  receiveStock: ({ hardwareId }) => ({
-    what: { kind: 'hardware', hardwareId },
-    quantity: 1,
-    orderId: null,
-    reason: '',
-  }),
-  adjustStock: () => ({ change: 1, reason: 'counted' }),
-  createHardware: () => HARDWARE(randomUUID()),
-  changeHardware: () => HARDWARE(randomUUID()),
-  createKit: ({ hardwareId }) => KIT(hardwareId),
-  changeKit: ({ hardwareId }) => KIT(hardwareId),
-  setPartHardware: ({ hardwareId }) => ({ hardware: [{ hardwareId, quantity: 1 }] }),
-  setPartHand: () => ({ hand: 'left' }),
-  makeOtherHand: () => ({ name: 'Other hand' }),
-  changeShopSettings: () => SETTINGS,
-  createListing: ({ revisionId }) => LISTING(revisionId, `l-${randomUUID().slice(0, 8)}`),
-  changeListing: ({ revisionId }) => LISTING(revisionId, `l-${randomUUID().slice(0, 8)}`),
-  setListingState: () => ({ state: 'withdrawn' }),
-  answerQuestion: () => ({ text: 'It does.' }),
-  shipSale: () => ({ items: [{ itemId: randomUUID(), quantity: 1 }], carrier: 'Post', trackingCode: null }),
-  cancelSale: () => ({ lines: [{ lineId: randomUUID(), quantity: 1 }], reason: 'r' }),
-  refundSale: () => ({ amountMinor: 100, reason: 'r' }),
-  recordReturn: () => ({ itemId: randomUUID(), quantity: 1, isBackOnShelf: true, refundMinor: 0, reason: 'r' }),
-  priceCart: ({ listingId }) => ({ lines: [{ listingId, finishId: 'bare', quantity: 1 }] }),
-  placeSale: ({ listingId }) => ({
-    lines: [{ listingId, finishId: 'bare', quantity: 1 }],
-    offerHash: '0'.repeat(64),
-    email: 'buyer@example.test',
-    address: ADDRESS,
-  }),
-  askShop: () => ({ name: 'Ravi', email: 'ravi@example.test', listingSlug: null, text: 'Does it fit?' }),
-  askMoreByLink: () => ({ text: 'And this?' }),
-  signUp: () => ({
-    name: 'Noor Vale',
-    email: `${randomUUID()}@example.test`,
-    password: 'a long enough secret',
-    workshopName: 'Vale',
-    numberPrefix: 'V',
-  }),
-  inviteMember: () => ({ email: `${randomUUID()}@example.test`, role: 'viewer' }),
-  changeMemberRole: () => ({ role: 'fabricator' }),
-  acceptInvitation: () => ({ account: null }),
-  askByLink: () => ({ text: 'And this?' }),
-};
-const FIELDS: Readonly<Record<string, Readonly<Record<string, string>>>> = {
-  uploadPhoto: { templateKind: 'card', templateThicknessMm: '0.5', rulerXMm: '100', rulerYMm: '100' },
-  addListingPhoto: { description: 'On the cart' },
-};
-const QUERIES: Readonly<Record<string, string>> = {
-  computeDraft: '?stock=trial',
-  printDraft: '?stock=trial&paper=A4',
-  readPhotoImage: '?view=as-taken',
-  readScaleSheet: '?paper=A4&variant=light',
-  readRevisionFile: '?stock=trial',
-};
 
 describe('who may call what', () => {
   let test: TestApp;
@@ -242,7 +147,13 @@ describe('who may call what', () => {
       .send({ email: 'invited@example.test', role: 'viewer' })
       .expect(201);
     const spare = await addPerson(test.ownerUrl, 'Spare Member', { [workshop]: 'viewer' });
-    const work = { workId: randomUUID(), messageId: randomUUID(), mailId: randomUUID() };
+    const ofRevision = await owner.get(`/api/revisions/${revisionId}`).expect(200);
+    const said = { revisionId, place: null, text: 'A comment' };
+    const commentId = await made(`/api/parts/${ofRevision.body.partId}/comments`, said);
+    await made(`/api/revisions/${revisionId}/review-links`, { guestName: 'Noor', guestEmail: null, days: 7 });
+    const { body: reviews } = await owner.get(`/api/parts/${ofRevision.body.partId}/reviews`).expect(200);
+    const review = { commentId, reviewLinkId: String(reviews.links[0].id) };
+    const work = { ...review, workId: randomUUID(), messageId: randomUUID(), mailId: randomUUID() };
     const members = { ...work, memberId: spare.id, invitationId: String(invited.body.id) };
     const questionId = String(questions.questions[0].id);
     const listingPhotoId = String(photo.body.photos[0].id);

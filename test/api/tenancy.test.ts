@@ -122,6 +122,7 @@ describe('walls between workshops in the database', () => {
       'services/members/invitations.ts',
       'services/operator/troubles.ts',
       'services/read-installation.ts',
+      'services/reviews/review-links.ts',
       'services/sales/find-by-link.ts',
       'services/take-message.ts',
     ]);

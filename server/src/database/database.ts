@@ -15,6 +15,7 @@ export type SystemReason =
   | 'find the workshop of a payment event'
   | 'find the workshop of a cutting callback'
   | 'find the workshop of an invitation'
+  | 'find the revision behind a review link'
   | 'find the workshop of a shop address'
   | 'find the sale behind a link'
   | 'find the question behind a link'

@@ -5,6 +5,7 @@ import { stockAndKits } from './20261201-0400-stock-and-kits';
 import { shopAndSales } from './20261201-0500-shop-and-sales';
 import { invitations } from './20261201-0600-invitations';
 import { failedMessages } from './20261201-0700-failed-messages';
+import { reviews } from './20261201-0800-reviews';
 import type { Migration } from './migration';
 
 /** Every step of the schema in order. A list rather than a folder, so that it survives bundling. */
@@ -16,4 +17,5 @@ export const ALL_MIGRATIONS: readonly Migration[] = [
   shopAndSales,
   invitations,
   failedMessages,
+  reviews,
 ];

@@ -3,6 +3,7 @@ import type { WorkshopRow } from '../database/scoped-rows';
 import { ScopedRows } from '../database/scoped-rows';
 import { defineAuditEntry } from './audit-entry';
 import { defineCommandBatch } from './command-batch';
+import { defineComment } from './comment';
 import { defineCutAssignment } from './cut-assignment';
 import { defineDraft } from './draft';
 import { defineHardwareItem } from './hardware-item';
@@ -17,6 +18,7 @@ import { defineListing } from './listing';
 import { defineListingPhoto } from './listing-photo';
 import { defineMail } from './mail';
 import { defineMembership } from './membership';
+import { defineOpinion } from './opinion';
 import { defineOrder } from './order';
 import { defineOrderEvent } from './order-event';
 import { definePart } from './part';
@@ -26,6 +28,7 @@ import { defineQuestion } from './question';
 import { defineQuestionMessage } from './question-message';
 import { defineQuote } from './quote';
 import { defineRefund } from './refund';
+import { defineReviewLink } from './review-link';
 import { defineRevision } from './revision';
 import { defineRevisionFile } from './revision-file';
 import { defineSale } from './sale';
@@ -62,6 +65,9 @@ export function defineModels(sequelize: Sequelize) {
     orderEvents: defineOrderEvent(sequelize),
     mails: defineMail(sequelize),
     webhookEvents: defineWebhookEvent(sequelize),
+    reviewLinks: defineReviewLink(sequelize),
+    comments: defineComment(sequelize),
+    opinions: defineOpinion(sequelize),
     invitations: defineInvitation(sequelize),
     hardwareItems: defineHardwareItem(sequelize),
     partHardware: definePartHardware(sequelize),
@@ -107,6 +113,9 @@ export function workshopRows(models: Models, workshopId: string, transaction: Tr
     orderEvents: of(models.orderEvents),
     mails: of(models.mails),
     webhookEvents: of(models.webhookEvents),
+    reviewLinks: of(models.reviewLinks),
+    comments: of(models.comments),
+    opinions: of(models.opinions),
     invitations: of(models.invitations),
     hardwareItems: of(models.hardwareItems),
     partHardware: of(models.partHardware),

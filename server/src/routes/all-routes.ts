@@ -6,6 +6,7 @@ import { operatorRoutes } from './operator';
 import { orderRoutes } from './orders';
 import { partRoutes } from './parts';
 import { photoRoutes } from './photos';
+import { reviewRoutes } from './reviews';
 import { revisionRoutes } from './revisions';
 import { sessionRoutes } from './session';
 import { saleLinkRoutes, saleRoutes } from './sales';
@@ -20,6 +21,7 @@ export function allRoutes(dependencies: AppDependencies): BoundRoute[] {
     ...partRoutes(dependencies),
     ...photoRoutes(dependencies),
     ...revisionRoutes(dependencies),
+    ...reviewRoutes(dependencies),
     ...orderRoutes(dependencies),
     ...stockRoutes(dependencies),
     ...shopRoutes(dependencies),

@@ -6,6 +6,7 @@ import * as orders from './orders';
 import * as parts from './parts';
 import * as photos from './photos';
 import * as questions from './questions';
+import * as reviews from './reviews';
 import * as revisions from './revisions';
 import type { RouteContract } from './route';
 import * as saleLinks from './sale-links';
@@ -116,6 +117,15 @@ export const ROUTE_CONTRACTS: readonly RouteContract[] = [
   members.removeMember,
   members.readInvitation,
   members.acceptInvitation,
+  reviews.listReviews,
+  reviews.addComment,
+  reviews.resolveComment,
+  reviews.giveOpinion,
+  reviews.makeReviewLink,
+  reviews.withdrawReviewLink,
+  reviews.readReview,
+  reviews.commentByLink,
+  reviews.opinionByLink,
   office.listMails,
   office.listMembers,
   office.listAuditTrail,

@@ -17,6 +17,11 @@ export const routes: Routes = [
     title: 'Invitation',
     loadComponent: () => import('./account/invitation-page').then((m) => m.InvitationPage),
   },
+  {
+    path: 'review/:link',
+    title: 'Please look at this',
+    loadComponent: () => import('./review/review-page').then((m) => m.ReviewPage),
+  },
   { path: 'trouble', title: 'Trouble', loadComponent: () => import('./shell/trouble').then((m) => m.Trouble) },
   { path: 'shop', loadChildren: () => import('./storefront/routes').then((m) => m.STOREFRONT_ROUTES) },
   {

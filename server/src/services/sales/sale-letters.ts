@@ -5,7 +5,7 @@ import type { SaleFact } from './sale-state';
 
 /** What letters about a sale need besides the sale itself. */
 export interface LetterSubject {
-  readonly sale: Sale;
+  readonly sale: Pick<Sale, 'id' | 'number' | 'link' | 'customerName' | 'totalMinor' | 'currency'>;
   readonly shopName: string;
   /** Whether a payment came in, now or before. */
   readonly isPaid: boolean;
@@ -26,7 +26,7 @@ export function letterToCustomer(subject: LetterSubject, fact: SaleFact): Letter
     `Hello ${sale.customerName},`,
     words.text,
     ...(fact.kind === 'placed' || fact.kind === 'paid' ? [[...lines, `Total ${totalOf(sale)}`].join('\n')] : []),
-    `Your order, with its fitting sheet: ${orderPageUrl(publicUrl, sale.link)}`,
+    `${fact.details.isWhole === true ? 'Your order' : 'Your order, with its fitting sheet'}: ${orderPageUrl(publicUrl, sale.link)}`,
     shopName,
   ];
   return { subject: `${shopName}, order ${sale.number}: ${words.subject}`, body: `${body.join('\n\n')}\n` };
@@ -44,7 +44,7 @@ export function letterToWorkshop(subject: LetterSubject, fact: SaleFact): Letter
   return { subject: `Sale ${sale.number} is paid`, body: `${body.join('\n\n')}\n` };
 }
 
-const totalOf = (sale: Sale) => formatMoney({ amountMinor: sale.totalMinor, currency: sale.currency });
+const totalOf = (sale: LetterSubject['sale']) => formatMoney({ amountMinor: sale.totalMinor, currency: sale.currency });
 
 function wordsAbout({ sale, isPaid }: LetterSubject, fact: SaleFact): { subject: string; text: string } | null {
   const { reason, what, parcel, carrier, trackingCode, amountMinor, isWhole } = fact.details;

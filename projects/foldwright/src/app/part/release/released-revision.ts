@@ -9,6 +9,7 @@ import { OrdersApi } from '../../api/orders-api';
 import { type RevisionFileKind, RevisionsApi } from '../../api/revisions-api';
 import { QuoteCard } from './quote-card';
 import { RevisionBuyers } from './revision-buyers';
+import { RevisionReviews } from './revision-reviews';
 
 const QUANTITIES = [1, 10, 50] as const;
 const FILE_WORDS: Readonly<Record<RevisionFileKind, string>> = {
@@ -20,7 +21,7 @@ const FILE_WORDS: Readonly<Record<RevisionFileKind, string>> = {
 /** A frozen revision: its fingerprint, its files in either sheet, prices from the cutting service, and the order. */
 @Component({
   selector: 'fw-released-revision',
-  imports: [MatButtonModule, Pictogram, QuoteCard, RevisionBuyers],
+  imports: [MatButtonModule, Pictogram, QuoteCard, RevisionBuyers, RevisionReviews],
   templateUrl: './released-revision.html',
   styleUrl: './released-revision.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
