@@ -70,10 +70,13 @@ describe('ordering without an account', () => {
     await openShop(owner, { isOpen: false });
     expect((await order(wish(offerHash), key)).body).toEqual(first);
     await order(wish(offerHash)).expect(404);
+    await guest.get('/api/shops/larkfield/listings/regulator').expect(404);
     await guest
       .post('/api/shops/larkfield/offers')
       .send({ lines: [line()] })
       .expect(404);
+    // The order itself stays where it was.
+    expect((await readLink(guest, first.link)).canPay).toBe(true);
     expect((await owner.get('/api/sales').expect(200)).body.sales).toHaveLength(1);
   });
 

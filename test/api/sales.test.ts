@@ -316,36 +316,6 @@ describe('a sale to a customer', () => {
     expect(recipients.filter((to) => to.includes('ada@example.test'))).toHaveLength(1);
   });
 
-  it('shows nothing to whoever has no link, and nothing of a shop that is closed', async () => {
-    const link = await place(guest, [line()]);
-    await guest.get(`/api/sale-links/${'x'.repeat(43)}`).expect(404);
-    const other = await new TestBrowser(test.app).signIn(
-      await addPerson(test.ownerUrl, 'Petra Lowe', { [await addWorkshop(test.ownerUrl, 'Orchard', 'OS')]: 'owner' }),
-    );
-    await other.get(`/api/sales/${(await readLink(guest, link)).id}`).expect(404);
-    await openShop(owner, { isOpen: false });
-    await guest.get('/api/shops/larkfield').expect(404);
-    // Who has ordered keeps their order.
-    await guest.get(`/api/sale-links/${link}`).expect(200);
-  });
-
-  it('leaves a withdrawn listing out of the cart and says so', async () => {
-    const { body } = await owner.get(`/api/shop/listings/${listingId}`).expect(200);
-    const state = owner.put(`/api/shop/listings/${listingId}/state`).set('if-match', `"${body.revision}"`);
-    await state.send({ state: 'withdrawn' }).expect(200);
-    const offer = await offerFor(guest, [line()]);
-    expect(offer).toMatchObject({ lines: [], gone: [{ listingId }], total: { amountMinor: 0 } });
-  });
-
-  it('is found among the purchases of whoever was signed in, and of nobody else', async () => {
-    const ravi = await addPerson(test.ownerUrl, 'Ravi Sandle', { [workshop]: 'customer' });
-    const signedIn = await new TestBrowser(test.app).signIn(ravi);
-    const link = await place(signedIn, [line()]);
-    await place(guest, [line()]);
-    const { body } = await signedIn.get('/api/purchases').expect(200);
-    expect(body.purchases).toMatchObject([{ link, shopName: 'Larkfield Cartworks', what: '1 × Regulator bracket' }]);
-  });
-
   it('writes packing slip, invoice and fitting sheet', async () => {
     await receive(owner, moss(), 1);
     const link = await place(guest, [line()]);
