@@ -1,7 +1,11 @@
+import { randomUUID } from 'node:crypto';
 import { partSummarySchema } from '@foldwright/shared/contracts/parts';
+import { customerOrderSchema } from '@foldwright/shared/contracts/sale-links';
+import { offerSchema, shopListingSchema } from '@foldwright/shared/contracts/storefront';
 import { seedDemo } from '@foldwright/server/database/seed-demo';
 import people from '@foldwright/server/setup/demo/people.json';
 import { TestBrowser, addWorkshop, asOwner } from '../support/people';
+import { ADDRESS } from '../support/shop';
 import type { TestApp } from '../support/test-app';
 import { startTestApp } from '../support/test-app';
 
@@ -43,6 +47,35 @@ describe('the demo', () => {
     expect(file.headers['content-disposition']).toMatch(/^attachment; filename="LC-02 A Pump tray production.dxf"/);
     const detail = await owner.get(`/api/revisions/${revisionId}`).expect(200);
     expect(detail.body.files).toHaveLength(3);
+  });
+
+  it('has a shop whose water kit lacks one bracket in moss, and can be sent at once in cream', async () => {
+    await seed();
+    await seed();
+    const guest = await new TestBrowser(test.app).open();
+    const { body } = await guest.get('/api/shops/larkfield/listings').expect(200);
+    expect(body.cards.map(({ title, kind }: { title: string; kind: string }) => [kind, title])).toEqual([
+      ['kit', 'Two-pump water kit'],
+      ['bracket', 'Battery strap anchor'],
+      ['bracket', 'Regulator bracket'],
+    ]);
+    const kit = shopListingSchema.parse(
+      (await guest.get('/api/shops/larkfield/listings/two-pump-water-kit').expect(200)).body,
+    );
+    expect(kit.pieces.filter(({ kind }) => kind === 'bracket')).toHaveLength(3);
+    const onShelf = Object.fromEntries(kit.availability.map((row) => [row.finishId, row.onShelf]));
+    expect(onShelf).toMatchObject({ 'powder-moss': 0, 'powder-cream': 2 });
+    const lines = [{ listingId: kit.id, finishId: 'powder-moss', quantity: 1 }];
+    const offer = await guest.post('/api/shops/larkfield/offers').send({ lines }).expect(200);
+    const { offerHash } = offerSchema.parse(offer.body);
+    const { body: sale } = await guest
+      .post('/api/shops/larkfield/sales')
+      .set('idempotency-key', randomUUID())
+      .send({ lines, offerHash, email: 'ravi@example.test', address: ADDRESS })
+      .expect(201);
+    const order = customerOrderSchema.parse((await guest.get(`/api/sale-links/${sale.link}`).expect(200)).body);
+    const short = order.items.filter((item) => item.short > 0);
+    expect(short).toMatchObject([{ short: 1, what: { partName: 'Regulator bracket', finishId: 'powder-moss' } }]);
   });
 
   it('is taken up again where a run was broken off', async () => {
