@@ -1,10 +1,11 @@
 import { randomUUID } from 'node:crypto';
 import type { CartLine } from '@foldwright/shared/contracts/storefront';
+import { Client } from 'pg';
 import type { TestApp } from '../support/test-app';
 import { startTestApp } from '../support/test-app';
 import { releaseBracket } from '../support/commerce';
 import { TestBrowser, addPerson, addWorkshop, asOwner } from '../support/people';
-import { ADDRESS, SHOP, offerFor, openShop, place, publish, readLink, receive } from '../support/shop';
+import { ADDRESS, SHOP, addKit, offerFor, openShop, place, publish, readLink, receive } from '../support/shop';
 
 interface Mail {
   readonly key: string;
@@ -152,6 +153,26 @@ describe('ordering without an account', () => {
     expect(refused.body.extra.offer.lines[0].contents).toEqual([expect.stringContaining('Other bracket, revision A')]);
   });
 
+  it('keeps what it promised from the shelf for the line it was promised to', async () => {
+    const { revisionId: trayId } = await releaseBracket(owner, 'Pump tray');
+    const kitId = await addKit(owner, [
+      { kind: 'bracket', revisionId, finishId: null, quantity: 1 },
+      { kind: 'bracket', revisionId: trayId, finishId: null, quantity: 1 },
+    ]);
+    const kit = await publish(owner, { kind: 'kit', kitId });
+    await receive(owner, { kind: 'bracket', revisionId, finishId: 'powder-moss' }, 2);
+    // The kit has to wait for its tray; the bracket that is sold alone has not. What is left is kept for the kit.
+    const lines = [line({ listingId: kit, quantity: 2 }), line()];
+    const offer = await offerFor(guest, lines);
+    expect(offer.lines.map(({ fromShelf }) => fromShelf)).toEqual([0, 1]);
+    const sold = await readLink(guest, await place(guest, lines));
+    expect(sold.items.map(({ quantity, reserved, short }) => [quantity, reserved, short])).toEqual([
+      [2, 1, 1],
+      [2, 0, 2],
+      [1, 1, 0],
+    ]);
+  });
+
   it('says so when a cart is dearer than any payment page takes', async () => {
     const dear = await publish(owner, { kind: 'bracket', revisionId }, { priceMinor: 10_000_000, slug: 'dear' });
     const lines = [line({ listingId: dear, quantity: 500 })];
@@ -245,7 +266,8 @@ describe('ordering without an account', () => {
   });
 
   it('is found by whoever was signed in, across shops, and only by them', async () => {
-    const ravi = await new TestBrowser(test.app).signIn(await addPerson(test.ownerUrl, 'Ravi Sandle', {}));
+    const person = await addPerson(test.ownerUrl, 'Ravi Sandle', {});
+    const ravi = await new TestBrowser(test.app).signIn(person);
     const ada = await new TestBrowser(test.app).signIn(await addPerson(test.ownerUrl, 'Ada Brook', {}));
     await place(guest, [line()]);
     const link = await place(ravi, [line({ quantity: 2 })]);
@@ -257,6 +279,22 @@ describe('ordering without an account', () => {
     const { body: sales } = await owner.get('/api/sales').expect(200);
     expect(sales.sales).toHaveLength(2);
     expect((await owner.get('/api/purchases').expect(200)).body.purchases).toEqual([]);
+
+    // The database itself shows a person their own sales and nothing more, past all of our code.
+    const app = new Client({ connectionString: test.applicationUrl });
+    await app.connect();
+    try {
+      await app.query("SELECT set_config('foldwright.user', $1, false)", [person.id]);
+      expect((await app.query('SELECT link FROM sales')).rows).toEqual([{ link }]);
+      for (const table of ['sale_lines', 'sale_items', 'sale_facts', 'refunds', 'questions', 'shops']) {
+        expect((await app.query(`SELECT * FROM ${table}`)).rows).toEqual([]);
+      }
+      expect((await app.query("UPDATE sales SET customer_name = 'x'")).rowCount).toBe(0);
+      await app.query("SELECT set_config('foldwright.user', '', false)");
+      expect((await app.query('SELECT link FROM sales')).rows).toEqual([]);
+    } finally {
+      await app.end();
+    }
   });
 
   it('tells the customer that the order is noted, with its link, and what is said when it is cancelled unpaid', async () => {

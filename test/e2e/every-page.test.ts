@@ -37,7 +37,7 @@ describe('every page, by day and by night, wide and narrow', () => {
     return found;
   }
 
-  async function lookAtAll({ page }: Tab, addresses: readonly string[]): Promise<readonly string[]> {
+  async function lookAtAll({ page }: Pick<Tab, 'page'>, addresses: readonly string[]): Promise<readonly string[]> {
     const found: string[] = [];
     for (const address of addresses) {
       await page.goto(address);
@@ -57,7 +57,7 @@ describe('every page, by day and by night, wide and narrow', () => {
 
   it('the sign-in', async () => {
     const tab = await browser.open(null);
-    expect(await lookAtAll(tab, ['/sign-in', '/trouble'])).toEqual([]);
+    expect(await lookAtAll(tab, ['/sign-in', '/sign-up', '/trouble'])).toEqual([]);
     const fonts = await tab.page.evaluate(() =>
       [...document.fonts].filter(({ status }) => status === 'loaded').map(({ family }) => family.replaceAll('"', '')),
     );
@@ -74,6 +74,9 @@ describe('every page, by day and by night, wide and narrow', () => {
       '/materials',
       '/office',
       '/account',
+      ...['/stock', '/stock/hardware', '/stock/kits', '/stock/kits/new', '/stock/earnings'],
+      ...['/shop-desk/sales', '/shop-desk/listings', '/shop-desk/listings/new', '/shop-desk/questions'],
+      ...['/shop-desk/books', '/shop-desk/settings'],
     ];
     expect(await lookAtAll(tab, [...addresses, '/not-yours', '/nowhere'])).toEqual([]);
   });
@@ -143,9 +146,42 @@ describe('every page, by day and by night, wide and narrow', () => {
     expect(found).toEqual([]);
   });
 
+  it('the shop, from its front to an order', async () => {
+    const { page } = await browser.open(null);
+    const found = [
+      ...(await lookAtAll({ page }, [
+        ...['/shop/larkfield', '/shop/larkfield/battery-strap-anchor', '/shop/larkfield/two-pump-water-kit'],
+        ...['/shop/larkfield/ask', '/shop/larkfield/cart'],
+      ])),
+    ];
+    await page.setViewportSize({ width: 1280, height: 860 });
+    await page.goto('/shop/larkfield/battery-strap-anchor');
+    await page.getByRole('button', { name: 'Add to cart' }).click();
+    found.push(...(await lookAtAll({ page }, ['/shop/larkfield/cart', '/shop/larkfield/checkout'])));
+    await page.setViewportSize({ width: 1280, height: 860 });
+    await page.getByLabel('E-mail').fill('guest@example.test');
+    await page.getByLabel('Name', { exact: true }).fill('Noor Vale');
+    await page.getByLabel('Street and number').fill('Quay Row 8');
+    await page.getByLabel('Postcode').fill('1042');
+    await page.getByLabel('Town').fill('Westmere');
+    await page.getByRole('button', { name: 'Order and pay' }).click();
+    await page.getByRole('link', { name: 'Back without paying' }).click();
+    await page.getByText('You left before paying.').waitFor();
+    found.push(...(await look(page, 'an order of a customer')));
+    expect(found).toEqual([]);
+    const { page: owner } = await browser.open('owner');
+    await owner.goto('/shop-desk/sales');
+    await owner
+      .getByRole('link', { name: /Battery strap anchor/ })
+      .first()
+      .click();
+    await owner.getByRole('heading', { name: /^Sale \d+$/ }).waitFor();
+    expect(await look(owner, 'a sale at the desk')).toEqual([]);
+  });
+
   it.each([
     ['viewer', ['/parts', '/office']],
-    ['customer', ['/welcome', '/account', '/parts']],
+    ['customer', ['/welcome', '/purchases', '/account', '/parts']],
     ['operator', ['/operator', '/account']],
   ] as const satisfies readonly (readonly [DemoRole, readonly string[]])[])(
     'what the %s sees',
