@@ -60,7 +60,8 @@ export async function placeSale(
     refuseOtherOffer(made, wish.offerHash);
     refuseTooMuch(made);
     const sale = await addSale(scope, visitor, wish, made, key, tools.now());
-    await reserveForSale(scope, sale, tools.now());
+    const promised = made.lines.map(({ line }) => line.fromShelf);
+    await reserveForSale(scope, sale, promised, tools.now());
     const { workshopId: id, transaction } = scope;
     const expiry = { task: 'expire', workshopId: id, saleId: sale.id };
     await tools.queue.enqueue(transaction, 'sale', expiry, { startAfterSeconds: KEPT_FOR_S });

@@ -26,8 +26,9 @@ async function keepFree(
   item: SaleItem,
   position: StockPosition,
   now: Date,
+  atMost = Infinity,
 ): Promise<number> {
-  const taken = Math.min(shortOf(item), position.onHand - position.reserved);
+  const taken = Math.min(shortOf(item), position.onHand - position.reserved, atMost);
   if (taken <= 0) return 0;
   await moveStock(scope, position, {
     key: `reserve:${item.id}:${randomUUID()}`,
@@ -43,14 +44,29 @@ async function keepFree(
   return taken;
 }
 
-/** Keep for a sale what is free of each of its pieces. Only with the shelf locked. */
-export async function reserveForSale(scope: WorkshopScope, sale: Sale, now: Date): Promise<void> {
+/**
+ * Keep for a sale what is free of each of its pieces: first what its buyer was told would come from the shelf, so that a
+ * line that can go at once is not broken up for one that has to wait anyway. Only with the shelf locked.
+ * @param promised how many of each line, in the order of the lines
+ */
+export async function reserveForSale(
+  scope: WorkshopScope,
+  sale: Sale,
+  promised: readonly number[],
+  now: Date,
+): Promise<void> {
   const items = await scope.rows.saleItems.list({ where: { saleId: sale.id }, order: [['position', 'ASC']] });
+  const lines = await scope.rows.saleLines.list({ where: { saleId: sale.id } });
   const touched: string[] = [];
-  for (const item of items) {
+  const keep = async (item: SaleItem, atMost: number): Promise<void> => {
     const position = await findPosition(scope, targetOf(item));
-    if (position !== null && (await keepFree(scope, sale, item, position, now)) > 0) touched.push(position.id);
+    if (position !== null && (await keepFree(scope, sale, item, position, now, atMost)) > 0) touched.push(position.id);
+  };
+  for (const item of items) {
+    const line = lines.find(({ id }) => id === item.lineId);
+    await keep(item, item.perLine * (promised[line?.position ?? -1] ?? 0));
   }
+  for (const item of items) await keep(item, Infinity);
   announceStock(scope, touched);
 }
 
