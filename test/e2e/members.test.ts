@@ -27,7 +27,7 @@ describe('members of a workshop', () => {
     await owner.getByLabel(/^As/).selectOption('viewer');
     await owner.getByRole('button', { name: 'Send the invitation' }).click();
     await owner.getByText(new RegExp(`ida\\.${mark}@vale.example.test as viewer, until`)).waitFor();
-    await owner.getByText('Noor Vale invites you to Vale Brackets').click();
+    await owner.locator('summary', { hasText: 'Noor Vale invites you to Vale Brackets' }).click();
     const letter = await owner.locator('.letter').first().innerText();
     const link = /\/invitation\/\S+/.exec(letter)?.[0] ?? '';
 
