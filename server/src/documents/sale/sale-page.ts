@@ -10,6 +10,7 @@ const TOP = 279;
 const BOTTOM = 20;
 const ROW_MM = 25;
 const THIN_ROW_MM = 8;
+const BELOW_TABLE_MM = 6.5;
 const PICTURE_MM = 34;
 
 const TITLE = { font: 'sansBold', sizeMm: 6.2 } as const;
@@ -92,7 +93,7 @@ export class SalePage {
       else this.hardwareRow(piece);
     }
     this.rule();
-    this.y -= 4;
+    this.y -= BELOW_TABLE_MM;
   }
 
   private bracketRow(piece: Extract<DocumentPiece, { kind: 'bracket' }>): void {
@@ -160,7 +161,7 @@ export class SalePage {
       this.y -= 2.6 + 4.4 * lines.length;
     }
     this.rule();
-    this.y -= 4;
+    this.y -= BELOW_TABLE_MM;
   }
 
   finish(): Promise<Buffer> {
