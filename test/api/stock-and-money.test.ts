@@ -65,7 +65,8 @@ describe('stock and money under several people at once', () => {
 
   /** One thing that somebody does; what is refused in words is as good as done: the point is what is left behind. */
   async function run(one: Step): Promise<void> {
-    if (one.do === 'receive') await receive(owner, what(), one.count);
+    if ('which' in one) await onSale(one);
+    else if (one.do === 'receive') await receive(owner, what(), one.count);
     else if (one.do === 'place') {
       const lines = [{ listingId, finishId: 'powder-moss', quantity: one.count }];
       // Somebody else may have taken the last one between the offer and the order.
@@ -73,7 +74,7 @@ describe('stock and money under several people at once', () => {
         (link) => links.push(link),
         () => undefined,
       );
-    } else if (one.do === 'adjust') {
+    } else {
       const { body } = await owner.get('/api/stock').expect(200);
       const [position] = body.brackets;
       if (position === undefined) return;
@@ -81,7 +82,7 @@ describe('stock and money under several people at once', () => {
         .post(`/api/stock/${position.positionId}/adjustments`)
         .set('idempotency-key', randomUUID())
         .send({ change: one.count, reason: 'counted' });
-    } else await onSale(one);
+    }
   }
 
   async function onSale({ do: verb, which, count }: Extract<Step, { which: number }>): Promise<void> {
