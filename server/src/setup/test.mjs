@@ -14,7 +14,7 @@ import { releaseTestCluster, useTestCluster } from './test-cluster.mjs';
 import { startWatchdog } from './watchdog.mjs';
 
 /** A part that takes longer than this hangs. */
-const PATIENCE_MS = 12 * 60_000;
+const PATIENCE_MS = 30 * 60_000;
 
 const bin = (name) => path.join('node_modules/.bin', name);
 
