@@ -1,138 +1,148 @@
-import { randomUUID } from 'node:crypto';
-import type { TestPerson } from '../support/people';
-import { TestBrowser, addPerson, addWorkshop, asOwner } from '../support/people';
-import type { TestApp } from '../support/test-app';
-import { startTestApp } from '../support/test-app';
-
-const PASSWORD = 'a long enough secret';
+import type { Listening } from '../support/event-stream';
+import { EventStream, listenTo } from '../support/event-stream';
+import { TestCrew } from '../support/crew';
+import { addWorkshop, asOwner } from '../support/people';
+import { until } from '../support/until';
 
 describe('members of a workshop', () => {
-  let test: TestApp;
-  let workshop: string;
-  let owner: TestBrowser;
-  let imogen: TestPerson;
+  let crew: TestCrew;
+  let site: Listening | null;
 
   beforeEach(async () => {
-    test = await startTestApp();
-    workshop = await addWorkshop(test.ownerUrl, 'Larkfield Cartworks');
-    imogen = await addPerson(test.ownerUrl, 'Imogen Harrow', { [workshop]: 'owner' });
-    owner = await new TestBrowser(test.app).signIn(imogen);
+    site = null;
+    crew = await TestCrew.start();
   });
-  afterEach(() => test.close());
-
-  const invite = (email: string, role = 'viewer', key = randomUUID()) =>
-    owner.post('/api/office/invitations').set('idempotency-key', key).send({ email, role });
-
-  /** The link of the newest mail to an address, as the person finds it there. */
-  async function linkTo(email: string): Promise<string> {
-    const { body } = await owner.get('/api/office/mails').expect(200);
-    const mail = body.mails.find(({ to }: { to: string }) => to === email);
-    return /\/invitation\/(\S+)/.exec(String(mail?.text))?.[1] ?? '';
-  }
-  const accept = (browser: TestBrowser, link: string, account: object | null = null) =>
-    browser.post(`/api/invitation-links/${link}/acceptance`).send({ account });
-  async function members(): Promise<{ userId: string; name: string; role: string; revision: number }[]> {
-    return (await owner.get('/api/office/members').expect(200)).body.members;
-  }
-
-  it('are invited by mail, join with a new account, and the link works once', async () => {
-    await invite('Ada@Quill.example.test').expect(201);
-    const link = await linkTo('ada@quill.example.test');
-    const ada = await new TestBrowser(test.app).open();
-    const seen = await ada.get(`/api/invitation-links/${link}`).expect(200);
-    expect(seen.body).toMatchObject({ workshopName: 'Larkfield Cartworks', role: 'viewer', hasAccount: false });
-    await accept(ada, link).expect(400);
-    const joined = await accept(ada, link, { name: 'Ada Quill', password: PASSWORD }).expect(200);
-    expect(joined.body.current).toMatchObject({ workshopId: workshop, role: 'viewer' });
-    await ada.get('/api/parts').expect(200);
-    await accept(await new TestBrowser(test.app).open(), link, { name: 'Eve', password: PASSWORD }).expect(404);
-    expect((await owner.get('/api/office/invitations').expect(200)).body.invitations).toEqual([]);
-    expect((await members()).map(({ name }) => name)).toEqual(['Ada Quill', 'Imogen Harrow']);
+  afterEach(async () => {
+    await site?.stop();
+    await crew.test.close();
   });
 
-  it('join as the address that was invited and as nobody else, once however often they press', async () => {
-    const tomasz = await addPerson(test.ownerUrl, 'Tomasz Wren', {});
-    await invite(tomasz.email, 'fabricator').expect(201);
-    const link = await linkTo(tomasz.email);
-    const stranger = await new TestBrowser(test.app).open();
-    const unsigned = await accept(stranger, link, { name: 'Eve', password: PASSWORD });
-    expect(unsigned.body.type).toBe('/problems/not-signed-in');
-    const other = await new TestBrowser(test.app).signIn(await addPerson(test.ownerUrl, 'Petra Lowe', {}));
-    expect((await accept(other, link)).body.type).toBe('/problems/wrong-state');
-    const browser = await new TestBrowser(test.app).signIn(tomasz);
-    const answers = await Promise.all([accept(browser, link), accept(browser, link)]);
-    expect(answers.map(({ status }) => status).sort()).toEqual([200, 404]);
-    expect((await members()).filter(({ name }) => name === 'Tomasz Wren')).toHaveLength(1);
-    const again = await invite(tomasz.email);
-    expect(again.body.type).toBe('/problems/already-exists');
+  const trail = async (): Promise<string[]> => {
+    const { body } = await crew.owner.get('/api/office/audit').expect(200);
+    return body.entries.map(({ by, what }: { by: string; what: string }) => `${by}: ${what}`);
+  };
+
+  it('get another role, which counts from their next request on, and are told', async () => {
+    const { person, browser } = await crew.add('Tomasz Wren', 'viewer');
+    await browser.get('/api/office/mails').expect(403);
+    await crew.change(browser, crew.imogen.id, 1).expect(403);
+    await crew.change(crew.owner, person.id, 1, 'fabricator').expect(204);
+    await browser.get('/api/office/mails').expect(200);
+    await crew.change(crew.owner, person.id, 2, 'customer').expect(400);
+    // Another owner had an older list before their eyes.
+    await crew.change(crew.owner, person.id, 1, 'owner').expect(412);
+    // What they are already is no change, and no mail.
+    await crew.change(crew.owner, person.id, 2, 'fabricator').expect(204);
+    expect(await crew.mails()).toMatchObject([
+      {
+        to: person.email,
+        subject: 'Larkfield Cartworks: your membership',
+        text: expect.stringContaining('Imogen Harrow has made you fabricator of Larkfield Cartworks.'),
+      },
+    ]);
+    expect(await trail()).toEqual(['Imogen Harrow: Made Tomasz Wren fabricator']);
   });
 
-  it('can’t join with a link that was withdrawn, replaced or is too old', async () => {
-    const first = await invite('ada@quill.example.test').expect(201);
-    const withdrawn = await linkTo('ada@quill.example.test');
-    await owner.delete(`/api/office/invitations/${first.body.id}`).expect(204);
-    const guest = await new TestBrowser(test.app).open();
-    await guest.get(`/api/invitation-links/${withdrawn}`).expect(404);
-    await invite('ada@quill.example.test').expect(201);
-    const replaced = await linkTo('ada@quill.example.test');
-    await invite('ada@quill.example.test', 'fabricator').expect(201);
-    await guest.get(`/api/invitation-links/${replaced}`).expect(404);
-    const current = await linkTo('ada@quill.example.test');
-    await guest.get(`/api/invitation-links/${current}`).expect(200);
-    await asOwner(test.ownerUrl, (client) =>
-      client.query(
-        "UPDATE invitations SET sent_at = sent_at - interval '8 days', expires_at = expires_at - interval '8 days'",
-      ),
-    );
-    await guest.get(`/api/invitation-links/${current}`).expect(404);
+  it('keep an owner, whoever asks for it', async () => {
+    const last = { type: '/problems/wrong-state', next: 'Make somebody else an owner first.' };
+    expect((await crew.change(crew.owner, crew.imogen.id, 1)).body).toMatchObject(last);
+    expect((await crew.remove(crew.owner, crew.imogen.id)).body).toMatchObject(last);
+    await crew.add('Noor Vale', 'owner');
+    await crew.remove(crew.owner, crew.imogen.id).expect(204);
+    await crew.owner.get('/api/parts').expect(403);
   });
 
-  it('keep at least one owner, also when two demote each other at once', async () => {
-    const alone = (await members())[0];
-    const change = (browser: TestBrowser, userId: string | undefined, revision: number | undefined) =>
-      browser.put(`/api/office/members/${userId}/role`).set('if-match', `"${revision}"`).send({ role: 'viewer' });
-    expect((await change(owner, alone?.userId, alone?.revision)).body.type).toBe('/problems/wrong-state');
-    const second = await addPerson(test.ownerUrl, 'Second Owner', { [workshop]: 'owner' });
-    const other = await new TestBrowser(test.app).signIn(second);
-    const answers = await Promise.all([change(owner, second.id, 1), change(other, imogen.id, 1)]);
-    expect(answers.filter(({ status }) => status === 204)).toHaveLength(1);
-    const left = await new TestBrowser(test.app).signIn(answers[0]?.status === 204 ? imogen : second);
-    const { body } = await left.get('/api/office/members').expect(200);
-    expect(body.members.filter(({ role }: { role: string }) => role === 'owner')).toHaveLength(1);
+  it.each(['demote', 'remove'] as const)('keep an owner when two %s each other at once', async (how) => {
+    for (let round = 0; round < 4; round += 1) {
+      const [one, two] = [await crew.add(`One ${round}`, 'owner'), await crew.add(`Two ${round}`, 'owner')];
+      const act = (by: typeof one, to: typeof two) =>
+        how === 'demote' ? crew.change(by.browser, to.person.id, 1) : crew.remove(by.browser, to.person.id);
+      const before = (await crew.members()).find(({ userId }) => userId === crew.imogen.id);
+      // The third owner is out of the way, so that only the two are left.
+      await crew.change(one.browser, crew.imogen.id, before?.revision ?? 0).expect(204);
+      const answers = await Promise.all([act(one, two), act(two, one)]);
+      expect(answers.filter(({ status }) => status === 204)).toHaveLength(1);
+      const winner = answers[0]?.status === 204 ? one : two;
+      const owners = (await crew.members(winner.browser)).filter(({ role }) => role === 'owner');
+      expect(owners.map(({ userId }) => userId)).toEqual([winner.person.id]);
+      const imogen = (await crew.members(winner.browser)).find(({ userId }) => userId === crew.imogen.id);
+      await crew.change(winner.browser, crew.imogen.id, imogen?.revision ?? 0, 'owner').expect(204);
+      await crew.remove(crew.owner, winner.person.id).expect(204);
+    }
+  });
+
+  it('hold the last owner by a lock: a transaction waits for another that is under way', async () => {
+    const { person } = await crew.add('Noor Vale', 'owner');
+    let isDone = false;
+    const waiting = await asOwner(crew.test.ownerUrl, async (client) => {
+      await client.query('BEGIN');
+      await client.query("SELECT pg_advisory_xact_lock(hashtextextended('members:' || $1, 0))", [crew.workshop]);
+      await client.query("UPDATE memberships SET role = 'viewer' WHERE user_id = $1", [person.id]);
+      const demotion = crew.change(crew.owner, crew.imogen.id, 1).then((answer) => {
+        isDone = true;
+        return answer;
+      });
+      await new Promise((resolve) => setTimeout(resolve, 300));
+      expect(isDone).toBe(false);
+      await client.query('COMMIT');
+      return demotion;
+    });
+    expect(waiting.body.type).toBe('/problems/wrong-state');
   });
 
   it('lose the workshop with their next request when they are removed, and are told', async () => {
-    const tomasz = await addPerson(test.ownerUrl, 'Tomasz Wren', { [workshop]: 'fabricator' });
-    const browser = await new TestBrowser(test.app).signIn(tomasz);
+    const { person, browser } = await crew.add('Tomasz Wren', 'fabricator');
     await browser.get('/api/parts').expect(200);
-    await owner.delete(`/api/office/members/${tomasz.id}`).set('if-match', '"9"').expect(412);
-    await owner.delete(`/api/office/members/${tomasz.id}`).set('if-match', '"1"').expect(204);
-    await browser.get('/api/parts').expect(403);
-    const { body } = await owner.get('/api/office/mails').expect(200);
-    expect(body.mails[0]).toMatchObject({ to: tomasz.email, subject: 'Larkfield Cartworks: your membership' });
-    const audit = await owner.get('/api/office/audit').expect(200);
-    expect(audit.body.entries[0]).toMatchObject({ by: 'Imogen Harrow', what: 'Removed Tomasz Wren' });
+    await crew.remove(crew.owner, person.id, 9).expect(412);
+    await crew.remove(crew.owner, person.id).expect(204);
+    const refused = await browser.get('/api/parts').expect(403);
+    expect(refused.body.detail).toBe('You belong to no workshop here, or not any more.');
+    const [mail] = await crew.mails();
+    expect(mail).toMatchObject({ to: person.email, text: expect.stringContaining('taken you off the members') });
+    expect(await trail()).toEqual(['Imogen Harrow: Removed Tomasz Wren']);
+    await crew.remove(crew.owner, person.id).expect(404);
   });
 
-  it('begin with whoever signs up with a workshop, behind walls of its own', async () => {
-    const noor = await new TestBrowser(test.app).open();
-    const account = { name: 'Noor Vale', email: 'noor@vale.example.test', password: PASSWORD };
-    const weak = await noor
-      .post('/api/sign-up')
-      .send({ ...account, password: 'short', workshopName: 'Vale', numberPrefix: 'v' });
-    expect(weak.body.errors.map(({ pointer }: { pointer: string }) => pointer).sort()).toEqual([
-      '/numberPrefix',
-      '/password',
-    ]);
-    const sent = { ...account, workshopName: 'Vale Brackets', numberPrefix: 'VB' };
-    const { body } = await noor.post('/api/sign-up').send(sent).expect(201);
-    expect(body.current).toMatchObject({ workshopName: 'Vale Brackets', role: 'owner' });
-    noor.csrfToken = body.csrfToken;
-    expect((await noor.get('/api/parts').expect(200)).body.parts).toEqual([]);
-    const taken = await (await new TestBrowser(test.app).open()).post('/api/sign-up').send(sent);
-    expect(taken.body.type).toBe('/problems/already-exists');
-    const second = await noor.post('/api/workshops').send({ workshopName: 'Vale Two', numberPrefix: 'VT' }).expect(201);
-    expect(second.body.memberships).toHaveLength(2);
-    expect(second.body.current.workshopName).toBe('Vale Two');
+  it('do nothing in another workshop that they meant for the one they lost', async () => {
+    const { person, browser } = await crew.add('Tomasz Wren', 'fabricator');
+    const other = await addWorkshop(crew.test.ownerUrl, 'Orchard Street Welding');
+    await browser.get('/api/session').expect(200);
+    await asOwner(crew.test.ownerUrl, (client) =>
+      client.query(
+        "INSERT INTO memberships (id, workshop_id, user_id, role) VALUES (gen_random_uuid(), $1, $2, 'owner')",
+        [other, person.id],
+      ),
+    );
+    await crew.remove(crew.owner, person.id).expect(204);
+    const starter = { shape: 'flat-plate', widthMm: 80, heightMm: 60 };
+    const create = () =>
+      browser.post('/api/parts').set('idempotency-key', 'meant-for-larkfield').send({ name: 'Tray', starter });
+    await create().expect(403);
+    const { body } = await browser.get('/api/session').expect(200);
+    expect(body.current).toMatchObject({ workshopId: other, role: 'owner' });
+    await create().expect(201);
+  });
+
+  it('hear nothing more from the moment they are removed', async () => {
+    site = await listenTo(crew.test.app);
+    const { person, browser } = await crew.add('Tomasz Wren', 'fabricator');
+    const [gone, stays] = [
+      await EventStream.open(site.url, { cookie: browser.cookie }),
+      await EventStream.open(site.url, { cookie: crew.owner.cookie }),
+    ];
+    await crew.remove(crew.owner, person.id).expect(204);
+    // At once, long before the next heartbeat.
+    await until(async () => (gone.hasEnded ? true : undefined));
+    expect(gone.events).toEqual([]);
+    await stays.waitFor(2);
+    expect(new Set(stays.events.map(({ kind }) => kind))).toEqual(new Set(['mail-changed', 'members-changed']));
+    stays.close();
+  });
+
+  it('are the crew: customers come and go through the shop', async () => {
+    const { person } = await crew.add('Ravi Sandle', 'customer');
+    expect((await crew.members()).map(({ name }) => name)).toEqual(['Imogen Harrow']);
+    await crew.change(crew.owner, person.id, 1, 'owner').expect(404);
+    await crew.remove(crew.owner, person.id).expect(404);
   });
 });

@@ -119,7 +119,7 @@ describe('walls between workshops in the database', () => {
   it('are passed by few, each for a stated reason', () => {
     const callers = sources().filter(([, text]) => /\.asSystem\(/.test(text));
     expect(callers.map(([file]) => file).sort()).toEqual([
-      'services/members/invitations.ts',
+      'services/members/accept-invitation.ts',
       'services/operator/troubles.ts',
       'services/read-installation.ts',
       'services/reviews/review-links.ts',

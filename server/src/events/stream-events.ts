@@ -24,7 +24,7 @@ export interface StreamOptions {
   readonly hub: LiveHub;
   /** Workshop and role of the listener; null for somebody in no workshop, who gets heartbeats only. */
   readonly listener: { readonly workshopId: string; readonly role: Role } | null;
-  /** Asked at every heartbeat: whether the session still stands with the same role in the same workshop. */
+  /** Asked at every heartbeat and when members change: whether the session still stands with the same role in the same workshop. */
   readonly stillAdmitted: () => Promise<boolean>;
   readonly onError: (error: unknown) => void;
   readonly heartbeatMs?: number;
@@ -79,6 +79,8 @@ export async function streamEvents(request: Request, response: Response, options
         isWoken = false;
         const events = await eventsAfter(database, listener.workshopId, sent);
         for (const event of events) {
+          // Who was removed or has another role now hears nothing more, not even this.
+          if (event.kind === 'members-changed' && !(await options.stillAdmitted())) return end();
           sent = event.seq;
           if (isOpen && mayHear(listener.role, event))
             response.write(`id: ${sent}\ndata: ${JSON.stringify(event)}\n\n`);

@@ -63,15 +63,22 @@ function visitorOf(response: Response): Visitor {
 
 function letIn(contract: RouteContract, publicOrigin: string): RequestHandler {
   return (request, response, next) => {
-    const admission = admit(contract.access, visitorOf(response));
+    const visitor = visitorOf(response);
+    const admission = admit(contract.access, visitor);
     if (admission.kind === 'not-signed-in') {
       throw new Problem('not-signed-in', { detail: 'Nobody is signed in, or the session has ended.' });
     }
     if (admission.kind === 'not-allowed') {
       throw new Problem('not-allowed', {
-        detail: 'Your role in this workshop doesn’t include this.',
+        detail:
+          visitor.current === null
+            ? 'You belong to no workshop here, or not any more.'
+            : 'Your role in this workshop doesn’t include this.',
         kept: 'Nothing was changed.',
-        next: 'An owner of the workshop can change roles.',
+        next:
+          visitor.current === null
+            ? 'Load the page again; an owner of the workshop can invite you.'
+            : 'An owner of the workshop can change roles.',
       });
     }
     // An outside service signs its message instead; it has no session to steal.

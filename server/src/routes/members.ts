@@ -9,17 +9,12 @@ import { signInAs } from '../http/sign-in';
 import { presentSession } from '../presenters/session';
 import { loadVisitor } from '../services/load-visitor';
 import { changeMemberRole, removeMember } from '../services/members/change-member';
-import {
-  acceptInvitation,
-  inviteMember,
-  listInvitations,
-  readInvitation,
-  withdrawInvitation,
-} from '../services/members/invitations';
-import { addAccount, addOwnedWorkshop } from '../services/members/workshops';
+import { acceptInvitation, readInvitation } from '../services/members/accept-invitation';
+import { inviteMember, listInvitations, withdrawInvitation } from '../services/members/invitations';
+import { addOwnedWorkshop, signUp } from '../services/members/workshops';
 
 export function memberRoutes(dependencies: AppDependencies): BoundRoute[] {
-  const { database, limits, now } = dependencies;
+  const { database, limits } = dependencies;
   /** The session as it is after somebody began to work in a workshop. */
   const enter = async (request: Request, userId: string, workshopId: string): Promise<Session> => {
     request.session.workshopId = workshopId;
@@ -28,23 +23,23 @@ export function memberRoutes(dependencies: AppDependencies): BoundRoute[] {
 
   return [
     bind(contracts.signUp, async ({ body, request }) => {
-      await limits.countVisitorPost(request);
-      const userId = await addAccount(database, body);
-      const workshopId = await addOwnedWorkshop(database, { userId, userName: body.name }, body);
+      await limits.countSignUp(request);
+      const { userId, workshopId } = await signUp(database, body);
       await signInAs(request, userId);
       return enter(request, userId, workshopId);
     }),
     bind(contracts.createWorkshop, async ({ actor, body, request }) => {
-      await limits.countVisitorPost(request);
+      await limits.countSignUp(request);
       const { id: userId, name: userName } = actor.user;
       return enter(request, userId, await addOwnedWorkshop(database, { userId, userName }, body));
     }),
     bind(contracts.listInvitations, async ({ actor }) => ({
-      invitations: await listInvitations(database, actor, now()),
+      invitations: await listInvitations(database, actor),
     })),
-    bind(contracts.inviteMember, ({ actor, body, idempotencyKey }) =>
-      inviteMember(dependencies, actor, body, idempotencyKey),
-    ),
+    bind(contracts.inviteMember, async ({ actor, body, idempotencyKey }) => {
+      await limits.countInvitation(actor.workshopId);
+      return inviteMember(dependencies, actor, body, idempotencyKey);
+    }),
     bind(contracts.withdrawInvitation, ({ actor, params }) =>
       withdrawInvitation(dependencies, actor, params.invitationId),
     ),

@@ -16,10 +16,20 @@ import { loadVisitor } from '../services/load-visitor';
 export function sessionRoutes({ database, authenticator, limits }: AppDependencies): BoundRoute[] {
   const present = (visitor: Visitor, request: Request): Session => presentSession(visitor, csrfTokenOf(request));
   const reload = async (userId: string, request: Request): Promise<Session> =>
-    present(await loadVisitor(database, userId, request.session.workshopId), request);
+    present(await settle(await loadVisitor(database, userId, request.session.workshopId), request), request);
+  /** The session works in the workshop that its page shows, until somebody switches; in another when that one is lost. */
+  const settle = async (visitor: Visitor, request: Request): Promise<Visitor> => {
+    const { user, memberships, current } = visitor;
+    const settled =
+      user !== null && current === null && memberships.length > 0
+        ? await loadVisitor(database, user.id, undefined)
+        : visitor;
+    if (settled.current !== null) request.session.workshopId = settled.current.workshopId;
+    return settled;
+  };
 
   return [
-    bind(contracts.readSession, async ({ actor, request }) => present(actor, request)),
+    bind(contracts.readSession, async ({ actor, request }) => present(await settle(actor, request), request)),
     bind(contracts.signIn, async ({ body, request }) => {
       const address = request.ip ?? 'unknown';
       const email = body.email.toLowerCase();

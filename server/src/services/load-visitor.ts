@@ -24,7 +24,8 @@ const STATEMENT = `
 
 /**
  * A person with their workshops as they are now.
- * @param workshopId the workshop the session says it works in; the first one counts when it is none of theirs
+ * @param workshopId the workshop the session works in. They are in none when it isn't theirs any more: what they were
+ *   about to do there must not happen in another one. The first one counts when the session names none.
  */
 export async function loadVisitor(
   database: Database,
@@ -46,6 +47,7 @@ export async function loadVisitor(
   return {
     user: { id: first.id, name: first.name, email: first.email, isOperator: first.is_operator },
     memberships,
-    current: memberships.find((one) => one.workshopId === workshopId) ?? memberships[0] ?? null,
+    current:
+      (workshopId === undefined ? memberships[0] : memberships.find((one) => one.workshopId === workshopId)) ?? null,
   };
 }

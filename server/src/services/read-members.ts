@@ -3,13 +3,14 @@ import { Op } from 'sequelize';
 import type * as z from 'zod/mini';
 import type { Database } from '../database/database';
 import type { Member } from '../http/visitor';
+import { CREW } from './members/crew';
 
 const LONGEST_TRAIL = 500;
 
-/** Members of the workshop by name, with what they may do. */
+/** The crew of the workshop by name, with what they may do. Customers are no members in this sense: the shop knows them. */
 export function listMembers(database: Database, member: Member): Promise<z.output<typeof memberSchema>[]> {
   return database.inWorkshop(member.workshopId, async (scope) => {
-    const memberships = await scope.rows.memberships.list();
+    const memberships = await scope.rows.memberships.list({ where: { role: [...CREW] } });
     const users = await scope.models.users.findAll({
       attributes: ['id', 'name', 'email'],
       where: { id: { [Op.in]: memberships.map(({ userId }) => userId) } },

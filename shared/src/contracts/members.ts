@@ -26,6 +26,10 @@ export const invitationSchema = z.object({
 });
 export type Invitation = z.output<typeof invitationSchema>;
 
+/** Why an invitation can't be accepted any more. */
+export const invitationEnd = z.enum(['used', 'expired', 'replaced', 'withdrawn']);
+export type InvitationEnd = z.output<typeof invitationEnd>;
+
 const link = z.strictObject({ link: z.string().check(z.regex(/^[A-Za-z0-9_-]{20,80}$/)) });
 const owners = ['owner'] as const;
 
@@ -63,7 +67,7 @@ export const listInvitations = defineRoute({
   path: '/api/office/invitations',
   tag: 'office',
   access: owners,
-  summary: 'Invitations that wait to be accepted',
+  summary: 'Invitations that nobody accepted yet, those too old included',
   answer: 'json',
   response: z.object({ invitations: z.array(invitationSchema) }),
   successStatus: 200,
@@ -81,7 +85,7 @@ export const inviteMember = defineRoute({
   response: invitationSchema,
   successStatus: 201,
   idempotent: true,
-  problems: ['already-exists'],
+  problems: ['already-exists', 'too-many-requests'],
 });
 export const withdrawInvitation = defineRoute({
   id: 'withdrawInvitation',
@@ -128,7 +132,7 @@ export const readInvitation = defineRoute({
   path: '/api/invitation-links/:link',
   tag: 'session',
   access: 'public',
-  summary: 'What an invitation is for; 404 once it is used, withdrawn or too old',
+  summary: 'What an invitation is for; 410 with the reason once it is used, replaced, withdrawn or too old',
   params: link,
   answer: 'json',
   response: z.object({
@@ -140,6 +144,7 @@ export const readInvitation = defineRoute({
     hasAccount: z.boolean(),
   }),
   successStatus: 200,
+  problems: ['invitation-ended'],
 });
 export const acceptInvitation = defineRoute({
   id: 'acceptInvitation',
@@ -154,5 +159,5 @@ export const acceptInvitation = defineRoute({
   answer: 'json',
   response: sessionSchema,
   successStatus: 200,
-  problems: ['wrong-state', 'not-signed-in', 'too-many-requests'],
+  problems: ['wrong-state', 'not-signed-in', 'invitation-ended', 'too-many-requests'],
 });

@@ -14,6 +14,7 @@ export const PROBLEMS = {
   'wrong-state': { status: 409, title: 'It’s too late or too early for that' },
   'not-enough-stock': { status: 409, title: 'There are not that many' },
   'offer-changed': { status: 409, title: 'The shop’s prices or stock have changed' },
+  'invitation-ended': { status: 410, title: 'This invitation can’t be used any more' },
   'stale-row': { status: 412, title: 'Somebody else changed this' },
   'if-match-missing': { status: 428, title: 'The revision you saw is missing' },
   'idempotency-key-missing': { status: 428, title: 'The key against double orders is missing' },

@@ -32,6 +32,7 @@ export const liveEventSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('sale-changed'), seq: z.int(), saleId: z.uuid() }),
   z.object({ kind: z.literal('question-changed'), seq: z.int(), questionId: z.uuid() }),
   z.object({ kind: z.literal('mail-changed'), seq: z.int(), mailId: z.uuid() }),
+  z.object({ kind: z.literal('members-changed'), seq: z.int() }),
 ]);
 export type LiveEvent = z.output<typeof liveEventSchema>;
 

@@ -1,6 +1,7 @@
 import type { CrewRole } from '@foldwright/shared/contracts/members';
 import type { AppDependencies } from '../../app-dependencies';
 import type { WorkshopScope } from '../../database/workshop-scope';
+import { recordEvent } from '../../events/record-event';
 import { Problem, notFound } from '../../http/problem';
 import type { Member } from '../../http/visitor';
 import type { Membership } from '../../models/membership';
@@ -8,7 +9,7 @@ import type { User } from '../../models/user';
 import { recordAudit } from '../record-audit';
 import { refuseStale } from '../refuse-stale';
 import { writeMail } from '../write-mail';
-import { lockMembers } from './invitations';
+import { CREW, lockMembers } from './crew';
 
 type Tools = Pick<AppDependencies, 'database' | 'queue' | 'now'>;
 
@@ -19,7 +20,7 @@ interface Found {
 
 async function findMember(scope: WorkshopScope, memberId: string, seenRevision: number): Promise<Found> {
   await lockMembers(scope);
-  const membership = await scope.rows.memberships.findOne({ userId: memberId }, { lock: true });
+  const membership = await scope.rows.memberships.findOne({ userId: memberId, role: [...CREW] }, { lock: true });
   if (membership === null) throw notFound();
   refuseStale(membership, seenRevision);
   const user = await scope.models.users.findByPk(memberId, { transaction: scope.transaction, rejectOnEmpty: true });
@@ -36,22 +37,24 @@ async function refuseLastOwner(scope: WorkshopScope, membership: Membership): Pr
   });
 }
 
+/** Writes to the person concerned and wakes open pages and streams: who was removed hears nothing any more. */
 async function tell(
   scope: WorkshopScope,
   { queue, now }: Tools,
   actor: Member,
-  user: User,
+  { membership, user }: Found,
   what: string,
 ): Promise<void> {
-  const at = now();
+  // Before the mail, so that whoever was removed isn't even told of that.
+  recordEvent(scope, { kind: 'members-changed' });
   const body = [`Hello ${user.name},`, `${actor.userName} has ${what}.`, 'Ask them if you expected nothing like it.'];
-  const key = `member:${user.id}:${at.getTime()}`;
+  const key = `member:${membership.id}:${membership.revision}`;
   const subject = `${actor.workshopName}: your membership`;
   await writeMail(
     scope,
     queue,
     { key, orderId: null, recipient: user.email, subject, body: `${body.join('\n\n')}\n` },
-    at,
+    now(),
   );
 }
 
@@ -64,22 +67,26 @@ export function changeMemberRole(
   seenRevision: number,
 ): Promise<void> {
   return tools.database.inWorkshop(actor.workshopId, async (scope) => {
-    const { membership, user } = await findMember(scope, memberId, seenRevision);
+    const found = await findMember(scope, memberId, seenRevision);
+    const { membership, user } = found;
     if (membership.role === role) return;
     await refuseLastOwner(scope, membership);
     await scope.rows.memberships.change(membership, { role, revision: membership.revision + 1 });
     await recordAudit(scope, actor, `Made ${user.name} ${role}`, user.email);
-    await tell(scope, tools, actor, user, `made you ${role} of ${actor.workshopName}`);
+    await tell(scope, tools, actor, found, `made you ${role} of ${actor.workshopName}`);
   });
 }
 
 /** Remove a member; what they did stays. @throws Problem `not-found`, `stale-row`, `wrong-state` */
 export function removeMember(tools: Tools, actor: Member, memberId: string, seenRevision: number): Promise<void> {
   return tools.database.inWorkshop(actor.workshopId, async (scope) => {
-    const { membership, user } = await findMember(scope, memberId, seenRevision);
+    const found = await findMember(scope, memberId, seenRevision);
+    const { membership, user } = found;
     await refuseLastOwner(scope, membership);
+    // The number of its last change belongs to its mail: each change of a membership has one of its own.
+    await scope.rows.memberships.change(membership, { revision: membership.revision + 1 });
     await scope.rows.memberships.remove(membership);
     await recordAudit(scope, actor, `Removed ${user.name}`, user.email);
-    await tell(scope, tools, actor, user, `taken you off the members of ${actor.workshopName}`);
+    await tell(scope, tools, actor, found, `taken you off the members of ${actor.workshopName}`);
   });
 }

@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { UniqueConstraintError } from 'sequelize';
 import type { Database } from '../../database/database';
+import type { WorkshopScope } from '../../database/workshop-scope';
 import { Problem } from '../../http/problem';
 import { hashPassword } from '../password-hash';
 import { recordAudit } from '../record-audit';
@@ -16,36 +17,70 @@ export interface NewAccount {
   readonly password: string;
 }
 
-/**
- * Make a workshop with its owner. The transaction works in the new workshop from its first statement on, so that the walls
- * of the database let it write there and nowhere else.
- * @returns id of the workshop
- */
-export async function addOwnedWorkshop(
-  database: Database,
-  owner: { readonly userId: string; readonly userName: string },
-  { workshopName, numberPrefix }: NewWorkshop,
-): Promise<string> {
-  const workshopId = randomUUID();
-  await database.inWorkshop(workshopId, async (scope) => {
-    await scope.addWorkshop({ name: workshopName, numberPrefix });
-    await scope.rows.memberships.add({ userId: owner.userId, role: 'owner' });
-    await recordAudit(scope, owner, 'Started the workshop', workshopName);
-  });
-  return workshopId;
+interface Owner {
+  readonly userId: string;
+  readonly userName: string;
 }
 
 /**
- * Make an account. That an address has one already is told: whoever types it here could find out by asking for an
- * invitation just as well, and its owner has to know what to do.
+ * Work in a workshop that is made by it. The transaction has named the new workshop from its first statement on, so that
+ * the walls of the database let it write there and nowhere else.
+ */
+async function inNewWorkshop<T>(
+  database: Database,
+  makeOwner: (scope: WorkshopScope) => Promise<Owner>,
+  { workshopName, numberPrefix }: NewWorkshop,
+  answer: (workshopId: string, owner: Owner) => T,
+): Promise<T> {
+  const workshopId = randomUUID();
+  return database.inWorkshop(workshopId, async (scope) => {
+    const owner = await makeOwner(scope);
+    await scope.addWorkshop({ name: workshopName, numberPrefix });
+    await scope.rows.memberships.add({ userId: owner.userId, role: 'owner' });
+    await recordAudit(scope, owner, 'Started the workshop', workshopName);
+    return answer(workshopId, owner);
+  });
+}
+
+/** Make a workshop for somebody who has an account. @returns id of the workshop */
+export function addOwnedWorkshop(database: Database, owner: Owner, workshop: NewWorkshop): Promise<string> {
+  return inNewWorkshop(
+    database,
+    async () => owner,
+    workshop,
+    (workshopId) => workshopId,
+  );
+}
+
+/**
+ * Make an account together with the workshop that it owns: both or neither, so that a try that broke can be made again.
+ * @throws Problem `already-exists`
+ */
+export async function signUp(
+  database: Database,
+  { name, email, password, ...workshop }: NewAccount & NewWorkshop,
+): Promise<{ readonly userId: string; readonly workshopId: string }> {
+  const passwordHash = await hashPassword(password);
+  const makeOwner = async (scope: WorkshopScope): Promise<Owner> => ({
+    userId: await addAccount(scope, { name, email, passwordHash }),
+    userName: name,
+  });
+  return inNewWorkshop(database, makeOwner, workshop, (workshopId, { userId }) => ({ workshopId, userId }));
+}
+
+/**
+ * Make an account. That an address has one already is told, although a stranger may be asking: whoever owns it has to know
+ * what to do, since this page writes no mail. Asking for many addresses in a row is held up by the limit on signing up.
  * @returns id of the account
  * @throws Problem `already-exists`
  */
-export async function addAccount(database: Database, { name, email, password }: NewAccount): Promise<string> {
-  const passwordHash = await hashPassword(password);
+export async function addAccount(
+  scope: WorkshopScope,
+  { name, email, passwordHash }: { readonly name: string; readonly email: string; readonly passwordHash: string },
+): Promise<string> {
   try {
-    const user = await database.models.users.create({ name, email: email.trim().toLowerCase(), passwordHash });
-    return user.id;
+    const values = { name, email: email.toLowerCase(), passwordHash };
+    return (await scope.models.users.create(values, { transaction: scope.transaction })).id;
   } catch (error) {
     if (!(error instanceof UniqueConstraintError)) throw error;
     throw new Problem('already-exists', {

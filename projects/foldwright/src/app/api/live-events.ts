@@ -18,6 +18,7 @@ const KINDS = [
   'sale-changed',
   'question-changed',
   'mail-changed',
+  'members-changed',
 ] as const satisfies readonly LiveEvent['kind'][];
 const FIRST_WAIT_MS = 1000;
 const LONGEST_WAIT_MS = 15000;
