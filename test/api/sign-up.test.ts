@@ -70,8 +70,11 @@ describe('signing up', () => {
   it('gives another workshop to somebody who is signed in, and works there from then on', async () => {
     const second = { workshopName: 'Harrow Two', numberPrefix: 'HT' };
     await (await crew.stranger()).post('/api/workshops').send(second).expect(401);
-    const { body } = await crew.owner.post('/api/workshops').send(second).expect(201);
-    expect(body.memberships).toHaveLength(2);
+    const start = (sent: object) => crew.owner.post('/api/workshops').set('idempotency-key', 'pressed-once').send(sent);
+    const [{ status, body }] = await Promise.all([start(second), start(second)]);
+    expect(status).toBe(201);
+    expect((await crew.owner.get('/api/session').expect(200)).body.memberships).toHaveLength(2);
+    await start({ ...second, workshopName: 'Harrow Three' }).expect(409);
     expect(body.current).toMatchObject({ workshopName: 'Harrow Two', role: 'owner' });
     expect(await crew.members()).toMatchObject([{ name: 'Imogen Harrow', role: 'owner' }]);
   });

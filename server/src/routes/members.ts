@@ -28,10 +28,10 @@ export function memberRoutes(dependencies: AppDependencies): BoundRoute[] {
       await signInAs(request, userId);
       return enter(request, userId, workshopId);
     }),
-    bind(contracts.createWorkshop, async ({ actor, body, request }) => {
+    bind(contracts.createWorkshop, async ({ actor, body, idempotencyKey, request }) => {
       await limits.countSignUp(request);
       const { id: userId, name: userName } = actor.user;
-      return enter(request, userId, await addOwnedWorkshop(database, { userId, userName }, body));
+      return enter(request, userId, await addOwnedWorkshop(database, { userId, userName }, body, idempotencyKey));
     }),
     bind(contracts.listInvitations, async ({ actor }) => ({
       invitations: await listInvitations(database, actor),

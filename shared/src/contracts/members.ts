@@ -27,8 +27,10 @@ export const invitationSchema = z.object({
 export type Invitation = z.output<typeof invitationSchema>;
 
 /** Why an invitation can't be accepted any more. */
-export const invitationEnd = z.enum(['used', 'expired', 'replaced', 'withdrawn']);
+const invitationEnd = z.enum(['used', 'expired', 'replaced', 'withdrawn']);
 export type InvitationEnd = z.output<typeof invitationEnd>;
+/** What the problem `invitation-ended` says in `extra`. */
+export const endedInvitation = z.object({ reason: invitationEnd });
 
 const link = z.strictObject({ link: z.string().check(z.regex(/^[A-Za-z0-9_-]{20,80}$/)) });
 const owners = ['owner'] as const;
@@ -59,7 +61,8 @@ export const createWorkshop = defineRoute({
   answer: 'json',
   response: sessionSchema,
   successStatus: 201,
-  problems: ['too-many-requests'],
+  idempotent: true,
+  problems: ['already-exists', 'too-many-requests'],
 });
 export const listInvitations = defineRoute({
   id: 'listInvitations',

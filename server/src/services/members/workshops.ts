@@ -1,4 +1,4 @@
-import { randomUUID } from 'node:crypto';
+import { createHash, randomUUID } from 'node:crypto';
 import { UniqueConstraintError } from 'sequelize';
 import type { Database } from '../../database/database';
 import type { WorkshopScope } from '../../database/workshop-scope';
@@ -23,33 +23,58 @@ interface Owner {
 }
 
 /**
- * Work in a workshop that is made by it. The transaction has named the new workshop from its first statement on, so that
- * the walls of the database let it write there and nowhere else.
+ * Make a workshop and its owner's membership. The transaction works in the new workshop from its first statement on, so
+ * that the walls of the database let it write there and nowhere else.
  */
-async function inNewWorkshop<T>(
+async function makeWorkshop(
   database: Database,
+  workshopId: string,
   makeOwner: (scope: WorkshopScope) => Promise<Owner>,
   { workshopName, numberPrefix }: NewWorkshop,
-  answer: (workshopId: string, owner: Owner) => T,
-): Promise<T> {
-  const workshopId = randomUUID();
+): Promise<Owner> {
   return database.inWorkshop(workshopId, async (scope) => {
     const owner = await makeOwner(scope);
     await scope.addWorkshop({ name: workshopName, numberPrefix });
     await scope.rows.memberships.add({ userId: owner.userId, role: 'owner' });
     await recordAudit(scope, owner, 'Started the workshop', workshopName);
-    return answer(workshopId, owner);
+    return owner;
   });
 }
 
-/** Make a workshop for somebody who has an account. @returns id of the workshop */
-export function addOwnedWorkshop(database: Database, owner: Owner, workshop: NewWorkshop): Promise<string> {
-  return inNewWorkshop(
-    database,
-    async () => owner,
-    workshop,
-    (workshopId) => workshopId,
+/** An id that follows from who makes a workshop under which key: a second press finds the first one's workshop. */
+function workshopIdFor(userId: string, key: string): string {
+  const hex = createHash('sha256').update(`${userId} ${key}`).digest('hex');
+  // Version 8 is for ids that somebody derives in their own way. Source: RFC 9562, 5.8.
+  return [hex.slice(0, 8), hex.slice(8, 12), `8${hex.slice(13, 16)}`, `8${hex.slice(17, 20)}`, hex.slice(20, 32)].join(
+    '-',
   );
+}
+
+/**
+ * Make a workshop for somebody who has an account, once under their key.
+ * @returns id of the workshop
+ * @throws Problem `already-exists` when the key was used for another workshop
+ */
+export async function addOwnedWorkshop(
+  database: Database,
+  owner: Owner,
+  workshop: NewWorkshop,
+  key: string,
+): Promise<string> {
+  const workshopId = workshopIdFor(owner.userId, key);
+  try {
+    await makeWorkshop(database, workshopId, async () => owner, workshop);
+  } catch (error) {
+    if (!(error instanceof UniqueConstraintError)) throw error;
+    const made = await database.inWorkshop(workshopId, (scope) => scope.workshop());
+    if (made.name !== workshop.workshopName) {
+      throw new Problem('already-exists', {
+        detail: `With this key you started ${made.name}.`,
+        kept: 'Nothing was made.',
+      });
+    }
+  }
+  return workshopId;
 }
 
 /**
@@ -65,7 +90,9 @@ export async function signUp(
     userId: await addAccount(scope, { name, email, passwordHash }),
     userName: name,
   });
-  return inNewWorkshop(database, makeOwner, workshop, (workshopId, { userId }) => ({ workshopId, userId }));
+  const workshopId = randomUUID();
+  const { userId } = await makeWorkshop(database, workshopId, makeOwner, workshop);
+  return { userId, workshopId };
 }
 
 /**

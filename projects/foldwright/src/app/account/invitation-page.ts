@@ -4,11 +4,12 @@ import { MatButtonModule } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInputModule } from '@angular/material/input';
 import { Router, RouterLink } from '@angular/router';
-import { LEAST_PASSWORD } from '@foldwright/shared/contracts/members';
+import { LEAST_PASSWORD, endedInvitation } from '@foldwright/shared/contracts/members';
 import { BrandMark } from '@foldwright/ui/brand-mark/brand-mark';
 import { FindingSign } from '@foldwright/ui/finding-note/finding-sign';
 import { ApiProblem } from '../api/api-problem';
 import { MembersApi } from '../api/members-api';
+import { ROLE_WORDS } from '../api/role-words';
 import { SessionApi } from '../api/session-api';
 
 /** An invitation behind its link: join with the account of the address, or make one. */
@@ -35,6 +36,10 @@ export class InvitationPage {
 
   protected readonly read = inject(MembersApi).invitation(this.link);
   protected readonly user = this.session.user;
+  /** Until the session is known nobody is asked for a name they may have. */
+  protected readonly isKnown = computed(() => this.session.session() !== null);
+  protected readonly may = ROLE_WORDS;
+  protected readonly isUsed = computed(() => this.read.problem()?.extra(endedInvitation)?.reason === 'used');
   protected readonly least = LEAST_PASSWORD;
   protected readonly here = computed(() => `/invitation/${this.link()}`);
   protected readonly isMine = computed(() => this.user()?.email === this.read.value()?.email);
@@ -58,7 +63,13 @@ export class InvitationPage {
 
   protected async join(account: { readonly name: string; readonly password: string } | null): Promise<void> {
     await this.run(async () => {
-      await this.session.join(this.link(), account);
+      try {
+        await this.session.join(this.link(), account);
+      } catch (error) {
+        // Withdrawn or replaced meanwhile: the page says so in place of the form.
+        if (error instanceof ApiProblem && error.slug === 'invitation-ended') return this.read.reload();
+        throw error;
+      }
       await this.router.navigateByUrl('/');
     });
   }

@@ -34,6 +34,8 @@ export class SignUp {
   private readonly builder = inject(NonNullableFormBuilder);
 
   protected readonly least = LEAST_PASSWORD;
+  /** Address of who was signed in when the page was opened. */
+  protected readonly signedInAs = signal<string | null>(null);
   protected readonly person = this.builder.group({
     name: ['', [Validators.required, Validators.maxLength(80)]],
     email: ['', [Validators.required, Validators.email]],
@@ -44,6 +46,9 @@ export class SignUp {
   protected readonly isBusy = signal(false);
 
   constructor() {
+    void this.run(async () => {
+      this.signedInAs.set((await this.session.ensure()).user?.email ?? null);
+    });
     const { workshopName, numberPrefix } = this.workshop.controls;
     workshopName.valueChanges.pipe(takeUntilDestroyed()).subscribe((name) => {
       // Only a proposal: what somebody typed stays.
@@ -54,12 +59,19 @@ export class SignUp {
   protected async start(): Promise<void> {
     this.person.markAllAsTouched();
     this.workshop.markAllAsTouched();
-    if (this.person.invalid || this.workshop.invalid || this.isBusy()) return;
+    if (this.person.invalid || this.workshop.invalid) return;
+    await this.run(async () => {
+      await this.session.signUp({ ...this.person.getRawValue(), ...this.workshop.getRawValue() });
+      await this.router.navigateByUrl('/parts');
+    });
+  }
+
+  private async run(work: () => Promise<void>): Promise<void> {
+    if (this.isBusy()) return;
     this.isBusy.set(true);
     this.problem.set(null);
     try {
-      await this.session.signUp({ ...this.person.getRawValue(), ...this.workshop.getRawValue() });
-      await this.router.navigateByUrl('/parts');
+      await work();
     } catch (error) {
       if (!(error instanceof ApiProblem)) throw error;
       this.problem.set(error);

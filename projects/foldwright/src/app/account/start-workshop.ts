@@ -2,6 +2,8 @@ import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/cor
 import { NonNullableFormBuilder, ReactiveFormsModule } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
 import { Router } from '@angular/router';
+import { newIdempotencyKey } from '../api/api-client';
+import { LiveEvents } from '../api/live-events';
 import { Notices } from '../api/notices';
 import { SessionApi } from '../api/session-api';
 import { workshopForm } from './workshop-fields';
@@ -44,6 +46,9 @@ export class StartWorkshop {
   private readonly session = inject(SessionApi);
   private readonly notices = inject(Notices);
   private readonly router = inject(Router);
+  private readonly live = inject(LiveEvents);
+  /** The workshop whose answer never came, with its key: tried again it is the same one. */
+  private unanswered: { readonly name: string; readonly key: string } | null = null;
 
   protected readonly form = workshopForm(inject(NonNullableFormBuilder));
   protected readonly isBusy = signal(false);
@@ -53,7 +58,12 @@ export class StartWorkshop {
     if (this.form.invalid || this.isBusy()) return;
     this.isBusy.set(true);
     try {
-      await this.session.createWorkshop(this.form.getRawValue());
+      const wish = this.form.getRawValue();
+      const name = wish.workshopName;
+      const key = this.unanswered?.name === name ? this.unanswered.key : newIdempotencyKey();
+      this.unanswered = { name, key };
+      await this.session.createWorkshop(wish, key);
+      this.live.restart();
       await this.router.navigateByUrl('/parts');
     } catch (error) {
       this.notices.showProblem(error);

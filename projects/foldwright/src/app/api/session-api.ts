@@ -63,8 +63,8 @@ export class SessionApi {
     return this.keep(await this.client.call(signUp, { body }));
   }
 
-  async createWorkshop(body: RouteBody<typeof createWorkshop>): Promise<Session> {
-    return this.keep(await this.client.call(createWorkshop, { body }));
+  async createWorkshop(body: RouteBody<typeof createWorkshop>, idempotencyKey: string): Promise<Session> {
+    return this.keep(await this.client.call(createWorkshop, { body, idempotencyKey }));
   }
 
   /** Joins a workshop by its invitation; with a new account where there is none for the address. */

@@ -7,7 +7,7 @@ import { auditTime, filter, merge } from 'rxjs';
 import { LiveEvents } from '../api/live-events';
 import { OfficeApi } from '../api/office-api';
 import { SessionApi } from '../api/session-api';
-import { MembersSection } from './members-section';
+import { MembersSection } from './members/members-section';
 
 const REREAD_AFTER_MS = 400;
 

@@ -5,14 +5,19 @@ import { MatMenuModule } from '@angular/material/menu';
 import { NavigationStart, Router, RouterLink, RouterLinkActive, RouterOutlet } from '@angular/router';
 import { BrandMark } from '@foldwright/ui/brand-mark/brand-mark';
 import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
-import { filter, map, startWith } from 'rxjs';
+import { auditTime, filter, map, merge, startWith } from 'rxjs';
+import { ApiProblem } from '../api/api-problem';
 import { LiveEvents } from '../api/live-events';
 import { Notices } from '../api/notices';
 import { SessionApi } from '../api/session-api';
+import { SignedOutWatch } from '../api/signed-out-watch';
 import { areasFor } from './areas';
 import { initialsOf } from './initials-of';
+import { membershipNews } from './membership-news';
 import { NoticeCard } from '@foldwright/ui/notice-card/notice-card';
 import { ThemeChoice } from './theme-choice';
+
+const RECHECK_AFTER_MS = 300;
 
 /** The frame around every page of somebody signed in: mark, areas, workshop, theme, the person, and notices. */
 @Component({
@@ -35,6 +40,7 @@ export class Frame {
   private readonly session = inject(SessionApi);
   private readonly router = inject(Router);
   private readonly live = inject(LiveEvents);
+  private readonly signedOut = inject(SignedOutWatch);
   private readonly themeChoice = inject(ThemeChoice);
   protected readonly notices = inject(Notices);
 
@@ -69,7 +75,9 @@ export class Frame {
 
   constructor() {
     // One listener for the whole frame, so that the stream lasts from page to page.
-    if (this.current() !== null) this.live.events.pipe(takeUntilDestroyed()).subscribe();
+    merge(this.live.events.pipe(filter(({ kind }) => kind === 'members-changed')), this.live.resumed)
+      .pipe(auditTime(RECHECK_AFTER_MS), takeUntilDestroyed())
+      .subscribe(() => void this.recheckSession());
     this.router.events
       .pipe(
         filter((event) => event instanceof NavigationStart),
@@ -84,6 +92,27 @@ export class Frame {
 
   protected async switchWorkshop(workshopId: string): Promise<void> {
     await this.session.switchWorkshop(workshopId);
+    await this.enterWorkshop();
+  }
+
+  /** An owner may have given the person another role or removed them: the page follows at once. */
+  private async recheckSession(): Promise<void> {
+    if (this.isLeaving()) return;
+    const before = this.current();
+    try {
+      if ((await this.session.refresh()).user === null) return this.signedOut.report();
+    } catch (error) {
+      if (!(error instanceof ApiProblem)) throw error;
+      // Whatever the person does next tells them that the server is away.
+      return;
+    }
+    const now = this.current();
+    if (now?.workshopId !== before?.workshopId) await this.enterWorkshop();
+    const news = membershipNews(before, now, this.session.memberships());
+    if (news !== null) this.notices.showNews(news.title, news.detail);
+  }
+
+  private async enterWorkshop(): Promise<void> {
     this.live.restart();
     // By way of the account page, so that the area's page is made anew and reads the other workshop.
     await this.router.navigateByUrl('/account', { skipLocationChange: true });
