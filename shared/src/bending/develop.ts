@@ -69,11 +69,15 @@ export function developLayout(layout: Layout, template: CardTemplate | null, sto
       flat: measureFlat(unfolded, flatBends, stock),
       bendTable: bends.map((bend) => bendRow(bend, flatBends, stock)),
       formedBox: formedBox(unfolded.panels, unfolded.zones, stock.thicknessMm),
-      formedSizes: formedSizes(unfolded.panels, unfolded.zones, bends, stock.kBands),
+      formedSizes: formedSizes(unfolded.panels, unfolded.zones, nameIn(bends), stock.thicknessMm),
       featuresInBendZones: openingsInZones(sheet.sheet, unfolded),
       reliefs: describeReliefs(unfolded, bends),
     },
   };
+}
+
+function nameIn(bends: readonly ResolvedBend[]): (bendId: string) => string {
+  return (bendId) => bends.find(({ declaration }) => declaration.id === bendId)?.name ?? '';
 }
 
 function measureFlat(unfolded: Unfolded, bends: readonly FlatBend[], stock: BendingStock): FlatPattern {

@@ -1,5 +1,6 @@
 import type { Bounds, Point, Point3 } from '../geometry/point';
 import type { Loop } from '../geometry/path';
+import type { BendMeasurements } from './bend-measurements';
 import type { BendDirection, HolePurpose, LengthReference } from './layout';
 
 /** How far a value can be trusted: the same three words as the trade tables use. */
@@ -47,6 +48,8 @@ export interface BendingStock {
   readonly kBands: readonly KBand[];
   /** K by material; empty when there is no table, then DIN 6935 serves for steel and the textbook rule for the rest. */
   readonly kTable: readonly KTableRow[];
+  /** Deductions measured for this sheet; absent when there are none. */
+  readonly measurements?: BendMeasurements;
 }
 
 /** One row of the bend table. Every length in mm. */
@@ -154,6 +157,8 @@ export interface BendZone {
   readonly direction: BendDirection;
   readonly insideRadiusMm: number;
   readonly kFactor: number;
+  /** By how much K may be off, as its source says: about two standard deviations. */
+  readonly kHalfWidth: number;
   /** Boundary of the strip in flat-pattern coordinates, counter-clockwise, openings not taken out. */
   readonly outer: Loop;
 }

@@ -233,6 +233,7 @@ function zonesOf(
         direction: bend.declaration.direction,
         insideRadiusMm: bend.geometry.insideRadiusMm,
         kFactor: bend.geometry.kFactor,
+        kHalfWidth: bend.kHalfWidth,
         outer,
       },
     ];

@@ -9,13 +9,16 @@ import type { BendGeometry } from './allowance';
 import type { BendingStock, KBand, Provenance } from './development';
 import { DIN_6935, dinKFactor } from './din-6935';
 import type { BendOverride } from './layout';
+import { findMeasuredK } from './measured-k';
 
 /** K of one bend and where it comes from. */
 export interface KChoice {
   readonly ok: true;
   readonly kFactor: number;
   readonly provenance: Provenance;
-  /** Said when K lies outside the material's own band, else null. */
+  /** By how much K may be off, about two standard deviations. */
+  readonly halfWidth: number;
+  /** Said when K lies outside the material's own band, or a measurement was passed over; else null. */
   readonly note: string | null;
 }
 
@@ -30,9 +33,14 @@ export interface KRefusal {
 const TEXTBOOK_RATIO = 2;
 const TEXTBOOK_K_TIGHT = 0.33;
 
+/** Half-width of K to plan with where no band is known. Common practice, no source. */
+const PLAN_HALF_WIDTH = 0.03;
+
 /**
- * K of a bend, from the first source that has one: entered by hand, the material's table, DIN 6935 for steel, and last the
- * textbook rule. Hems count K 0.5 unless a person says otherwise. The source travels with the number.
+ * K of a bend, from the first source that has one: entered by hand, the bender's measured deduction, own bend test strips, the
+ * material's table, DIN 6935 for steel, and last the textbook rule. Hems count K 0.5 unless a person or a measurement says
+ * otherwise. The source travels with the number, and so does its spread: a measurement's own, else as far as the material's band
+ * reaches from it (0.03 where no band is known).
  * @param override what a person entered for this bend, or null.
  */
 export function chooseKFactor(
@@ -42,12 +50,25 @@ export function chooseKFactor(
 ): KChoice | KRefusal {
   const ratio = bend.insideRadiusMm / bend.thicknessMm;
   if (override !== null) return fromOverride(bend, override, stock, ratio);
+  const measured = findMeasuredK(bend, stock);
+  const choice =
+    measured.found === null
+      ? fromTables(bend, stock, ratio)
+      : judged(measured.found.kFactor, measured.found.provenance, stock, ratio, measured.found.halfWidth);
+  if (measured.remarks.length === 0) return choice;
+  const remarks = measured.remarks.join('; ');
+  if (!choice.ok) return { ...choice, message: `${choice.message} (${remarks})` };
+  return { ...choice, note: choice.note === null ? remarks : `${choice.note}; ${remarks}` };
+}
+
+function fromTables(bend: BendGeometry, stock: BendingStock, ratio: number): KChoice | KRefusal {
   if (bend.bendAngleDeg === 180) {
     const text = 'hem: neutral line in the middle of the sheet unless measured';
     return {
       ok: true,
       kFactor: LARGEST_K,
       provenance: { text, source: 'common practice, no source', confidence: 'common-practice' },
+      halfWidth: PLAN_HALF_WIDTH,
       note: null,
     };
   }
@@ -119,13 +140,26 @@ function outOfRange(subject: string): KRefusal {
   };
 }
 
-function judged(kFactor: number, provenance: Provenance, stock: BendingStock, ratio: number): KChoice | KRefusal {
+function judged(
+  kFactor: number,
+  provenance: Provenance,
+  stock: BendingStock,
+  ratio: number,
+  measuredHalfWidth: number | null = null,
+): KChoice | KRefusal {
   if (!isPossibleK(kFactor)) return outOfRange(`K ${shown(kFactor)} from ${provenance.text}`);
-  return { ok: true, kFactor, provenance, note: bandNote(kFactor, bandFor(stock.kBands, ratio)) };
+  const band = bandFor(stock.kBands, ratio);
+  const halfWidth = measuredHalfWidth ?? reachOfBand(kFactor, band);
+  return { ok: true, kFactor, provenance, halfWidth, note: bandNote(kFactor, band) };
+}
+
+/** How far the far end of the band lies from K: what is not measured may turn out to be anywhere in it. */
+function reachOfBand(kFactor: number, band: KBand | null): number {
+  return band === null ? PLAN_HALF_WIDTH : Math.max(Math.abs(band.low - kFactor), Math.abs(band.high - kFactor));
 }
 
 /** The band that holds at a ratio of inside radius to thickness; null when the material has none. */
-export function bandFor(bands: readonly KBand[], ratio: number): KBand | null {
+function bandFor(bands: readonly KBand[], ratio: number): KBand | null {
   return bands.find((band) => band.ratioBelow === null || ratio < band.ratioBelow) ?? null;
 }
 

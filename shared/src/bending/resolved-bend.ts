@@ -13,6 +13,8 @@ export interface ResolvedBend {
   readonly geometry: NeutralBend;
   readonly provenance: Provenance;
   readonly note: string | null;
+  /** By how much K may be off, as its source says: about two standard deviations. */
+  readonly kHalfWidth: number;
   readonly allowanceMm: number;
   /** Distance from the layout's bend line back to the tangent line, on both sides, mm. */
   readonly layoutSetbackMm: number;
@@ -68,6 +70,7 @@ export function resolveBend(
       geometry,
       provenance: choice.provenance,
       note: choice.note,
+      kHalfWidth: choice.halfWidth,
       allowanceMm: bendAllowanceMm(geometry),
       layoutSetbackMm,
       reference: reading.reference,
