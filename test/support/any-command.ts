@@ -85,6 +85,20 @@ const role = fc.constantFrom('trial' as const, 'production' as const);
 
 /** Every kind of command but revert, with ids that may or may not be there. */
 export const anyCommand: fc.Arbitrary<PartCommand> = fc.oneof(
+  fc.record({
+    kind: fc.constant('setAssembly' as const),
+    assembly: fc.constantFrom(null, {
+      finishId: 'powder-moss',
+      hardwareSet: 'after-coating',
+      seat: { material: 'steel', isWet: true, corners: [{ bendId: 'b1', radiusMm: 0 }] },
+      neighbours: [{ kind: 'box', id: 'n4', name: 'tank', min: { x: 0, y: 0, z: 40 }, max: { x: 20, y: 20, z: 60 } }],
+      bolts: { featureIds: ['h1', 'h2'], placeHalfWidthMm: 0.2, wantedChance: 0.95 },
+    } as const),
+  }),
+  fc.record({
+    kind: fc.constant('setMarks' as const),
+    marks: fc.constantFrom([], [{ id: 'n3', text: 'FW 1 A', at: { x: 35, y: 5 }, heightMm: 4, turnDeg: 0 }]),
+  }),
   fc.record({ kind: fc.constant('setStock' as const), role, stock }),
   fc.record({
     kind: fc.constant('setTemplate' as const),

@@ -57,7 +57,20 @@ function folderRow(folder, { neighbours = [], others = [], testNeighbours = [], 
 
 /* shared: layers, each of which sees only those before it */
 
-const LAYERS = ['units', 'geometry', 'fitting', 'stock', 'bending', 'spread', 'assembly', 'part'];
+const LAYERS = [
+  'units',
+  'geometry',
+  'fitting',
+  'stock',
+  'bending',
+  'solid',
+  'brake',
+  'template',
+  'nicks',
+  'spread',
+  'assembly',
+  'part',
+];
 const UPPER = ['rules', 'drawing', 'pricing'];
 const SHARED_PACKAGES = {
   geometry: packageNames(['robust-predicates', 'earcut', 'clipper2-ts', 'flatbush']),

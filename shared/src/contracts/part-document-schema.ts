@@ -12,6 +12,7 @@ import type {
   ReliefSettings,
 } from '../bending/layout';
 import type { Point } from '../geometry/point';
+import type { Assembly, Mark } from '../part/assembly';
 import type { DocumentSlice, PartCommand, SliceChange } from '../part/commands';
 import type { Making, PartDocument, SheetStock, Template } from '../part/part-document';
 
@@ -137,6 +138,56 @@ const declaredUsesSchema = z.array(
 const scale = z.number().check(z.gte(0.9), z.lte(1.1));
 const calibrationSchema = z.strictObject({ scaleX: scale, scaleY: scale });
 
+const point3 = z.strictObject({ x: coordinate, y: coordinate, z: coordinate });
+const name = z.string().check(z.minLength(1), z.maxLength(60));
+export const assemblySchema = z.strictObject({
+  finishId: entityId,
+  hardwareSet: z.enum(['before-coating', 'after-coating']),
+  seat: z.nullable(
+    z.strictObject({
+      material: z.enum(['steel', 'stainless', 'aluminium', 'other']),
+      isWet: z.boolean(),
+      corners: z
+        .array(z.strictObject({ bendId: entityId, radiusMm: z.number().check(z.gte(0), z.lte(200)) }))
+        .check(z.maxLength(60)),
+    }),
+  ),
+  neighbours: z
+    .array(
+      z.discriminatedUnion('kind', [
+        z.strictObject({ kind: z.literal('box'), id: entityId, name, min: point3, max: point3 }),
+        z.strictObject({
+          kind: z.literal('cylinder'),
+          id: entityId,
+          name,
+          from: point3,
+          to: point3,
+          radiusMm: positiveMm,
+        }),
+      ]),
+    )
+    .check(z.maxLength(60)),
+  bolts: z.nullable(
+    z.strictObject({
+      featureIds: z.array(entityId).check(z.minLength(1), z.maxLength(60)),
+      placeHalfWidthMm: z.number().check(z.gte(0), z.lte(20)),
+      wantedChance: z.number().check(z.gt(0), z.lt(1)),
+    }),
+  ),
+}) satisfies z.ZodMiniType<Assembly>;
+
+const marksSchema = z
+  .array(
+    z.strictObject({
+      id: entityId,
+      text: z.string().check(z.regex(/^[\x20-\x7e]{1,40}$/)),
+      at: pointSchema,
+      heightMm: z.number().check(z.gt(0), z.lte(100)),
+      turnDeg: z.number().check(z.gte(-360), z.lte(360)),
+    }),
+  )
+  .check(z.maxLength(40)) satisfies z.ZodMiniType<readonly Mark[]>;
+
 export const partDocumentSchema = z.strictObject({
   schemaVersion: z.literal(1),
   stocks: z.strictObject({ trial: sheetStockSchema, production: sheetStockSchema }),
@@ -145,6 +196,8 @@ export const partDocumentSchema = z.strictObject({
   layout: layoutSchema,
   making: makingSchema,
   declaredUses: declaredUsesSchema,
+  assembly: z.exactOptional(assemblySchema),
+  marks: z.exactOptional(marksSchema),
 }) satisfies z.ZodMiniType<PartDocument>;
 
 export const stockRoleSchema = z.enum(['trial', 'production']);
@@ -177,6 +230,8 @@ const sliceSchema = z.discriminatedUnion('slice', [
   z.strictObject({ slice: z.literal('baseAnchor'), value: pointSchema }),
   z.strictObject({ slice: z.literal('making'), value: makingSchema }),
   z.strictObject({ slice: z.literal('declaredUses'), value: declaredUsesSchema }),
+  z.strictObject({ slice: z.literal('assembly'), value: z.nullable(assemblySchema) }),
+  z.strictObject({ slice: z.literal('marks'), value: marksSchema }),
 ]) satisfies z.ZodMiniType<DocumentSlice>;
 
 const sliceChangeSchema = z.strictObject({
@@ -223,6 +278,8 @@ export const partCommandSchema = z.discriminatedUnion('kind', [
   z.strictObject({ kind: z.literal('setBaseAnchor'), to: pointSchema }),
   z.strictObject({ kind: z.literal('setMaking'), making: makingSchema }),
   z.strictObject({ kind: z.literal('setDeclaredUses'), uses: declaredUsesSchema }),
+  z.strictObject({ kind: z.literal('setAssembly'), assembly: z.nullable(assemblySchema) }),
+  z.strictObject({ kind: z.literal('setMarks'), marks: marksSchema }),
   z.strictObject({
     kind: z.literal('revert'),
     reason: z.enum(['undo', 'redo']),

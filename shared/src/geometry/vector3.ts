@@ -20,8 +20,13 @@ export function subtract3(a: Point3, b: Point3): Point3 {
   return { x: a.x - b.x, y: a.y - b.y, z: a.z - b.z };
 }
 
+/** Length of a vector. */
+export function length3(a: Point3): number {
+  return Math.hypot(a.x, a.y, a.z);
+}
+
 /** Vector of length 1 in the same direction; the zero vector stays zero, for faces that have collapsed. */
 export function unit3(a: Point3): Point3 {
-  const size = Math.hypot(a.x, a.y, a.z);
+  const size = length3(a);
   return size > 0 ? { x: a.x / size, y: a.y / size, z: a.z / size } : a;
 }

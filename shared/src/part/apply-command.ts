@@ -18,6 +18,7 @@ import {
 } from './outline-edits';
 import type { PartDocument } from './part-document';
 import { rescaleLayout } from './rescale-layout';
+import { withAssembly, withMarks } from './with-optional';
 
 /**
  * Applies one command. Pure and exact: the same document and command always give the same document, in the browser and
@@ -46,6 +47,10 @@ function change(document: PartDocument, command: PartCommand): PartDocument {
       return { ...document, making: command.making };
     case 'setDeclaredUses':
       return { ...document, declaredUses: command.uses };
+    case 'setAssembly':
+      return withAssembly(document, command.assembly);
+    case 'setMarks':
+      return withMarks(document, command.marks);
     case 'setCalibration': {
       const { scaleX, scaleY } = command;
       const factor = { x: scaleX / document.calibration.scaleX, y: scaleY / document.calibration.scaleY };
@@ -66,7 +71,15 @@ type LayoutCommand = Exclude<
   PartCommand,
   {
     readonly kind:
-      'setStock' | 'setTemplate' | 'setMaking' | 'setDeclaredUses' | 'setCalibration' | 'replaceLayout' | 'revert';
+      | 'setStock'
+      | 'setTemplate'
+      | 'setMaking'
+      | 'setDeclaredUses'
+      | 'setAssembly'
+      | 'setMarks'
+      | 'setCalibration'
+      | 'replaceLayout'
+      | 'revert';
   }
 >;
 

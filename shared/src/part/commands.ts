@@ -8,6 +8,7 @@ import type {
   ReliefSettings,
 } from '../bending/layout';
 import type { Point } from '../geometry/point';
+import type { Assembly, Mark } from './assembly';
 import type { DeclaredUse, Making, PartDocument, SheetStock, StockRole, Template } from './part-document';
 
 /**
@@ -26,7 +27,9 @@ export type DocumentSlice =
   | { readonly slice: 'reliefs'; readonly value: ReliefSettings }
   | { readonly slice: 'baseAnchor'; readonly value: Point }
   | { readonly slice: 'making'; readonly value: Making }
-  | { readonly slice: 'declaredUses'; readonly value: readonly DeclaredUse[] };
+  | { readonly slice: 'declaredUses'; readonly value: readonly DeclaredUse[] }
+  | { readonly slice: 'assembly'; readonly value: Assembly | null }
+  | { readonly slice: 'marks'; readonly value: readonly Mark[] };
 
 export interface SliceChange {
   readonly before: DocumentSlice;
@@ -68,6 +71,8 @@ export type PartCommand =
   | { readonly kind: 'setBaseAnchor'; readonly to: Point }
   | { readonly kind: 'setMaking'; readonly making: Making }
   | { readonly kind: 'setDeclaredUses'; readonly uses: readonly DeclaredUse[] }
+  | { readonly kind: 'setAssembly'; readonly assembly: Assembly | null }
+  | { readonly kind: 'setMarks'; readonly marks: readonly Mark[] }
   | {
       readonly kind: 'revert';
       readonly reason: 'undo' | 'redo';

@@ -57,6 +57,10 @@ export function describeCommand(command: PartCommand): string {
       return 'Change how it is made';
     case 'setDeclaredUses':
       return 'Declare what it is used for';
+    case 'setAssembly':
+      return 'Say what it is put on';
+    case 'setMarks':
+      return 'Change the etched text';
     case 'revert':
       return command.reason === 'undo' ? `Undo: ${command.of}` : `Redo: ${command.of}`;
   }

@@ -1,7 +1,10 @@
 import type { BendDeclaration, Feature, OutlineLoop } from '../bending/layout';
 import type { Point } from '../geometry/point';
+import { length3, subtract3 } from '../geometry/vector3';
+import { findFinish } from '../stock/finishes';
 import { findHoleDiameterMm } from '../stock/hole-diameter';
 import { CommandRefusal, type CommandRefusalCode } from './command-refusal';
+import type { Assembly, Mark } from './assembly';
 import type { PartDocument, SheetStock } from './part-document';
 
 /** Limits of a document, so that no document can hold up the server. Counts, mm and degrees. */
@@ -10,6 +13,8 @@ export const DOCUMENT_LIMITS = {
   cutouts: 500,
   features: 500,
   bends: 60,
+  marks: 40,
+  neighbours: 60,
   coordinateMm: 5000,
   bulge: 1000,
 } as const;
@@ -32,13 +37,15 @@ export function checkInvariants(document: PartDocument): readonly BrokenInvarian
   const report = (code: CommandRefusalCode, message: string, ...ids: readonly string[]) => {
     broken.push({ code, message, ids });
   };
-  const { layout, stocks, template, calibration } = document;
+  const { layout, stocks, template, calibration, assembly } = document;
   const loops = [layout.outer, ...layout.cutouts];
   checkCounts(document, report);
   checkUniqueIds(document, report);
   for (const loop of loops) checkLoop(loop, report);
   for (const feature of layout.features) checkFeature(feature, report);
   for (const bend of layout.bends) checkBend(bend, report);
+  for (const mark of document.marks ?? []) checkMark(mark, report);
+  if (assembly !== undefined) checkAssembly(assembly, report);
   checkStock('trial', stocks.trial, report);
   checkStock('production', stocks.production, report);
   if (template !== null && !isPositive(template.thicknessMm)) {
@@ -63,23 +70,32 @@ export function assertInvariants(document: PartDocument): void {
 
 type Report = (code: CommandRefusalCode, message: string, ...ids: readonly string[]) => void;
 
-function checkCounts({ layout }: PartDocument, report: Report): void {
+function checkCounts({ layout, marks, assembly }: PartDocument, report: Report): void {
   const edgeCount = [layout.outer, ...layout.cutouts].reduce((sum, loop) => sum + loop.edges.length, 0);
   const counts = [
     [edgeCount, DOCUMENT_LIMITS.edges, 'edges'],
     [layout.cutouts.length, DOCUMENT_LIMITS.cutouts, 'cut-outs'],
     [layout.features.length, DOCUMENT_LIMITS.features, 'holes and slots'],
     [layout.bends.length, DOCUMENT_LIMITS.bends, 'bends'],
+    [marks?.length ?? 0, DOCUMENT_LIMITS.marks, 'etched texts'],
+    [assembly?.neighbours.length ?? 0, DOCUMENT_LIMITS.neighbours, 'neighbours'],
   ] as const;
   for (const [count, limit, what] of counts) {
     if (count > limit) report('limitExceeded', `A part has at most ${limit} ${what}; this one would have ${count}.`);
   }
 }
 
-function checkUniqueIds({ layout }: PartDocument, report: Report): void {
+function checkUniqueIds({ layout, marks, assembly }: PartDocument, report: Report): void {
   const seen = new Set<string>();
   const loops = [layout.outer, ...layout.cutouts];
-  const things = [...loops, ...loops.flatMap((loop) => loop.edges), ...layout.features, ...layout.bends];
+  const things = [
+    ...loops,
+    ...loops.flatMap((loop) => loop.edges),
+    ...layout.features,
+    ...layout.bends,
+    ...(marks ?? []),
+    ...(assembly?.neighbours ?? []),
+  ];
   for (const { id } of things) {
     if (seen.has(id)) report('duplicateId', `The id “${id}” is taken already.`, id);
     seen.add(id);
@@ -133,6 +149,34 @@ function checkBend(bend: BendDeclaration, report: Report): void {
   }
   if (override?.kind === 'deduction' && !Number.isFinite(override.deductionMm)) {
     report('impossibleSize', 'A deduction is a length in mm.', bend.id);
+  }
+}
+
+function checkMark(mark: Mark, report: Report): void {
+  if (!isInReach(mark.at) || !Number.isFinite(mark.turnDeg)) {
+    report('limitExceeded', 'The etched text lies out of reach.', mark.id);
+  }
+  if (!isPositive(mark.heightMm)) report('impossibleSize', 'A text has a height above 0.', mark.id);
+}
+
+function checkAssembly({ finishId, seat, neighbours, bolts }: Assembly, report: Report): void {
+  if (findFinish(finishId) === null) report('unknownEntity', 'The tables have no such finish.', finishId);
+  for (const { bendId, radiusMm } of seat?.corners ?? []) {
+    if (!(Number.isFinite(radiusMm) && radiusMm >= 0)) {
+      report('impossibleSize', 'The seat’s corner has a radius of 0 or more.', bendId);
+    }
+  }
+  for (const neighbour of neighbours) {
+    const isSolid =
+      neighbour.kind === 'box'
+        ? (['x', 'y', 'z'] as const).every((axis) => neighbour.max[axis] > neighbour.min[axis])
+        : isPositive(neighbour.radiusMm) && length3(subtract3(neighbour.to, neighbour.from)) > 0;
+    if (!isSolid) report('impossibleSize', 'A neighbour takes up room.', neighbour.id);
+  }
+  if (bolts === null) return;
+  const { placeHalfWidthMm, wantedChance, featureIds } = bolts;
+  if (!(Number.isFinite(placeHalfWidthMm) && placeHalfWidthMm >= 0) || !(wantedChance > 0 && wantedChance < 1)) {
+    report('impossibleSize', 'Bolts sit somewhere, and start with a chance between 0 and 1.', ...featureIds);
   }
 }
 

@@ -8,9 +8,11 @@ import type {
   OutlineLoop,
 } from '../bending/layout';
 import { loopBounds, loopFromBulges } from '../geometry/loop';
-import type { Point } from '../geometry/point';
+import type { Point, Point3 } from '../geometry/point';
+import { type Mark, type Neighbour, markLengthMm } from './assembly';
 import { edgeAt } from './outline-edge-sizes';
 import type { PartDocument, SheetStock, Template } from './part-document';
+import { withAssembly, withMarks } from './with-optional';
 
 /**
  * The other hand of a part: the layout mirrored left to right within its own width, everything else kept. Face A stays
@@ -19,11 +21,52 @@ import type { PartDocument, SheetStock, Template } from './part-document';
 export function mirrorDocument(document: PartDocument): PartDocument {
   const bounds = loopBounds(loopFromBulges(document.layout.outer.edges));
   const sumOfSidesMm = bounds === null ? 0 : bounds.min.x + bounds.max.x;
-  return {
+  const mirrored: PartDocument = {
     ...document,
     stocks: { trial: mirrorGrain(document.stocks.trial), production: mirrorGrain(document.stocks.production) },
     layout: mirrorLayout(document.layout, (point) => ({ x: sumOfSidesMm - point.x, y: point.y })),
   };
+  const { assembly } = document;
+  return withMarks(
+    withAssembly(
+      mirrored,
+      assembly === undefined
+        ? null
+        : { ...assembly, neighbours: assembly.neighbours.map((one) => mirrorNeighbour(one, sumOfSidesMm)) },
+    ),
+    (document.marks ?? []).map((mark) => mirrorMark(mark, sumOfSidesMm)),
+  );
+}
+
+function mirrorNeighbour(neighbour: Neighbour, sumOfSidesMm: number): Neighbour {
+  if (neighbour.kind === 'cylinder') {
+    const mirror = (point: Point3): Point3 => ({ ...point, x: sumOfSidesMm - point.x });
+    return { ...neighbour, from: mirror(neighbour.from), to: mirror(neighbour.to) };
+  }
+  return {
+    ...neighbour,
+    min: { ...neighbour.min, x: sumOfSidesMm - neighbour.max.x },
+    max: { ...neighbour.max, x: sumOfSidesMm - neighbour.min.x },
+  };
+}
+
+/** What stood above face B of the base panel stands below face A of it. */
+function turnNeighbourOver(neighbour: Neighbour, thicknessMm: number): Neighbour {
+  const turn = (point: Point3): Point3 => ({ ...point, z: thicknessMm - point.z });
+  if (neighbour.kind === 'cylinder') return { ...neighbour, from: turn(neighbour.from), to: turn(neighbour.to) };
+  return {
+    ...neighbour,
+    min: { ...neighbour.min, z: thicknessMm - neighbour.max.z },
+    max: { ...neighbour.max, z: thicknessMm - neighbour.min.z },
+  };
+}
+
+/** The text takes the mirrored place and still reads from left to right. */
+function mirrorMark(mark: Mark, sumOfSidesMm: number): Mark {
+  const turnRad = (mark.turnDeg * Math.PI) / 180;
+  const lengthMm = markLengthMm(mark);
+  const end = { x: mark.at.x + lengthMm * Math.cos(turnRad), y: mark.at.y + lengthMm * Math.sin(turnRad) };
+  return { ...mark, at: { x: sumOfSidesMm - end.x, y: end.y }, turnDeg: -mark.turnDeg };
 }
 
 /**
@@ -32,8 +75,14 @@ export function mirrorDocument(document: PartDocument): PartDocument {
  */
 export function turnDocumentOver(document: PartDocument): PartDocument {
   const mirrored = mirrorDocument(document);
+  const { assembly } = mirrored;
+  const thicknessMm = document.stocks.production.thicknessMm;
+  const turned =
+    assembly === undefined
+      ? null
+      : { ...assembly, neighbours: assembly.neighbours.map((one) => turnNeighbourOver(one, thicknessMm)) };
   return {
-    ...mirrored,
+    ...withAssembly(mirrored, turned),
     template: mirrored.template === null ? null : turnTemplateOver(mirrored.template),
     layout: { ...mirrored.layout, bends: mirrored.layout.bends.map((bend) => turnBendOver(bend, document)) },
   };

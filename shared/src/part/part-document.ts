@@ -1,4 +1,5 @@
 import type { BendDirection, CardReading, Layout } from '../bending/layout';
+import type { Assembly, Mark } from './assembly';
 
 /** A sheet to make the part from. */
 export interface SheetStock {
@@ -40,6 +41,10 @@ export interface PartDocument {
   readonly making: Making;
   /** A use a person declared that calls for a caution ("vehicle", "pressure", ...). */
   readonly declaredUses: readonly DeclaredUse[];
+  /** Absent when nobody said. */
+  readonly assembly?: Assembly;
+  /** Absent when there are none. */
+  readonly marks?: readonly Mark[];
 }
 
 export type DeclaredUse =

@@ -3,6 +3,7 @@ import { isSameJson } from './canonical-json';
 import { CommandRefusal } from './command-refusal';
 import type { DocumentSlice, PartCommand, SliceChange } from './commands';
 import type { PartDocument } from './part-document';
+import { withAssembly, withMarks } from './with-optional';
 
 /**
  * What differs between two documents, slice by slice: each change carries the slice before and after. Holes, slots,
@@ -49,6 +50,8 @@ export function diffDocuments(before: PartDocument, after: PartDocument): readon
   compare((document) => ({ slice: 'baseAnchor', value: document.layout.baseAnchor }));
   compare((document) => ({ slice: 'making', value: document.making }));
   compare((document) => ({ slice: 'declaredUses', value: document.declaredUses }));
+  compare((document) => ({ slice: 'assembly', value: document.assembly ?? null }));
+  compare((document) => ({ slice: 'marks', value: document.marks ?? [] }));
   return changes;
 }
 
@@ -167,6 +170,8 @@ const SLICE_WORDS: Readonly<Record<DocumentSlice['slice'], string>> = {
   baseAnchor: 'The base panel',
   making: 'The way of making',
   declaredUses: 'The declared uses',
+  assembly: 'What it is put on',
+  marks: 'The etched text',
 };
 
 function assertSameSlice(before: DocumentSlice, after: DocumentSlice): void {
@@ -186,6 +191,10 @@ function readSlice(document: PartDocument, slice: DocumentSlice): unknown {
     case 'making':
     case 'declaredUses':
       return document[slice.slice];
+    case 'assembly':
+      return document.assembly ?? null;
+    case 'marks':
+      return document.marks ?? [];
     case 'outer':
     case 'reliefs':
     case 'baseAnchor':
@@ -212,6 +221,10 @@ function writeSlice(document: PartDocument, slice: DocumentSlice): PartDocument 
       return { ...document, making: slice.value };
     case 'declaredUses':
       return { ...document, declaredUses: slice.value };
+    case 'assembly':
+      return withAssembly(document, slice.value);
+    case 'marks':
+      return withMarks(document, slice.value);
     case 'outer':
       return layout({ outer: slice.value });
     case 'reliefs':
