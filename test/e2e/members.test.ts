@@ -39,14 +39,35 @@ describe('members of a workshop', () => {
     await guest.waitForURL(/\/parts$/);
     expect(await guest.getByRole('link', { name: 'Start a part' }).count()).toBe(0);
 
-    await owner.reload();
+    // A viewer looks and changes nothing.
+    await guest.goto('/parts/new');
+    await guest.getByText('Your role doesn’t open this page').waitFor();
+    await guest.goto('/office');
+    await guest.getByRole('cell', { name: 'viewer', exact: true }).waitFor();
+    expect(await guest.getByRole('button', { name: /Send the invitation|Remove/ }).count()).toBe(0);
+
+    // The link works once.
+    const { page: late } = await browser.open(null, { provoked: [410, 404] });
+    await late.goto(link);
+    await late.getByText('It was accepted already').waitFor();
+    await late.goto(link.slice(0, -3));
+    await late.getByText('Copy the whole link from the mail').waitFor();
+
+    // The owner's page has heard of the new member, and the member's page hears of the new role.
     await owner.getByLabel('Role of Ida Moss').selectOption('fabricator');
     await owner.getByText('Vale Brackets: your membership').first().waitFor();
+    await guest.getByText('You are fabricator in Vale Brackets now').waitFor();
     await guest.goto('/parts/new');
-    await guest.getByRole('heading', { level: 1 }).waitFor();
+    await guest.getByRole('heading', { name: 'Start a part' }).waitFor();
+
     await owner.getByRole('button', { name: /Remove\s*Ida Moss/ }).click();
+    await owner.getByRole('button', { name: 'Leave it as it is' }).click();
+    await owner.getByRole('button', { name: /Remove\s*Ida Moss/ }).click();
+    await owner.getByRole('button', { name: 'Remove them' }).click();
     await owner.getByRole('button', { name: /Remove\s*Ida Moss/ }).waitFor({ state: 'detached' });
-    await guest.goto('/');
+    // At once, without a click of theirs.
+    await guest.getByText('You no longer belong to Vale Brackets').waitFor();
     await guest.getByText('You belong to no workshop yet.').waitFor();
+    await owner.getByRole('cell', { name: 'Removed Ida Moss' }).waitFor();
   });
 });

@@ -5,7 +5,8 @@ import { saleSchema } from '@foldwright/shared/contracts/sales';
 import { listingSchema } from '@foldwright/shared/contracts/shop';
 import { offerSchema } from '@foldwright/shared/contracts/storefront';
 import type { CartLine } from '@foldwright/shared/contracts/storefront';
-import { hardwareItemSchema, kitSchema } from '@foldwright/shared/contracts/stock';
+import { kitSchema } from '@foldwright/shared/contracts/kits';
+import { hardwareItemSchema } from '@foldwright/shared/contracts/stock';
 import type { TestBrowser } from './people';
 
 export const ADDRESS = {

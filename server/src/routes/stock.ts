@@ -1,3 +1,4 @@
+import * as kits from '@foldwright/shared/contracts/kits';
 import * as contracts from '@foldwright/shared/contracts/stock';
 import type { AppDependencies } from '../app-dependencies';
 import type { BoundRoute } from '../http/route-call';
@@ -29,18 +30,14 @@ export function stockRoutes(dependencies: AppDependencies): BoundRoute[] {
     bind(contracts.changeHardware, ({ actor, params, body, ifMatch }) =>
       changeHardware(database, actor, params.hardwareId, body, ifMatch),
     ),
-    bind(contracts.listKits, async ({ actor }) => ({ kits: await listKits(database, actor) })),
-    bind(contracts.createKit, ({ actor, body, idempotencyKey }) =>
-      createKit(database, actor, body, idempotencyKey, now()),
-    ),
-    bind(contracts.changeKit, ({ actor, params, body, ifMatch }) =>
-      changeKit(database, actor, params.kitId, body, ifMatch),
-    ),
+    bind(kits.listKits, ({ actor }) => listKits(database, actor)),
+    bind(kits.createKit, ({ actor, body, idempotencyKey }) => createKit(database, actor, body, idempotencyKey, now())),
+    bind(kits.changeKit, ({ actor, params, body, ifMatch }) => changeKit(database, actor, params.kitId, body, ifMatch)),
     bind(contracts.listReleasedBrackets, async ({ actor }) => ({
       brackets: await listReleasedBrackets(database, actor),
     })),
-    bind(contracts.listEarnings, async ({ actor }) => ({ earnings: await listEarnings(database, actor) })),
-    bind(contracts.setPartHardware, async ({ actor, params, body }) => ({
+    bind(kits.listEarnings, async ({ actor }) => ({ earnings: await listEarnings(database, actor) })),
+    bind(kits.setPartHardware, async ({ actor, params, body }) => ({
       hardware: await setPartHardware(database, actor, params.partId, body.hardware),
     })),
     bind(contracts.setPartHand, ({ actor, params, body }) => setPartHand(database, actor, params.partId, body.hand)),

@@ -1,3 +1,4 @@
+import * as kits from './kits';
 import * as ledger from './ledger';
 import * as members from './members';
 import * as office from './office';
@@ -60,12 +61,12 @@ export const ROUTE_CONTRACTS: readonly RouteContract[] = [
   stock.listStockMoves,
   stock.createHardware,
   stock.changeHardware,
-  stock.listKits,
-  stock.createKit,
-  stock.changeKit,
+  kits.listKits,
+  kits.createKit,
+  kits.changeKit,
   stock.listReleasedBrackets,
-  stock.listEarnings,
-  stock.setPartHardware,
+  kits.listEarnings,
+  kits.setPartHardware,
   stock.setPartHand,
   stock.makeOtherHand,
   shop.readShopSettings,

@@ -1,7 +1,8 @@
 import * as z from 'zod/mini';
 import { defineRoute } from './route';
 import { currency, moneySchema, oneLine, rowId } from './scalars';
-import { bracketRefSchema, costSchema, finishId } from './stock';
+import { costSchema } from './kits';
+import { bracketRefSchema, finishId, knownFinishId } from './stock';
 
 /** The last part of a public address: lower-case letters, digits and single hyphens. */
 export const slug = z.string().check(z.regex(/^[a-z0-9]+(-[a-z0-9]+)*$/), z.minLength(2), z.maxLength(60));
@@ -49,7 +50,7 @@ export type ShopSettingsInput = z.output<typeof shopSettingsInput>;
 
 export const LISTING_STATES = ['draft', 'published', 'withdrawn'] as const;
 /** A finish that can be bought, and what it costs on top. */
-const finishOffer = z.strictObject({ finishId, surchargeMinor: minor });
+const finishOffer = z.strictObject({ finishId: knownFinishId, surchargeMinor: minor });
 const listingInput = z.strictObject({
   what: z.discriminatedUnion('kind', [
     z.strictObject({ kind: z.literal('bracket'), revisionId: rowId }),

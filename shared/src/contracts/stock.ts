@@ -1,4 +1,6 @@
 import * as z from 'zod/mini';
+import { findFinish } from '../stock/finishes';
+import { partDocumentSchema } from './part-document-schema';
 import { defineRoute } from './route';
 import { moneySchema, oneLine, rowId, timestamp } from './scalars';
 
@@ -8,9 +10,11 @@ export type Hand = z.output<typeof handSchema>;
 
 /** Id of a finish of `shared/stock/finishes`. */
 export const finishId = z.string().check(z.regex(/^[a-z][a-z0-9-]{1,30}$/));
+/** The same where somebody chooses one: only a finish that there is. */
+export const knownFinishId = finishId.check(z.refine((id) => findFinish(id) !== null));
 const count = z.int().check(z.gte(0), z.lte(1_000_000));
-const pieces = z.int().check(z.gte(1), z.lte(100_000));
-const words = z.string().check(z.trim(), z.maxLength(500));
+export const pieces = z.int().check(z.gte(1), z.lte(100_000));
+export const words = z.string().check(z.trim(), z.maxLength(500));
 
 /** A released bracket as stock, kits and sales refer to it. */
 export const bracketRefSchema = z.object({
@@ -23,6 +27,10 @@ export const bracketRefSchema = z.object({
   hand: handSchema,
 });
 export type BracketRef = z.output<typeof bracketRefSchema>;
+
+/** What a revision looks like, once however often it is in the answer. */
+export const drawingSchema = z.object({ revisionId: rowId, document: partDocumentSchema });
+export type Drawing = z.output<typeof drawingSchema>;
 
 export const hardwareItemSchema = z.object({
   id: rowId,
@@ -58,6 +66,16 @@ export const hardwareStockSchema = z.object({
 });
 export type HardwareStock = z.output<typeof hardwareStockSchema>;
 
+/** An order that the cutting service has shipped and that isn't on the shelf yet, all of it. */
+export const arrivalSchema = z.object({
+  orderId: rowId,
+  orderNumber: z.int(),
+  bracket: bracketRefSchema,
+  /** How many of it are not on the shelf. */
+  quantity: z.int(),
+});
+export type Arrival = z.output<typeof arrivalSchema>;
+
 export const STOCK_MOVES = ['received', 'adjusted', 'reserved', 'released', 'shipped', 'returned'] as const;
 export const stockMoveSchema = z.object({
   id: rowId,
@@ -75,61 +93,6 @@ export const stockMoveSchema = z.object({
 });
 export type StockMove = z.output<typeof stockMoveSchema>;
 
-/** What a price of ours rests on. */
-export const costSchema = z.object({
-  each: z.nullable(moneySchema),
-  /** Where the figure comes from, in words; or why there is none. */
-  source: z.string(),
-});
-
-export const kitLineSchema = z.discriminatedUnion('kind', [
-  z.object({
-    kind: z.literal('bracket'),
-    bracket: bracketRefSchema,
-    /** Null when the customer chooses the finish of the kit. */
-    finishId: z.nullable(finishId),
-    quantity: z.int(),
-  }),
-  z.object({ kind: z.literal('hardware'), hardware: hardwareItemSchema, quantity: z.int() }),
-]);
-export type KitLine = z.output<typeof kitLineSchema>;
-
-export const kitSchema = z.object({
-  id: rowId,
-  number: z.string(),
-  name: z.string(),
-  note: z.string(),
-  lines: z.array(kitLineSchema),
-  cost: costSchema,
-  /** For each finish somebody could choose (`bare` when nothing is left to choose): how many can be built now. */
-  buildable: z.array(
-    z.object({
-      finishId,
-      kits: z.int(),
-      /** What keeps it from one kit more. */
-      shortest: z.array(z.object({ what: z.string(), missing: z.int() })),
-    }),
-  ),
-  revision: z.int(),
-});
-export type Kit = z.output<typeof kitSchema>;
-
-const kitLineInput = z.discriminatedUnion('kind', [
-  z.strictObject({
-    kind: z.literal('bracket'),
-    revisionId: rowId,
-    finishId: z.nullable(finishId),
-    quantity: pieces,
-  }),
-  z.strictObject({ kind: z.literal('hardware'), hardwareId: rowId, quantity: pieces }),
-]);
-const kitInput = z.strictObject({
-  name: oneLine(80),
-  note: words,
-  lines: z.array(kitLineInput).check(z.minLength(1), z.maxLength(60)),
-});
-export type KitInput = z.output<typeof kitInput>;
-
 const hardwareInput = z.strictObject({
   name: oneLine(80),
   specification: z.string().check(z.trim(), z.maxLength(120)),
@@ -137,25 +100,6 @@ const hardwareInput = z.strictObject({
   isInUse: z.boolean(),
 });
 export type HardwareInput = z.output<typeof hardwareInput>;
-
-/** What one part costs and earns, money without tax. */
-export const earningSchema = z.object({
-  partId: rowId,
-  partName: z.string(),
-  partNumber: z.string(),
-  hand: handSchema,
-  cost: costSchema,
-  hardware: z.array(z.object({ hardware: hardwareItemSchema, quantity: z.int() })),
-  hardwareCost: moneySchema,
-  /** Price of the published listing of this part alone; null without one. */
-  price: z.nullable(moneySchema),
-  /** Price less cost and hardware; null while one of them is unknown. */
-  margin: z.nullable(moneySchema),
-  sold: z.int(),
-  /** What customers paid for it alone (kits are told apart), less what went back. */
-  earned: moneySchema,
-});
-export type Earning = z.output<typeof earningSchema>;
 
 const makers = ['owner', 'fabricator'] as const;
 const crew = ['owner', 'fabricator', 'viewer'] as const;
@@ -168,7 +112,12 @@ export const listStock = defineRoute({
   access: crew,
   summary: 'Finished brackets by revision and finish, and hardware',
   answer: 'json',
-  response: z.object({ brackets: z.array(bracketStockSchema), hardware: z.array(hardwareStockSchema) }),
+  response: z.object({
+    brackets: z.array(bracketStockSchema),
+    hardware: z.array(hardwareStockSchema),
+    arrivals: z.array(arrivalSchema),
+    drawings: z.array(drawingSchema),
+  }),
   successStatus: 200,
 });
 export const receiveStock = defineRoute({
@@ -180,7 +129,7 @@ export const receiveStock = defineRoute({
   summary: 'Put what came in on the shelf; sales that wait for it get it, oldest first',
   body: z.strictObject({
     what: z.discriminatedUnion('kind', [
-      z.strictObject({ kind: z.literal('bracket'), revisionId: rowId, finishId }),
+      z.strictObject({ kind: z.literal('bracket'), revisionId: rowId, finishId: knownFinishId }),
       z.strictObject({ kind: z.literal('hardware'), hardwareId: rowId }),
     ]),
     quantity: pieces,
@@ -261,47 +210,6 @@ export const changeHardware = defineRoute({
   ifMatch: true,
   problems: ['already-exists', 'stale-row'],
 });
-export const listKits = defineRoute({
-  id: 'listKits',
-  method: 'GET',
-  path: '/api/kits',
-  tag: 'stock',
-  access: crew,
-  summary: 'Kits with their bills of materials, what can be built and what is short',
-  answer: 'json',
-  response: z.object({ kits: z.array(kitSchema) }),
-  successStatus: 200,
-});
-export const createKit = defineRoute({
-  id: 'createKit',
-  method: 'POST',
-  path: '/api/kits',
-  tag: 'stock',
-  access: makers,
-  summary: 'Make a kit',
-  body: kitInput,
-  bodyKind: 'json',
-  answer: 'json',
-  response: kitSchema,
-  successStatus: 201,
-  idempotent: true,
-});
-export const changeKit = defineRoute({
-  id: 'changeKit',
-  method: 'PUT',
-  path: '/api/kits/:kitId',
-  tag: 'stock',
-  access: makers,
-  summary: 'Change a kit and its bill of materials; what was sold before stays as it was',
-  params: z.strictObject({ kitId: rowId }),
-  body: kitInput,
-  bodyKind: 'json',
-  answer: 'json',
-  response: kitSchema,
-  successStatus: 200,
-  ifMatch: true,
-  problems: ['stale-row'],
-});
 /** Released revisions of the workshop, to choose from for stock, kits and listings. */
 export const listReleasedBrackets = defineRoute({
   id: 'listReleasedBrackets',
@@ -314,46 +222,20 @@ export const listReleasedBrackets = defineRoute({
   response: z.object({ brackets: z.array(bracketRefSchema) }),
   successStatus: 200,
 });
-export const listEarnings = defineRoute({
-  id: 'listEarnings',
-  method: 'GET',
-  path: '/api/earnings',
-  tag: 'stock',
-  access: ['owner'],
-  summary: 'What each part costs (quote and hardware) and what it earns',
-  answer: 'json',
-  response: z.object({ earnings: z.array(earningSchema) }),
-  successStatus: 200,
-});
-export const setPartHardware = defineRoute({
-  id: 'setPartHardware',
-  method: 'PUT',
-  path: '/api/parts/:partId/hardware',
-  tag: 'stock',
-  access: makers,
-  summary: 'Hardware that goes with one bracket of this part when it is sold alone',
-  params: z.strictObject({ partId: rowId }),
-  body: z.strictObject({
-    hardware: z.array(z.strictObject({ hardwareId: rowId, quantity: pieces })).check(z.maxLength(40)),
-  }),
-  bodyKind: 'json',
-  answer: 'json',
-  response: z.object({ hardware: earningSchema.shape.hardware }),
-  successStatus: 200,
-});
 export const setPartHand = defineRoute({
   id: 'setPartHand',
   method: 'PUT',
   path: '/api/parts/:partId/hand',
   tag: 'stock',
   access: makers,
-  summary: 'Say which hand a part is; counts for revisions released from now on',
+  summary: 'Say which hand a part is, and so its mirror image; counts for revisions released from now on',
   params: z.strictObject({ partId: rowId }),
   body: z.strictObject({ hand: handSchema }),
   bodyKind: 'json',
   answer: 'json',
   response: z.object({ partId: rowId, hand: handSchema, otherHandPartId: z.nullable(rowId) }),
   successStatus: 200,
+  problems: ['wrong-state'],
 });
 export const makeOtherHand = defineRoute({
   id: 'makeOtherHand',

@@ -1,6 +1,5 @@
 import type { Listing as ListingContract } from '@foldwright/shared/contracts/shop';
 import { listingSchema } from '@foldwright/shared/contracts/shop';
-import { includedTaxMinor } from '@foldwright/shared/pricing/included-tax';
 import { Op } from 'sequelize';
 import * as z from 'zod/mini';
 import type { WorkshopScope } from '../../database/workshop-scope';
@@ -8,6 +7,7 @@ import type { Listing } from '../../models/listing';
 import { bracketsById } from '../stock/brackets';
 import { costOfBracketSold, costOfKit } from '../stock/costs';
 import { linesOfKit } from '../stock/kits';
+import { sellingOf } from '../stock/selling';
 import { shopOf } from './settings';
 
 const finishesSchema = listingSchema.shape.finishes;
@@ -45,22 +45,18 @@ async function whatOf(scope: WorkshopScope, listing: Listing): Promise<Pick<List
 
 /** A listing as the workshop sees it, with what it costs and what is left. */
 export async function presentListing(scope: WorkshopScope, listing: Listing): Promise<ListingContract> {
-  const { currency, taxBasisPoints } = await shopOf(scope);
+  const shop = await shopOf(scope);
   const { what, cost } = await whatOf(scope, listing);
   const photos = await scope.rows.listingPhotos.list({
     where: { listingId: listing.id },
     order: [['position', 'ASC']],
   });
-  const netMinor = listing.priceMinor - includedTaxMinor(listing.priceMinor, taxBasisPoints);
   const { id, state, slug, title, summary, fits, doesNotFit, fittingSteps, leadTimeDays, revision } = listing;
   return {
     ...{ id, state, what, slug, title, summary, fits, doesNotFit, fittingSteps, leadTimeDays, cost, revision },
-    price: { amountMinor: listing.priceMinor, currency },
+    price: { amountMinor: listing.priceMinor, currency: shop.currency },
     finishes: finishesOf(listing),
-    margin:
-      cost.each === null || cost.each.currency !== currency
-        ? null
-        : { amountMinor: netMinor - cost.each.amountMinor, currency },
+    margin: sellingOf(shop, listing.priceMinor, cost.each).margin,
     photos: photos.map((photo) => ({ id: photo.id, description: photo.description })),
     isBehind: await isBehind(scope, listing),
   };

@@ -1,8 +1,9 @@
-import type { BracketRef } from '@foldwright/shared/contracts/stock';
+import type { BracketRef, Drawing } from '@foldwright/shared/contracts/stock';
 import type { Database } from '../../database/database';
 import type { WorkshopScope } from '../../database/workshop-scope';
 import type { Member } from '../../http/visitor';
 import { BRACKET_HEAD, presentBracket } from '../../presenters/stock';
+import { readStoredDocument } from '../stored-document';
 
 /** References to released brackets by the id of their revision, for as many as there are. */
 export async function bracketsById(
@@ -25,6 +26,15 @@ export async function bracketsById(
       return part === undefined ? [] : [[revision.id, presentBracket(revision, part)] as const];
     }),
   );
+}
+
+/** What revisions look like, each once. */
+export async function drawingsOf(scope: WorkshopScope, revisionIds: readonly string[]): Promise<Drawing[]> {
+  const revisions = await scope.rows.revisions.list({
+    where: { id: [...new Set(revisionIds)] },
+    attributes: ['id', 'document'],
+  });
+  return revisions.map(({ id, document }) => ({ revisionId: id, document: readStoredDocument(document) }));
 }
 
 /** Every released revision of the workshop, by part and the newest of each first. */

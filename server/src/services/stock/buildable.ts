@@ -1,4 +1,4 @@
-import type { Kit, KitLine } from '@foldwright/shared/contracts/stock';
+import type { Kit, KitLine } from '@foldwright/shared/contracts/kits';
 
 /** What the counting needs of a position. */
 export interface Counted {

@@ -9,6 +9,7 @@ import type { StockPosition } from '../../models/stock-position';
 import { once } from '../once';
 import { recordAudit } from '../record-audit';
 import { serveWaitingSales } from '../sales/reserve';
+import { receivedOf } from './arrivals';
 import type { StockTarget } from './shelf';
 import { announceStock, lockShelf, moveStock, positionOf, targetOf } from './shelf';
 
@@ -83,8 +84,13 @@ async function countArrival(scope: WorkshopScope, order: Order, { what, quantity
       next: 'Receive it once it is there.',
     });
   }
-  const received = await scope.rows.stockMoves.list({ where: { orderId: order.id, kind: 'received' } });
-  const before = received.reduce((sum, { onHandChange }) => sum + onHandChange, 0);
+  if (order.stock !== 'production') {
+    throw new Problem('wrong-state', {
+      detail: `Order ${order.number} was cut in ${order.stockLabel} to try the bracket. The shelf holds what is sold.`,
+      kept,
+    });
+  }
+  const before = (await receivedOf(scope, [order.id])).get(order.id) ?? 0;
   if (before + quantity > order.quantity) {
     throw new Problem('wrong-state', {
       detail: `Order ${order.number} made ${order.quantity}, and ${before} of them are on the shelf already.`,
@@ -93,7 +99,10 @@ async function countArrival(scope: WorkshopScope, order: Order, { what, quantity
     });
   }
   let left = quantity;
-  for (const row of await scope.rows.cutAssignments.list({ where: { orderId: order.id }, order: [['id', 'ASC']] })) {
+  const assignments = await scope.rows.cutAssignments.list({ where: { orderId: order.id } });
+  const sales = await scope.rows.sales.list({ where: { id: assignments.map(({ saleId }) => saleId) } });
+  const numberOf = ({ saleId }: { readonly saleId: string }) => sales.find(({ id }) => id === saleId)?.number ?? 0;
+  for (const row of [...assignments].sort((a, b) => numberOf(a) - numberOf(b) || a.id.localeCompare(b.id))) {
     const arrived = Math.min(left, row.quantity - row.arrived);
     if (arrived > 0) await scope.rows.cutAssignments.change(row, { arrived: row.arrived + arrived });
     left -= arrived;

@@ -1,6 +1,6 @@
 import { quoteBreakSchema } from '@foldwright/shared/contracts/orders';
 import type { Money } from '@foldwright/shared/contracts/scalars';
-import type { Kit } from '@foldwright/shared/contracts/stock';
+import type { Kit } from '@foldwright/shared/contracts/kits';
 import { eachMinor } from '@foldwright/shared/pricing/price-lines';
 import * as z from 'zod/mini';
 import type { WorkshopScope } from '../../database/workshop-scope';

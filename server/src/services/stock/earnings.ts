@@ -1,4 +1,5 @@
-import type { Earning } from '@foldwright/shared/contracts/stock';
+import type { Earning } from '@foldwright/shared/contracts/kits';
+import type { Money } from '@foldwright/shared/contracts/scalars';
 import { includedTaxMinor } from '@foldwright/shared/pricing/included-tax';
 import type { Database } from '../../database/database';
 import type { WorkshopScope } from '../../database/workshop-scope';
@@ -9,6 +10,8 @@ import type { Part } from '../../models/part';
 import { presentHardware } from '../../presenters/stock';
 import { recordAudit } from '../record-audit';
 import { costOfBracket } from './costs';
+import type { ShopMoney } from './selling';
+import { sellingOf, shopMoneyOf } from './selling';
 
 async function hardwareOf(scope: WorkshopScope, partId: string): Promise<Earning['hardware']> {
   const rows = await scope.rows.partHardware.list({ where: { partId } });
@@ -17,6 +20,13 @@ async function hardwareOf(scope: WorkshopScope, partId: string): Promise<Earning
     const item = items.find(({ id }) => id === hardwareId);
     return item === undefined ? [] : [{ hardware: presentHardware(item), quantity }];
   });
+}
+
+/** What is named twice counts together. */
+function merged(hardware: readonly { readonly hardwareId: string; readonly quantity: number }[]): Map<string, number> {
+  const counts = new Map<string, number>();
+  for (const { hardwareId, quantity } of hardware) counts.set(hardwareId, (counts.get(hardwareId) ?? 0) + quantity);
+  return counts;
 }
 
 /** Replace the hardware that goes with one bracket of a part. @throws Problem `not-found` */
@@ -31,7 +41,7 @@ export function setPartHardware(
     for (const row of await scope.rows.partHardware.list({ where: { partId } })) {
       await scope.rows.partHardware.remove(row);
     }
-    for (const { hardwareId, quantity } of hardware) {
+    for (const [hardwareId, quantity] of merged(hardware)) {
       await scope.rows.hardwareItems.get(hardwareId);
       await scope.rows.partHardware.add({ partId, hardwareId, quantity });
     }
@@ -71,11 +81,19 @@ async function returnedOf(scope: WorkshopScope, lineId: string): Promise<number>
   return bracket === undefined ? 0 : Math.floor(bracket.returned / bracket.perLine);
 }
 
+/** Sum of what goes with one bracket; null when it is in several currencies. @param currency of a sum of nothing */
+function sumOfHardware(hardware: Earning['hardware'], currency: Money['currency']): Money | null {
+  const currencies = new Set(hardware.map((one) => one.hardware.cost.currency));
+  if (currencies.size > 1) return null;
+  const amountMinor = hardware.reduce((sum, one) => sum + one.quantity * one.hardware.cost.amountMinor, 0);
+  return { amountMinor, currency: [...currencies][0] ?? currency };
+}
+
 async function earningOf(
   scope: WorkshopScope,
   part: Part,
   listings: readonly Listing[],
-  taxBasisPoints: number,
+  money: ShopMoney,
 ): Promise<Earning | null> {
   const revisions = await scope.rows.revisions.list({
     where: { partId: part.id },
@@ -88,10 +106,12 @@ async function earningOf(
   const published = own.find(({ state }) => state === 'published');
   const cost = await costOfBracket(scope, published?.revisionId ?? newest.id);
   const hardware = await hardwareOf(scope, part.id);
-  const currency = cost.each?.currency ?? 'EUR';
-  const hardwareMinor = hardware.reduce((sum, one) => sum + one.quantity * one.hardware.cost.amountMinor, 0);
-  const net =
-    published === undefined ? null : published.priceMinor - includedTaxMinor(published.priceMinor, taxBasisPoints);
+  const { each } = cost;
+  const hardwareCost = sumOfHardware(hardware, each?.currency ?? money.currency);
+  const whole =
+    each !== null && hardwareCost?.currency === each.currency
+      ? { amountMinor: each.amountMinor + hardwareCost.amountMinor, currency: each.currency }
+      : null;
   const { sold, earnedMinor } = await soldBy(
     scope,
     own.map(({ id }) => id),
@@ -103,14 +123,10 @@ async function earningOf(
     hand: part.hand,
     cost,
     hardware,
-    hardwareCost: { amountMinor: hardwareMinor, currency },
-    price: net === null ? null : { amountMinor: net, currency },
-    margin:
-      net === null || cost.each === null
-        ? null
-        : { amountMinor: net - cost.each.amountMinor - hardwareMinor, currency },
+    hardwareCost,
+    ...sellingOf(money, published?.priceMinor ?? null, whole),
     sold,
-    earned: { amountMinor: earnedMinor, currency },
+    earned: { amountMinor: earnedMinor, currency: money.currency },
   };
 }
 
@@ -118,10 +134,10 @@ async function earningOf(
 export function listEarnings(database: Database, { workshopId }: Member): Promise<Earning[]> {
   return database.viewWorkshop(workshopId, async (scope) => {
     const listings = await scope.rows.listings.list();
-    const shop = await scope.rows.shops.findOne({});
+    const money = await shopMoneyOf(scope);
     const earnings: Earning[] = [];
     for (const part of await scope.rows.parts.list({ order: [['number', 'ASC']] })) {
-      const earning = await earningOf(scope, part, listings, shop?.taxBasisPoints ?? 0);
+      const earning = await earningOf(scope, part, listings, money);
       if (earning !== null) earnings.push(earning);
     }
     return earnings;

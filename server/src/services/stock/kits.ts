@@ -1,5 +1,6 @@
-import type { Kit as KitContract, KitInput, KitLine as KitLineContract } from '@foldwright/shared/contracts/stock';
-import { createKit as createContract, kitSchema } from '@foldwright/shared/contracts/stock';
+import type { Kit as KitContract, KitInput, KitLine as KitLineContract } from '@foldwright/shared/contracts/kits';
+import type { Drawing } from '@foldwright/shared/contracts/stock';
+import { createKit as createContract, kitSchema } from '@foldwright/shared/contracts/kits';
 import * as z from 'zod/mini';
 import type { Database } from '../../database/database';
 import type { WorkshopScope } from '../../database/workshop-scope';
@@ -10,9 +11,10 @@ import { presentHardware } from '../../presenters/stock';
 import { once } from '../once';
 import { recordAudit } from '../record-audit';
 import { refuseStale } from '../refuse-stale';
-import { bracketsById } from './brackets';
+import { bracketsById, drawingsOf } from './brackets';
 import { countBuildable } from './buildable';
 import { costOfKit } from './costs';
+import { sellingOf, shopMoneyOf } from './selling';
 
 const numberRow = z.tuple([z.object({ prefix: z.string(), next: z.int() })]);
 
@@ -65,24 +67,33 @@ async function present(scope: WorkshopScope, kit: Kit): Promise<KitContract> {
     const item = hardware.find(({ id }) => id === line.hardwareId);
     return item === undefined ? [] : [{ kind: 'hardware', hardware: presentHardware(item), quantity }];
   });
+  const cost = await costOfKit(scope, lines);
+  const listing = await scope.rows.listings.findOne({ kitId: kit.id, state: 'published' });
   return {
     id: kit.id,
     number: kit.number,
     name: kit.name,
     note: kit.note,
     lines: presented,
-    cost: await costOfKit(scope, lines),
+    cost,
+    ...sellingOf(await shopMoneyOf(scope), listing?.priceMinor ?? null, cost.each),
     buildable: countBuildable(presented, await scope.rows.stockPositions.list()),
     revision: kit.revision,
   };
 }
 
-/** Kits by number. */
-export function listKits(database: Database, { workshopId }: Member): Promise<KitContract[]> {
+/** Kits by number, and what the brackets in them look like. */
+export function listKits(
+  database: Database,
+  { workshopId }: Member,
+): Promise<{ kits: KitContract[]; drawings: Drawing[] }> {
   return database.viewWorkshop(workshopId, async (scope) => {
     const kits: KitContract[] = [];
     for (const kit of await scope.rows.kits.list({ order: [['number', 'ASC']] })) kits.push(await present(scope, kit));
-    return kits;
+    const revisionIds = kits.flatMap(({ lines }) =>
+      lines.flatMap((line) => (line.kind === 'bracket' ? [line.bracket.revisionId] : [])),
+    );
+    return { kits, drawings: await drawingsOf(scope, revisionIds) };
   });
 }
 

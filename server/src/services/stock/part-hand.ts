@@ -20,7 +20,10 @@ async function otherHandOf(scope: WorkshopScope, part: Part): Promise<Part | nul
   return scope.rows.parts.findOne({ otherHandOf: part.id });
 }
 
-/** Say which hand a part is. Revisions that were released before keep theirs. @throws Problem `not-found` */
+/**
+ * Say which hand a part is; its mirror image is then the other one. Revisions that were released before keep theirs.
+ * @throws Problem `not-found`, `wrong-state` when it is to have no hand though there is a mirror image of it
+ */
 export function setPartHand(
   database: Database,
   actor: Member,
@@ -28,19 +31,28 @@ export function setPartHand(
   hand: Hand,
 ): Promise<{ partId: string; hand: Hand; otherHandPartId: string | null }> {
   return database.inWorkshop(actor.workshopId, async (scope) => {
-    const part = await scope.rows.parts.get(partId, { lock: true });
-    if (part.hand !== hand) {
-      await scope.rows.parts.change(part, { hand });
-      await recordAudit(
-        scope,
-        actor,
-        `Said it is the ${hand === 'either' ? 'only' : hand} hand`,
-        `${part.number} ${part.name}`,
-      );
-      recordEvent(scope, { kind: 'part-changed', partId });
+    // Two people at the two hands of one bracket lock them in the same order.
+    const ids = [partId, (await otherHandOf(scope, await scope.rows.parts.get(partId)))?.id ?? []].flat().sort();
+    const parts: Part[] = [];
+    for (const id of ids) parts.push(await scope.rows.parts.get(id, { lock: true }));
+    const twin = parts.find(({ id }) => id !== partId);
+    if (hand === 'either' && twin !== undefined) {
+      throw new Problem('wrong-state', {
+        detail: `Its other hand is ${twin.number} ${twin.name}, so it is a left or a right one.`,
+        kept: 'Both hands are as they were.',
+      });
     }
-    return { partId, hand, otherHandPartId: (await otherHandOf(scope, part))?.id ?? null };
+    for (const part of parts) await turnTo(scope, actor, part, part.id === partId ? hand : OTHER[hand]);
+    return { partId, hand, otherHandPartId: twin?.id ?? null };
   });
+}
+
+async function turnTo(scope: WorkshopScope, actor: Member, part: Part, hand: Hand): Promise<void> {
+  if (part.hand === hand) return;
+  await scope.rows.parts.change(part, { hand });
+  const what = `Said it is the ${hand === 'either' ? 'only' : hand} hand`;
+  await recordAudit(scope, actor, what, `${part.number} ${part.name}`);
+  recordEvent(scope, { kind: 'part-changed', partId: part.id });
 }
 
 async function latestDocument(scope: WorkshopScope, partId: string): Promise<unknown> {

@@ -1,10 +1,17 @@
-import type { BracketStock, HardwareStock, StockMove as StockMoveContract } from '@foldwright/shared/contracts/stock';
+import type {
+  Arrival,
+  BracketStock,
+  Drawing,
+  HardwareStock,
+  StockMove as StockMoveContract,
+} from '@foldwright/shared/contracts/stock';
 import type { Database } from '../../database/database';
 import type { WorkshopScope } from '../../database/workshop-scope';
 import type { Member } from '../../http/visitor';
 import { presentHardware } from '../../presenters/stock';
 import { shortItems } from '../sales/short-items';
-import { bracketsById } from './brackets';
+import { listArrivals } from './arrivals';
+import { bracketsById, drawingsOf } from './brackets';
 import type { StockTarget } from './shelf';
 import { targetOf } from './shelf';
 
@@ -21,11 +28,11 @@ async function shortages(scope: WorkshopScope): Promise<ReadonlyMap<string, numb
   return short;
 }
 
-/** What lies on the shelf: brackets by part, revision and finish, then hardware by name. */
+/** What lies on the shelf: brackets by part, revision and finish, then hardware by name; and what has arrived for it. */
 export function listStock(
   database: Database,
   { workshopId }: Member,
-): Promise<{ brackets: BracketStock[]; hardware: HardwareStock[] }> {
+): Promise<{ brackets: BracketStock[]; hardware: HardwareStock[]; arrivals: Arrival[]; drawings: Drawing[] }> {
   return database.viewWorkshop(workshopId, async (scope) => {
     const positions = await scope.rows.stockPositions.list();
     const short = await shortages(scope);
@@ -53,9 +60,15 @@ export function listStock(
     });
     const order = ({ bracket: { partNumber, letter }, finishId }: BracketStock) =>
       `${partNumber} ${letter} ${finishId}`;
+    const arrivals = await listArrivals(scope);
     return {
       brackets: brackets.sort((a, b) => order(a).localeCompare(order(b), 'en', { numeric: true })),
       hardware,
+      arrivals,
+      drawings: await drawingsOf(
+        scope,
+        [...brackets, ...arrivals].map(({ bracket }) => bracket.revisionId),
+      ),
     };
   });
 }

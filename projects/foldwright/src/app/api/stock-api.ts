@@ -1,25 +1,27 @@
 import { Injectable, inject } from '@angular/core';
+import {
+  type Kit,
+  type KitInput,
+  changeKit,
+  createKit,
+  listEarnings,
+  listKits,
+  setPartHardware,
+} from '@foldwright/shared/contracts/kits';
 import type { RouteBody, RouteResponse } from '@foldwright/shared/contracts/route';
 import {
   type Hand,
   type HardwareInput,
   type HardwareItem,
-  type Kit,
-  type KitInput,
   adjustStock,
   changeHardware,
-  changeKit,
   createHardware,
-  createKit,
-  listEarnings,
-  listKits,
   listReleasedBrackets,
   listStock,
   listStockMoves,
   makeOtherHand,
   receiveStock,
   setPartHand,
-  setPartHardware,
 } from '@foldwright/shared/contracts/stock';
 import { ApiClient, type ApiRead } from './api-client';
 
@@ -66,7 +68,7 @@ export class StockApi {
     return this.client.call(changeHardware, { params: { hardwareId }, body, ifMatch: revision });
   }
 
-  kits(): ApiRead<{ kits: Kit[] }> {
+  kits(): ApiRead<RouteResponse<typeof listKits>> {
     return this.client.read(listKits, () => ({}));
   }
 

@@ -1,15 +1,11 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
-import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import type { Mail } from '@foldwright/shared/contracts/office';
 import { momentWords } from '@foldwright/ui/date-text/date-words';
 import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
-import { auditTime, filter, merge } from 'rxjs';
-import { LiveEvents } from '../api/live-events';
 import { OfficeApi } from '../api/office-api';
+import { rereadOn } from '../api/reread';
 import { SessionApi } from '../api/session-api';
 import { MembersSection } from './members/members-section';
-
-const REREAD_AFTER_MS = 400;
 
 const MAIL_STATE_WORDS: Readonly<Record<Mail['state'], string>> = {
   waiting: 'waiting to be sent',
@@ -29,7 +25,6 @@ const MAIL_STATE_WORDS: Readonly<Record<Mail['state'], string>> = {
 export class OfficePage {
   private readonly office = inject(OfficeApi);
   private readonly session = inject(SessionApi);
-  private readonly live = inject(LiveEvents);
 
   protected readonly seesMails = this.session.canMake;
   protected readonly seesAudit = computed(() => this.session.role() === 'owner');
@@ -49,8 +44,7 @@ export class OfficePage {
   );
 
   constructor() {
-    merge(this.live.events.pipe(filter(({ kind }) => kind === 'mail-changed')), this.live.resumed)
-      .pipe(auditTime(REREAD_AFTER_MS), takeUntilDestroyed())
-      .subscribe(() => this.mails.reload());
+    rereadOn(['mail-changed'], () => this.mails.reload());
+    rereadOn(['members-changed'], () => this.audit.reload());
   }
 }

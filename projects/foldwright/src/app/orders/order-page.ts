@@ -5,7 +5,7 @@ import { RouterLink } from '@angular/router';
 import { dayWords, momentWords } from '@foldwright/ui/date-text/date-words';
 import { FindingSign } from '@foldwright/ui/finding-note/finding-sign';
 import { FormedPreview } from '@foldwright/ui/formed-preview/formed-preview';
-import { drawPart } from '@foldwright/ui/formed-preview/draw-part';
+import { fitInto } from '@foldwright/ui/formed-preview/fit-into';
 import { MoneyText } from '@foldwright/ui/money-text/money-text';
 import { PartCardFrame } from '@foldwright/ui/part-card-frame/part-card-frame';
 import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
@@ -50,9 +50,7 @@ export class OrderPage {
   protected readonly madeOf = computed(() => (this.order()?.stock === 'trial' ? 'trial-steel' : 'alloy'));
   protected readonly pxPerMm = computed(() => {
     const document = this.document();
-    if (document === null) return 1;
-    const { widthPx, heightPx } = drawPart(document, this.madeOf());
-    return Math.min(DRAWING_ROOM_PX.width / widthPx, DRAWING_ROOM_PX.height / heightPx);
+    return document === null ? 1 : fitInto(document, this.madeOf(), DRAWING_ROOM_PX).pxPerMm;
   });
 
   private readonly now = new Date();

@@ -4,7 +4,7 @@ import { MatButtonModule } from '@angular/material/button';
 import type { Question } from '@foldwright/shared/contracts/questions';
 import { momentWords } from '@foldwright/ui/date-text/date-words';
 import { ShopDeskApi } from '../api/shop-desk-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 
 /** A thread about fit, and the field to answer it; the customer gets the answer by mail. */
 @Component({
@@ -60,7 +60,7 @@ import { DeskCall } from './desk-call';
 })
 export class AnswerForm {
   private readonly api = inject(ShopDeskApi);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   readonly question = input.required<Question>();
   readonly canAnswer = input.required<boolean>();

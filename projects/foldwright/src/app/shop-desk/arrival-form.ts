@@ -3,7 +3,7 @@ import { MatButtonModule } from '@angular/material/button';
 import type { Sale } from '@foldwright/shared/contracts/sales';
 import { finishWords } from '@foldwright/ui/formed-preview/finish-look';
 import { StockApi } from '../api/stock-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 
 /** Put on the shelf what the cutting service made for a sale, in the finish it was sold in. */
 @Component({
@@ -30,7 +30,7 @@ import { DeskCall } from './desk-call';
 })
 export class ArrivalForm {
   private readonly api = inject(StockApi);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   readonly sale = input.required<Sale>();
   readonly orders = input.required<Sale['cutOrders']>();

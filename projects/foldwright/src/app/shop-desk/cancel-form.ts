@@ -12,7 +12,7 @@ import { MatButtonModule } from '@angular/material/button';
 import type { Sale } from '@foldwright/shared/contracts/sales';
 import { MoneyText } from '@foldwright/ui/money-text/money-text';
 import { ShopDeskApi } from '../api/shop-desk-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 
 type Row = FormGroup<{ lineId: FormControl<string>; quantity: FormControl<number> }>;
 
@@ -52,7 +52,7 @@ type Row = FormGroup<{ lineId: FormControl<string>; quantity: FormControl<number
 export class CancelForm {
   private readonly api = inject(ShopDeskApi);
   private readonly builder = inject(NonNullableFormBuilder);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   readonly sale = input.required<Sale>();
   readonly done = output<Sale>();

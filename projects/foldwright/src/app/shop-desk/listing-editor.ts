@@ -12,7 +12,7 @@ import { Notices } from '../api/notices';
 import { SessionApi } from '../api/session-api';
 import { ShopDeskApi } from '../api/shop-desk-api';
 import { StockApi } from '../api/stock-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 import { slugOf } from './slug-of';
 
 /** One listing: what it sells, its words, its finishes and price; publish it, withdraw it, add photos. */
@@ -29,7 +29,7 @@ export class ListingEditor {
   private readonly notices = inject(Notices);
   private readonly router = inject(Router);
   private readonly session = inject(SessionApi);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   /** Id of the listing, or “new”. */
   readonly listingId = input.required<string>();

@@ -10,7 +10,7 @@ import {
 import { MatButtonModule } from '@angular/material/button';
 import type { Sale } from '@foldwright/shared/contracts/sales';
 import { ShopDeskApi } from '../api/shop-desk-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 import { itemWords } from './item-words';
 
 type Row = FormGroup<{ itemId: FormControl<string>; quantity: FormControl<number> }>;
@@ -52,7 +52,7 @@ type Row = FormGroup<{ itemId: FormControl<string>; quantity: FormControl<number
 export class ParcelForm {
   private readonly api = inject(ShopDeskApi);
   private readonly builder = inject(NonNullableFormBuilder);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   readonly sale = input.required<Sale>();
   readonly done = output<Sale>();

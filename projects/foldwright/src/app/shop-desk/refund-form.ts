@@ -5,7 +5,7 @@ import type { Sale } from '@foldwright/shared/contracts/sales';
 import { parseMoneyMinor } from '@foldwright/shared/units/money';
 import { MoneyText } from '@foldwright/ui/money-text/money-text';
 import { ShopDeskApi } from '../api/shop-desk-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 
 /** Send part of the money back, up to what is left of the payment. */
 @Component({
@@ -41,7 +41,7 @@ import { DeskCall } from './desk-call';
 })
 export class RefundForm {
   private readonly api = inject(ShopDeskApi);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   readonly sale = input.required<Sale>();
   readonly done = output<Sale>();

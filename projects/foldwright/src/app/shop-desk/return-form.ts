@@ -4,7 +4,7 @@ import { MatButtonModule } from '@angular/material/button';
 import type { Sale } from '@foldwright/shared/contracts/sales';
 import { parseMoneyMinor } from '@foldwright/shared/units/money';
 import { ShopDeskApi } from '../api/shop-desk-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 import { itemWords } from './item-words';
 
 /** Take a shipped piece back, on the shelf or to scrap, with the money that goes back for it. */
@@ -57,7 +57,7 @@ import { itemWords } from './item-words';
 })
 export class ReturnForm {
   private readonly api = inject(ShopDeskApi);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   readonly sale = input.required<Sale>();
   readonly done = output<Sale>();

@@ -1,8 +1,8 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import type { SaleItem } from '@foldwright/shared/contracts/sales';
-import { drawPart } from '@foldwright/ui/formed-preview/draw-part';
 import { finishWords, lookOfFinish } from '@foldwright/ui/formed-preview/finish-look';
+import { fitInto } from '@foldwright/ui/formed-preview/fit-into';
 import { FormedPreview } from '@foldwright/ui/formed-preview/formed-preview';
 import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
 import { handWords } from './sale-words';
@@ -82,8 +82,6 @@ function describe({ what }: SaleItem) {
   if (what.kind === 'hardware') {
     return { name: what.name, note: what.specification, letter: null, hand: '', hash: null, partId: '', picture: null };
   }
-  const madeOf = lookOfFinish(what.finishId);
-  const { widthPx, heightPx } = drawPart(what.document, madeOf);
   return {
     name: `${what.partNumber} ${what.partName}`,
     note: `${finishWords(what.finishId)}, ${what.materialLabel}`,
@@ -91,10 +89,6 @@ function describe({ what }: SaleItem) {
     hand: handWords(what.hand),
     hash: what.hash.slice(0, 12),
     partId: what.partId,
-    picture: {
-      document: what.document,
-      madeOf,
-      pxPerMm: Math.min(ROOM_PX.width / widthPx, ROOM_PX.height / heightPx),
-    },
+    picture: fitInto(what.document, lookOfFinish(what.finishId), ROOM_PX),
   };
 }

@@ -123,11 +123,12 @@ export class SalePage {
       const { sale, refused } = await this.api.cutMissing(this.saleId(), this.cutKey);
       this.refused.set(refused.map(({ what, reason }) => `${what}: ${reason}`));
       this.read.set(sale);
+      // Only an answer ends a try: one whose answer got lost is, pressed again, the same try.
+      this.cutKey = newIdempotencyKey();
     } catch (error) {
       this.notices.showProblem(error);
       this.read.reload();
     } finally {
-      this.cutKey = newIdempotencyKey();
       this.isBusy.set(false);
     }
   }

@@ -4,7 +4,7 @@ import { MatButtonModule } from '@angular/material/button';
 import { parseMoneyMinor, typedMoney } from '@foldwright/shared/units/money';
 import { Notices } from '../api/notices';
 import { ShopDeskApi } from '../api/shop-desk-api';
-import { DeskCall } from './desk-call';
+import { OnceCall } from '../api/once-call';
 
 /** Address, words, tax and postage of the shop, and whether it is open. */
 @Component({
@@ -17,7 +17,7 @@ import { DeskCall } from './desk-call';
 export class SettingsPage {
   private readonly api = inject(ShopDeskApi);
   private readonly notices = inject(Notices);
-  protected readonly call = new DeskCall();
+  protected readonly call = new OnceCall();
 
   protected readonly read = this.api.settings();
   protected readonly form = inject(NonNullableFormBuilder).group({

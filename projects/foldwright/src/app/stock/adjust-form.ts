@@ -1,8 +1,7 @@
-import { ChangeDetectionStrategy, Component, inject, input, output, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, inject, input, output } from '@angular/core';
 import { NonNullableFormBuilder, ReactiveFormsModule, Validators } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
-import { newIdempotencyKey } from '../api/api-client';
-import { Notices } from '../api/notices';
+import { OnceCall } from '../api/once-call';
 import { StockApi } from '../api/stock-api';
 
 /** Correct what lies on the shelf, with a reason. */
@@ -23,7 +22,7 @@ import { StockApi } from '../api/stock-api';
           <small class="fw-wrong">Say why; it stands in the books.</small>
         }
       </label>
-      <button matButton="outlined" type="submit" [disabled]="isBusy()">Correct the shelf</button>
+      <button matButton="outlined" type="submit" [disabled]="once.isBusy()">Correct the shelf</button>
     </form>
   `,
   styles: `
@@ -48,32 +47,23 @@ import { StockApi } from '../api/stock-api';
 })
 export class AdjustForm {
   private readonly api = inject(StockApi);
-  private readonly notices = inject(Notices);
 
   readonly positionId = input.required<string>();
   readonly done = output<void>();
 
-  protected readonly isBusy = signal(false);
+  protected readonly once = new OnceCall();
   protected readonly form = inject(NonNullableFormBuilder).group({
     change: [-1, [Validators.required, Validators.pattern(/^-?[1-9]\d*$/)]],
     reason: ['', [Validators.required, Validators.maxLength(200)]],
   });
-  private key = newIdempotencyKey();
 
   protected async send(): Promise<void> {
     this.form.markAllAsTouched();
-    if (this.form.invalid || this.isBusy()) return;
-    this.isBusy.set(true);
+    if (this.form.invalid) return;
     const { change, reason } = this.form.getRawValue();
-    try {
-      await this.api.adjust(this.positionId(), change, reason, this.key);
-      this.form.reset();
-      this.done.emit();
-    } catch (error) {
-      this.notices.showProblem(error);
-    } finally {
-      this.key = newIdempotencyKey();
-      this.isBusy.set(false);
-    }
+    const done = await this.once.run((key) => this.api.adjust(this.positionId(), change, reason, key));
+    if (done === undefined) return;
+    this.form.reset();
+    this.done.emit();
   }
 }

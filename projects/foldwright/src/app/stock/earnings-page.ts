@@ -40,7 +40,11 @@ import { StockApi } from '../api/stock-api';
                 <small>{{ row.cost.source }}</small>
               </td>
               <td>
-                <fw-money-text [amount]="row.hardwareCost" />
+                @if (row.hardwareCost; as hardwareCost) {
+                  <fw-money-text [amount]="hardwareCost" />
+                } @else {
+                  in several currencies
+                }
                 <small>{{ row.with }}</small>
               </td>
               <td>

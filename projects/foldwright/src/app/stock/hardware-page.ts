@@ -4,8 +4,7 @@ import { MatButtonModule } from '@angular/material/button';
 import type { HardwareItem } from '@foldwright/shared/contracts/stock';
 import { parseMoneyMinor, typedMoney } from '@foldwright/shared/units/money';
 import { MoneyText } from '@foldwright/ui/money-text/money-text';
-import { newIdempotencyKey } from '../api/api-client';
-import { Notices } from '../api/notices';
+import { OnceCall } from '../api/once-call';
 import { rereadOn } from '../api/reread';
 import { SessionApi } from '../api/session-api';
 import { StockApi } from '../api/stock-api';
@@ -39,21 +38,19 @@ const CURRENCY = 'EUR';
 })
 export class HardwarePage {
   private readonly api = inject(StockApi);
-  private readonly notices = inject(Notices);
   protected readonly canMake = inject(SessionApi).canMake;
 
   protected readonly stock = this.api.stock();
   protected readonly rows = computed(() => this.stock.value()?.hardware ?? []);
   /** The item that is being changed; undefined for a new one, null when the form is away. */
   protected readonly edited = signal<HardwareItem | undefined | null>(null);
-  protected readonly isBusy = signal(false);
+  protected readonly once = new OnceCall();
   protected readonly form = inject(NonNullableFormBuilder).group({
     name: ['', [Validators.required, Validators.maxLength(80)]],
     specification: ['', Validators.maxLength(120)],
     cost: ['', [Validators.required, (control: { value: unknown }) => costFault(control.value)]],
     isInUse: [true],
   });
-  private key = newIdempotencyKey();
 
   constructor() {
     rereadOn(['stock-changed'], () => this.stock.reload());
@@ -76,22 +73,18 @@ export class HardwarePage {
   protected async save(): Promise<void> {
     this.form.markAllAsTouched();
     const edited = this.edited();
-    if (this.form.invalid || this.isBusy() || edited === null) return;
+    if (this.form.invalid || edited === null) return;
     const { name, specification, cost, isInUse } = this.form.getRawValue();
     const amountMinor = parseMoneyMinor(cost, CURRENCY) ?? 0;
     const body = { name, specification, isInUse, cost: { amountMinor, currency: edited?.cost.currency ?? CURRENCY } };
-    this.isBusy.set(true);
-    try {
-      if (edited === undefined) await this.api.addHardware(body, this.key);
-      else await this.api.changeHardware(edited.id, body, edited.revision);
-      this.edited.set(null);
-      this.stock.reload();
-    } catch (error) {
-      this.notices.showProblem(error);
-    } finally {
-      this.key = newIdempotencyKey();
-      this.isBusy.set(false);
-    }
+    const kept = await this.once.run((key) =>
+      edited === undefined
+        ? this.api.addHardware(body, key)
+        : this.api.changeHardware(edited.id, body, edited.revision),
+    );
+    if (kept === undefined) return;
+    this.edited.set(null);
+    this.stock.reload();
   }
 }
 

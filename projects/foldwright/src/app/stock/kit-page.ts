@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, computed, effect, inject, input, signal, untracked } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, effect, inject, input, untracked } from '@angular/core';
 import {
   FormArray,
   type FormControl,
@@ -9,11 +9,10 @@ import {
 } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
 import { Router } from '@angular/router';
-import type { Kit, KitInput } from '@foldwright/shared/contracts/stock';
+import type { Kit, KitInput } from '@foldwright/shared/contracts/kits';
 import { FINISHES } from '@foldwright/shared/stock/finishes';
 import { finishWords } from '@foldwright/ui/formed-preview/finish-look';
-import { newIdempotencyKey } from '../api/api-client';
-import { Notices } from '../api/notices';
+import { OnceCall } from '../api/once-call';
 import { SessionApi } from '../api/session-api';
 import { StockApi } from '../api/stock-api';
 
@@ -31,7 +30,6 @@ const CHOICE = '';
 })
 export class KitPage {
   private readonly api = inject(StockApi);
-  private readonly notices = inject(Notices);
   private readonly router = inject(Router);
   private readonly builder = inject(NonNullableFormBuilder);
   protected readonly canMake = inject(SessionApi).canMake;
@@ -46,14 +44,13 @@ export class KitPage {
   protected readonly brackets = computed(() => this.released.value()?.brackets ?? []);
   protected readonly hardware = computed(() => (this.stock.value()?.hardware ?? []).map((row) => row.hardware));
   protected readonly finishes = FINISHES.map(({ id }) => ({ id, words: finishWords(id) }));
-  protected readonly isBusy = signal(false);
+  protected readonly once = new OnceCall();
   protected readonly lines = new FormArray<LineForm>([]);
   protected readonly form = this.builder.group({
     name: ['', [Validators.required, Validators.maxLength(80)]],
     note: ['', Validators.maxLength(500)],
   });
   private filledFor: string | null = null;
-  private key = newIdempotencyKey();
 
   constructor() {
     effect(() => {
@@ -82,20 +79,13 @@ export class KitPage {
   protected async save(): Promise<void> {
     this.form.markAllAsTouched();
     this.lines.markAllAsTouched();
-    if (this.form.invalid || this.lines.invalid || this.lines.length === 0 || this.isBusy()) return;
-    this.isBusy.set(true);
+    if (this.form.invalid || this.lines.invalid || this.lines.length === 0) return;
     const body: KitInput = { ...this.form.getRawValue(), lines: this.lines.controls.map(lineInput) };
     const kit = this.kit();
-    try {
-      if (kit === null) await this.api.addKit(body, this.key);
-      else await this.api.changeKit(kit.id, body, kit.revision);
-      await this.router.navigate(['/stock/kits']);
-    } catch (error) {
-      this.notices.showProblem(error);
-    } finally {
-      this.key = newIdempotencyKey();
-      this.isBusy.set(false);
-    }
+    const kept = await this.once.run((key) =>
+      kit === null ? this.api.addKit(body, key) : this.api.changeKit(kit.id, body, kit.revision),
+    );
+    if (kept !== undefined) await this.router.navigate(['/stock/kits']);
   }
 
   private fill(kit: Kit): void {

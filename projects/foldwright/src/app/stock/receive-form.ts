@@ -1,42 +1,51 @@
-import { ChangeDetectionStrategy, Component, computed, inject, output, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, effect, inject, input, output } from '@angular/core';
 import { toSignal } from '@angular/core/rxjs-interop';
 import { NonNullableFormBuilder, ReactiveFormsModule, Validators } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
+import type { Arrival } from '@foldwright/shared/contracts/stock';
 import { FINISHES } from '@foldwright/shared/stock/finishes';
 import { finishWords } from '@foldwright/ui/formed-preview/finish-look';
-import { newIdempotencyKey } from '../api/api-client';
-import { Notices } from '../api/notices';
+import { OnceCall } from '../api/once-call';
 import { StockApi } from '../api/stock-api';
 
-/** Put brackets or hardware on the shelf; what they came from is said in words. */
+/** Put brackets or hardware on the shelf: what an order made, or anything, with what it came from in words. */
 @Component({
   selector: 'fw-receive-form',
   imports: [MatButtonModule, ReactiveFormsModule],
   template: `
     <form class="fw-paper" [formGroup]="form" (ngSubmit)="send()">
-      <label class="fw-field wide">
-        <span>What</span>
-        <select formControlName="what">
-          <option value="">Choose a bracket or hardware</option>
-          <optgroup label="Brackets">
-            @for (bracket of brackets(); track bracket.revisionId) {
-              <option [value]="'b:' + bracket.revisionId">
-                {{ bracket.partNumber }} {{ bracket.partName }}, revision {{ bracket.letter }}
-              </option>
-            }
-          </optgroup>
-          <optgroup label="Hardware">
-            @for (row of hardware(); track row.hardware.id) {
-              <option [value]="'h:' + row.hardware.id">
-                {{ row.hardware.name }}, {{ row.hardware.specification }}
-              </option>
-            }
-          </optgroup>
-        </select>
-        @if (form.controls.what.touched && form.controls.what.invalid) {
-          <small class="fw-wrong">Choose what came in.</small>
-        }
-      </label>
+      @if (arrival(); as made) {
+        <p class="wide">
+          <b>{{ made.bracket.partNumber }} {{ made.bracket.partName }}, revision {{ made.bracket.letter }}</b>
+          <span class="fw-soft"
+            >from order {{ made.orderNumber }}; brackets arrive bare, choose the finish they have now</span
+          >
+        </p>
+      } @else {
+        <label class="fw-field wide">
+          <span>What</span>
+          <select formControlName="what">
+            <option value="">Choose a bracket or hardware</option>
+            <optgroup label="Brackets">
+              @for (bracket of brackets(); track bracket.revisionId) {
+                <option [value]="'b:' + bracket.revisionId">
+                  {{ bracket.partNumber }} {{ bracket.partName }}, revision {{ bracket.letter }}
+                </option>
+              }
+            </optgroup>
+            <optgroup label="Hardware">
+              @for (row of hardware(); track row.hardware.id) {
+                <option [value]="'h:' + row.hardware.id">
+                  {{ row.hardware.name }}, {{ row.hardware.specification }}
+                </option>
+              }
+            </optgroup>
+          </select>
+          @if (form.controls.what.touched && form.controls.what.invalid) {
+            <small class="fw-wrong">Choose what came in.</small>
+          }
+        </label>
+      }
       @if (isBracket()) {
         <label class="fw-field">
           <span>Finish</span>
@@ -56,7 +65,7 @@ import { StockApi } from '../api/stock-api';
         <input maxlength="200" placeholder="counted, bought, back from the coat shop" formControlName="reason" />
       </label>
       <div class="fw-acts">
-        <button matButton="filled" type="submit" [disabled]="isBusy()">Put it on the shelf</button>
+        <button matButton="filled" type="submit" [disabled]="once.isBusy()">Put it on the shelf</button>
         <button matButton="outlined" type="button" (click)="cancelled.emit()">Leave it</button>
       </div>
     </form>
@@ -72,13 +81,18 @@ import { StockApi } from '../api/stock-api';
     .wide {
       flex: 1 1 260px;
     }
+
+    p > * {
+      display: block;
+    }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class ReceiveForm {
   private readonly api = inject(StockApi);
-  private readonly notices = inject(Notices);
 
+  /** What an order made; null for anything else. */
+  readonly arrival = input<Arrival | null>(null);
   readonly done = output<void>();
   readonly cancelled = output<void>();
 
@@ -87,7 +101,7 @@ export class ReceiveForm {
   protected readonly brackets = computed(() => this.released.value()?.brackets ?? []);
   protected readonly hardware = computed(() => this.stock.value()?.hardware ?? []);
   protected readonly finishes = FINISHES.map(({ id }) => ({ id, words: finishWords(id) }));
-  protected readonly isBusy = signal(false);
+  protected readonly once = new OnceCall();
   protected readonly form = inject(NonNullableFormBuilder).group({
     what: ['', Validators.required],
     finishId: ['bare', Validators.required],
@@ -96,25 +110,25 @@ export class ReceiveForm {
   });
   private readonly what = toSignal(this.form.controls.what.valueChanges, { initialValue: '' });
   protected readonly isBracket = computed(() => this.what().startsWith('b:'));
-  private key = newIdempotencyKey();
+
+  constructor() {
+    effect(() => {
+      const arrival = this.arrival();
+      if (arrival === null) return;
+      const { bracket, quantity } = arrival;
+      this.form.patchValue({ what: `b:${bracket.revisionId}`, quantity });
+    });
+  }
 
   protected async send(): Promise<void> {
     this.form.markAllAsTouched();
-    if (this.form.invalid || this.isBusy()) return;
-    this.isBusy.set(true);
+    if (this.form.invalid) return;
     const { what, finishId, quantity, reason } = this.form.getRawValue();
     const id = what.slice(2);
     const target = what.startsWith('b:')
       ? ({ kind: 'bracket', revisionId: id, finishId } as const)
       : ({ kind: 'hardware', hardwareId: id } as const);
-    try {
-      await this.api.receive({ what: target, quantity, orderId: null, reason }, this.key);
-      this.done.emit();
-    } catch (error) {
-      this.notices.showProblem(error);
-    } finally {
-      this.key = newIdempotencyKey();
-      this.isBusy.set(false);
-    }
+    const receipt = { what: target, quantity, orderId: this.arrival()?.orderId ?? null, reason };
+    if ((await this.once.run((key) => this.api.receive(receipt, key))) !== undefined) this.done.emit();
   }
 }

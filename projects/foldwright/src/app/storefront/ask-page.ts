@@ -1,11 +1,10 @@
-import { ChangeDetectionStrategy, Component, inject, input, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, inject, input } from '@angular/core';
 import { NonNullableFormBuilder, ReactiveFormsModule, Validators } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInputModule } from '@angular/material/input';
 import { Router } from '@angular/router';
-import { newIdempotencyKey } from '../api/api-client';
-import { Notices } from '../api/notices';
+import { OnceCall } from '../api/once-call';
 import { SessionApi } from '../api/session-api';
 import { StorefrontApi } from '../api/storefront-api';
 import { MissingShop } from './missing-shop';
@@ -37,7 +36,7 @@ import { ShopFrame } from './shop-frame';
               <textarea matInput rows="5" maxlength="3000" formControlName="text"></textarea>
               <mat-error>Write your question.</mat-error>
             </mat-form-field>
-            <button matButton="filled" type="submit" [disabled]="isBusy()">Send the question</button>
+            <button matButton="filled" type="submit" [disabled]="once.isBusy()">Send the question</button>
           </form>
         </div>
       </fw-shop-frame>
@@ -74,7 +73,6 @@ import { ShopFrame } from './shop-frame';
 })
 export class AskPage {
   private readonly api = inject(StorefrontApi);
-  private readonly notices = inject(Notices);
   private readonly router = inject(Router);
   private readonly user = inject(SessionApi).user;
 
@@ -83,26 +81,18 @@ export class AskPage {
   readonly about = input<string>();
 
   protected readonly front = this.api.front(this.shop);
-  protected readonly isBusy = signal(false);
+  protected readonly once = new OnceCall();
   protected readonly form = inject(NonNullableFormBuilder).group({
     name: [this.user()?.name ?? '', [Validators.required, Validators.maxLength(80)]],
     email: [this.user()?.email ?? '', [Validators.required, Validators.email]],
     text: ['', [Validators.required, Validators.maxLength(3000)]],
   });
-  private key = newIdempotencyKey();
 
   protected async send(): Promise<void> {
     this.form.markAllAsTouched();
-    if (this.form.invalid || this.isBusy()) return;
-    this.isBusy.set(true);
-    try {
-      const body = { ...this.form.getRawValue(), listingSlug: this.about() ?? null };
-      await this.router.navigate(['/shop/question', await this.api.ask(this.shop(), body, this.key)]);
-    } catch (error) {
-      this.key = newIdempotencyKey();
-      this.notices.showProblem(error);
-    } finally {
-      this.isBusy.set(false);
-    }
+    if (this.form.invalid) return;
+    const body = { ...this.form.getRawValue(), listingSlug: this.about() ?? null };
+    const link = await this.once.run((key) => this.api.ask(this.shop(), body, key));
+    if (link !== undefined) await this.router.navigate(['/shop/question', link]);
   }
 }

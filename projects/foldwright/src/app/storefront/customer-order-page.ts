@@ -5,7 +5,7 @@ import type { CustomerOrder } from '@foldwright/shared/contracts/sale-links';
 import { dayWords, momentWords } from '@foldwright/ui/date-text/date-words';
 import { FindingSign } from '@foldwright/ui/finding-note/finding-sign';
 import { finishWords, lookOfFinish } from '@foldwright/ui/formed-preview/finish-look';
-import { drawPart } from '@foldwright/ui/formed-preview/draw-part';
+import { fitInto } from '@foldwright/ui/formed-preview/fit-into';
 import { FormedPreview } from '@foldwright/ui/formed-preview/formed-preview';
 import { MoneyText } from '@foldwright/ui/money-text/money-text';
 import { PartCardFrame } from '@foldwright/ui/part-card-frame/part-card-frame';
@@ -129,9 +129,6 @@ function describe({ id, what }: CustomerOrder['items'][number]) {
   if (what.kind === 'hardware') {
     return { id, name: what.name, note: what.specification, letter: null, hand: null, hash: null, picture: null };
   }
-  const madeOf = lookOfFinish(what.finishId);
-  const { widthPx, heightPx } = drawPart(what.document, madeOf);
-  const pxPerMm = Math.min(DRAWING_ROOM_PX.width / widthPx, DRAWING_ROOM_PX.height / heightPx);
   return {
     id,
     name: what.partName,
@@ -139,6 +136,6 @@ function describe({ id, what }: CustomerOrder['items'][number]) {
     letter: what.letter,
     hand: HAND_WORDS[what.hand],
     hash: what.hash.slice(0, 12),
-    picture: { document: what.document, madeOf, pxPerMm },
+    picture: fitInto(what.document, lookOfFinish(what.finishId), DRAWING_ROOM_PX),
   };
 }

@@ -28,7 +28,7 @@ interface Asked {
   /** Null when the member is to be removed. */
   readonly role: CrewRole | null;
   /** What was pressed: where the keyboard goes back to. */
-  readonly from: HTMLElement;
+  readonly from: HTMLElement | null;
 }
 
 type Outcome = 'done' | 'busy' | ApiProblem;
@@ -115,13 +115,13 @@ export class MembersSection {
     else await this.run(() => this.api.changeRole(member.userId, role, member.revision));
   }
 
-  protected askToRemove(member: Member, from: HTMLElement): void {
-    this.asked.set({ member, role: null, from });
+  protected askToRemove(member: Member, { currentTarget }: Event): void {
+    this.asked.set({ member, role: null, from: currentTarget instanceof HTMLElement ? currentTarget : null });
   }
 
   protected leaveAsItIs({ from }: Asked): void {
     this.asked.set(null);
-    from.focus();
+    from?.focus();
   }
 
   protected async doAsked({ member, role }: Asked): Promise<void> {

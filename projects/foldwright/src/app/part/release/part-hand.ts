@@ -1,9 +1,8 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, output, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, input, output } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import { Router, RouterLink } from '@angular/router';
 import type { PartDetail } from '@foldwright/shared/contracts/parts';
-import { newIdempotencyKey } from '../../api/api-client';
-import { Notices } from '../../api/notices';
+import { OnceCall } from '../../api/once-call';
 import { StockApi } from '../../api/stock-api';
 
 const HANDS = [
@@ -25,7 +24,7 @@ const HANDS = [
             type="radio"
             name="part-hand"
             [checked]="option.hand === part().hand"
-            [disabled]="!canEdit() || isBusy()"
+            [disabled]="!canEdit() || once.isBusy()"
             (change)="set(option.hand)"
           />{{ option.words }}
         </label>
@@ -34,7 +33,7 @@ const HANDS = [
     @if (part().otherHandPartId; as twin) {
       <p><a [routerLink]="['/parts', twin]">Go to the other hand</a></p>
     } @else if (canEdit()) {
-      <button matButton="outlined" type="button" [disabled]="isBusy()" (click)="makeOther()">
+      <button matButton="outlined" type="button" [disabled]="once.isBusy()" (click)="makeOther()">
         Make the other hand
       </button>
     }
@@ -77,7 +76,6 @@ const HANDS = [
 })
 export class PartHand {
   private readonly api = inject(StockApi);
-  private readonly notices = inject(Notices);
   private readonly router = inject(Router);
 
   readonly part = input.required<PartDetail>();
@@ -85,34 +83,19 @@ export class PartHand {
   readonly changed = output<void>();
 
   protected readonly hands = HANDS;
-  protected readonly isBusy = signal(false);
+  protected readonly once = new OnceCall();
   private readonly otherName = computed(() => {
     const { name, hand } = this.part();
     return `${name}, ${hand === 'right' ? 'left' : 'right'}`.slice(0, 80);
   });
-  private key = newIdempotencyKey();
 
   protected async set(hand: PartDetail['hand']): Promise<void> {
-    await this.run(() => this.api.setHand(this.part().id, hand));
+    await this.once.run(() => this.api.setHand(this.part().id, hand));
     this.changed.emit();
   }
 
   protected async makeOther(): Promise<void> {
-    const made = await this.run(() => this.api.makeOtherHand(this.part().id, this.otherName(), this.key));
+    const made = await this.once.run((key) => this.api.makeOtherHand(this.part().id, this.otherName(), key));
     if (made !== undefined) await this.router.navigate(['/parts', made.partId]);
-  }
-
-  private async run<T>(call: () => Promise<T>): Promise<T | undefined> {
-    if (this.isBusy()) return undefined;
-    this.isBusy.set(true);
-    try {
-      return await call();
-    } catch (error) {
-      this.notices.showProblem(error);
-      return undefined;
-    } finally {
-      this.key = newIdempotencyKey();
-      this.isBusy.set(false);
-    }
   }
 }
