@@ -10,6 +10,7 @@ const TESTS = [
   { package: 'qpdf', isThere: () => fs.existsSync('/usr/bin/qpdf') },
   { package: 'poppler-utils', isThere: () => fs.existsSync('/usr/bin/pdftoppm') },
   { package: 'python3-ezdxf', isThere: () => fs.existsSync('/usr/lib/python3/dist-packages/ezdxf') },
+  { package: 'python3-shapely', isThere: () => fs.existsSync('/usr/lib/python3/dist-packages/shapely') },
 ];
 
 /** Packages are missing and this account may not install them. */
