@@ -75,13 +75,15 @@ function chordsOf(
   const [outer, ...openings] = boundaries;
   if (outer === undefined) return { chords: [], loose: null };
   const half = { origin, inward: turnLeft(direction) };
-  const hits = boundaries
-    .flat()
-    .flatMap((segment) =>
-      edgeCrossings(segment, half, COINCIDENT_MM).filter(
-        (point) => nearestOnSegment(segment, point).distanceMm <= COINCIDENT_MM,
-      ),
-    )
+  const crossings: Point[] = [];
+  for (const loop of boundaries) {
+    for (const segment of loop) {
+      for (const point of edgeCrossings(segment, half, COINCIDENT_MM)) {
+        if (nearestOnSegment(segment, point).distanceMm <= COINCIDENT_MM) crossings.push(point);
+      }
+    }
+  }
+  const hits = crossings
     .map((point) => ({ point, at: dot(subtract(point, origin), direction) }))
     .sort((a, b) => a.at - b.at);
   const chords: Chord[] = [];

@@ -26,7 +26,6 @@ export function cutMeshCells(development: Development, chordErrorMm: number): re
   const { panels, zones } = development;
   const openings = panels.flatMap((panel) => panel.openings);
   const zoneCells = zones.flatMap((zone, index) => zoneCellsOf(zone, index, development, openings, chordErrorMm));
-  const corners = zoneCells.flatMap(({ outer }) => outer);
   const panelCells = panels.flatMap((panel): readonly MeshCell[] => {
     const own = zones.filter(
       ({ parentIndex, childIndex }) => parentIndex === panel.index || childIndex === panel.index,
@@ -42,16 +41,28 @@ export function cutMeshCells(development: Development, chordErrorMm: number): re
     });
     return cellsFrom(panel.outer, cut, { kind: 'panel', index: panel.index }, chordErrorMm);
   });
-  return [
-    ...panelCells.map((cell) => withCorners(cell, corners, zones)),
-    ...zoneCells.map((cell) =>
-      withCorners(
-        cell,
-        panelCells.flatMap(({ outer }) => outer),
-        zones,
-      ),
+  const ofZones = zones.map((zone, index) =>
+    onTangents(
+      zone,
+      zoneCells.filter(({ of }) => of.index === index),
     ),
+  );
+  const ofPanels = zones.map((zone) => onTangents(zone, panelCells));
+  return [
+    ...panelCells.map((cell) => withCorners(cell, zones, ofZones)),
+    ...zoneCells.map((cell) => withCorners(cell, pick(zones, cell.of.index), pick(ofPanels, cell.of.index))),
   ];
+}
+
+function pick<T>(items: readonly T[], index: number): readonly T[] {
+  return items.slice(index, index + 1);
+}
+
+/** Corners of cells that lie on a zone's tangent lines. */
+function onTangents(zone: BendZone, cells: readonly MeshCell[]): readonly Point[] {
+  return cells.flatMap(({ outer }) =>
+    outer.filter((point) => isOnLine(point, zone, 0) || isOnLine(point, zone, zone.bendAllowanceMm)),
+  );
 }
 
 /** How many flat strips stand for a bend so that its outer face is within the chord error. */
@@ -150,16 +161,19 @@ function crossesTangent(opening: Loop, zone: BendZone, panelIndex: number): bool
   return isBothSides && opening.some((segment) => intersectSegments(segment, tangent, COINCIDENT_MM).kind !== 'none');
 }
 
-/** Adds the corners of neighbouring cells that lie on this cell's edges along tangent lines. */
-function withCorners(cell: MeshCell, corners: readonly Point[], zones: readonly BendZone[]): MeshCell {
-  const levels = zones.flatMap((zone) => [0, zone.bendAllowanceMm].map((level) => ({ zone, level })));
+/** Adds the corners of neighbouring cells that lie on this cell's edges along tangent lines. `corners` are given for each zone. */
+function withCorners(cell: MeshCell, zones: readonly BendZone[], corners: readonly (readonly Point[])[]): MeshCell {
   const outer = cell.outer.flatMap((from, index) => {
     const to = cell.outer[(index + 1) % cell.outer.length] ?? from;
-    const isOnTangent = levels.some(({ zone, level }) => [from, to].every((point) => isOnLine(point, zone, level)));
-    if (!isOnTangent) return [from];
+    const beside = zones.flatMap((zone, at) =>
+      [0, zone.bendAllowanceMm].some((level) => isOnLine(from, zone, level) && isOnLine(to, zone, level))
+        ? (corners[at] ?? [])
+        : [],
+    );
+    if (beside.length === 0) return [from];
     const length = Math.hypot(to.x - from.x, to.y - from.y);
     const direction = { x: (to.x - from.x) / length, y: (to.y - from.y) / length };
-    const between = corners
+    const between = beside
       .map((point) => ({
         point,
         at: dot(subtract(point, from), direction),

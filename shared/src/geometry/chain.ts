@@ -159,7 +159,7 @@ export function splitSegment(segment: Segment, at: readonly Point[], toleranceMm
 export function joinPieces(pieces: readonly Loop[], toleranceMm: number): readonly Loop[] | null {
   const all = pieces.flat();
   const straight = all.filter((segment) => segment.kind === 'line');
-  const cutPoints = straight.flatMap((segment) => [segment.from, segment.to]);
+  const cutPoints = straight.flatMap((segment) => [segment.from, segment.to]).sort((one, other) => one.x - other.x);
   const split = all.flatMap((segment) =>
     segment.kind === 'line'
       ? splitSegment(segment, nearbyPoints(segment, cutPoints, toleranceMm), toleranceMm)
@@ -186,12 +186,31 @@ export function joinPieces(pieces: readonly Loop[], toleranceMm: number): readon
   return loops === null ? null : loops.map((loop) => mergeStraightRuns(loop, toleranceMm));
 }
 
+/** Points in a segment's box. @param points in rising order of x */
 function nearbyPoints(segment: Segment, points: readonly Point[], toleranceMm: number): readonly Point[] {
   const minX = Math.min(segment.from.x, segment.to.x) - toleranceMm;
   const maxX = Math.max(segment.from.x, segment.to.x) + toleranceMm;
   const minY = Math.min(segment.from.y, segment.to.y) - toleranceMm;
   const maxY = Math.max(segment.from.y, segment.to.y) + toleranceMm;
-  return points.filter((point) => point.x >= minX && point.x <= maxX && point.y >= minY && point.y <= maxY);
+  const near: Point[] = [];
+  for (let index = firstFrom(points, minX); index < points.length; index += 1) {
+    const point = points[index];
+    if (point === undefined || point.x > maxX) break;
+    if (point.y >= minY && point.y <= maxY) near.push(point);
+  }
+  return near;
+}
+
+/** Place of the first point whose x is at least this. */
+function firstFrom(points: readonly Point[], x: number): number {
+  let low = 0;
+  let high = points.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if ((points[middle]?.x ?? Infinity) < x) low = middle + 1;
+    else high = middle;
+  }
+  return low;
 }
 
 /** Joins consecutive straight edges on one line into one edge, so that a cut along a tangent line leaves no extra corners. */

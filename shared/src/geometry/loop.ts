@@ -196,11 +196,23 @@ export type PointPlace = 'inside' | 'outside' | 'on';
 export function pointInLoop(point: Point, loop: Loop, toleranceMm: number): PointPlace {
   let winding = 0;
   for (const segment of loop) {
-    if (nearestOnSegment(segment, point).distanceMm <= toleranceMm) return 'on';
+    if (isNearBox(segment, point, toleranceMm) && nearestOnSegment(segment, point).distanceMm <= toleranceMm)
+      return 'on';
     winding += chordWinding(segment, point);
     if (segment.kind === 'arc' && isInsideCap(segment, point)) winding += segment.clockwise ? -1 : 1;
   }
   return winding === 0 ? 'outside' : 'inside';
+}
+
+/** Whether a point lies in the box of a straight segment, which is quicker told than its distance; true for every arc. */
+function isNearBox({ kind, from, to }: Segment, { x, y }: Point, marginMm: number): boolean {
+  if (kind === 'arc') return true;
+  return (
+    (from.x < to.x ? from.x : to.x) - marginMm <= x &&
+    (from.x < to.x ? to.x : from.x) + marginMm >= x &&
+    (from.y < to.y ? from.y : to.y) - marginMm <= y &&
+    (from.y < to.y ? to.y : from.y) + marginMm >= y
+  );
 }
 
 /** Contribution of a chord to the winding number, by the crossing rule that counts each height once. */

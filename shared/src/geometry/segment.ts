@@ -147,11 +147,13 @@ export function nearestOnSegment(
   segment: Segment,
   point: Point,
 ): { readonly distanceMm: number; readonly point: Point } {
-  const candidates: Point[] = [segment.from, segment.to];
   if (segment.kind === 'line') {
-    const t = fractionOf(segment, point);
-    if (t > 0 && t < 1) candidates.push(between(segment.from, segment.to, t));
-  } else if (distance(point, segment.centre) > 0) {
+    const t = Math.min(1, Math.max(0, fractionOf(segment, point)));
+    const foot = t === 0 ? segment.from : t === 1 ? segment.to : between(segment.from, segment.to, t);
+    return { distanceMm: distance(foot, point), point: foot };
+  }
+  const candidates: Point[] = [segment.from, segment.to];
+  if (distance(point, segment.centre) > 0) {
     const foot = arcPointAtDirection(segment, directionDeg(subtract(point, segment.centre)));
     if (foot !== null) candidates.push(foot);
   }
