@@ -13,6 +13,7 @@ const node = {
   testEnvironment: 'node',
   // Time limits of tests say what hangs, not what is slow: two busy cores make a quick test take seconds.
   testTimeout: 30_000,
+  setupFiles: ['<rootDir>/test/support/property-runs.cjs'],
   // Types are checked by `tsc -b`; here each file is only transpiled, which keeps the suite fast.
   transform: {
     '^.+\\.ts$': ['ts-jest', { tsconfig: '<rootDir>/tsconfig.jest.json', diagnostics: false }],

@@ -16,6 +16,7 @@ import {
 import { flattenLoop } from '@foldwright/shared/geometry/flatten';
 import { circleLoop, slotLoop } from '@foldwright/shared/geometry/loop';
 import type { Loop } from '@foldwright/shared/geometry/path';
+import { runs } from '@foldwright/shared/bending/testing/runs';
 
 // The flat's area by two roads that share nothing with the kernel's joining of panels and zones: a count of trapezoids over a fine
 // polygon of the outline, and a general polygon library's union of all panels and zones less all openings.
@@ -95,7 +96,7 @@ describe('area of the flat pattern', () => {
         if (part.reliefs.mode === 'automatic')
           expect(Math.abs(areaByUnion(result.development) - areaMm2)).toBeLessThan(slackMm2);
       }),
-      { numRuns: 100 },
+      { numRuns: runs(0.3) },
     );
   });
 });

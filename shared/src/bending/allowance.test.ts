@@ -15,6 +15,7 @@ import {
 } from './allowance';
 import type { LengthReference } from './layout';
 import { HANDBOOK_BENDS, WORKED_BENDS, WORKED_STRIPS } from './testing/worked-values';
+import { runs } from './testing/runs';
 
 const REFERENCES: readonly LengthReference[] = [
   'outsideApex',
@@ -159,7 +160,7 @@ describe('references', () => {
           6,
         );
       }),
-      { numRuns: 200 },
+      { numRuns: runs() },
     );
   });
 });

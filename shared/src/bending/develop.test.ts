@@ -7,6 +7,7 @@ import { randomStrip, stripOf } from './testing/random-strips';
 import { hatLayout, lLayout, sampleStock, stripLayout, trayLayout, uLayout, zLayout } from './testing/sample-layouts';
 import { WORKED_STRIPS } from './testing/worked-values';
 import { boxOf, developed, sizeOf } from './testing/developed';
+import { runs } from './testing/runs';
 
 describe('flat lengths of whole layouts', () => {
   it.each(WORKED_STRIPS)('$id', ({ legsMm, reference, thicknessMm, bendAngleDeg, insideRadiusMm, kFactor, flatMm }) => {
@@ -66,7 +67,7 @@ describe('formed outside sizes', () => {
         expect(Math.abs((x ?? 0) - first)).toBeLessThan(0.01);
         expect(Math.abs((z ?? 0) - second)).toBeLessThan(0.01);
       }),
-      { numRuns: 200 },
+      { numRuns: runs() },
     );
   });
 
@@ -77,7 +78,7 @@ describe('formed outside sizes', () => {
         expect(Math.abs((x ?? 0) - web)).toBeLessThan(0.01);
         expect(Math.abs((z ?? 0) - flange)).toBeLessThan(0.01);
       }),
-      { numRuns: 200 },
+      { numRuns: runs() },
     );
   });
 
@@ -88,7 +89,7 @@ describe('formed outside sizes', () => {
         expect(Math.abs((x ?? 0) - (first + second - sheet.thicknessMm))).toBeLessThan(0.01);
         expect(Math.abs((z ?? 0) - web)).toBeLessThan(0.01);
       }),
-      { numRuns: 200 },
+      { numRuns: runs() },
     );
   });
 
@@ -99,7 +100,7 @@ describe('formed outside sizes', () => {
         expect(Math.abs((x ?? 0) - (crown + 2 * brim - 2 * sheet.thicknessMm))).toBeLessThan(0.01);
         expect(Math.abs((z ?? 0) - side)).toBeLessThan(0.01);
       }),
-      { numRuns: 200 },
+      { numRuns: runs() },
     );
   });
 
@@ -133,7 +134,7 @@ describe('every development', () => {
           expect((loopLength(zone.outer) - 2 * strip.widthMm) / 2).toBeCloseTo(allowance, 6);
         }
       }),
-      { numRuns: 200 },
+      { numRuns: runs() },
     );
   });
 
@@ -150,7 +151,7 @@ describe('every development', () => {
             .sort((a, b) => a - b);
         linesOf(second).forEach((x, index) => expect(x).toBeCloseTo(linesOf(first)[index] ?? NaN, 9));
       }),
-      { numRuns: 200 },
+      { numRuns: runs() },
     );
   });
 
@@ -164,7 +165,7 @@ describe('every development', () => {
         expect(flat.cutLengthMm).toBeCloseTo(2 * (flat.bounds.max.x - flat.bounds.min.x + strip.widthMm), 6);
         expect(flat.pierces).toBe(1);
       }),
-      { numRuns: 100 },
+      { numRuns: runs() },
     );
   });
 });
