@@ -5,6 +5,8 @@ import { partDocumentSchema } from '@foldwright/shared/contracts/part-document-s
 import { developPart } from '@foldwright/shared/part/develop-part';
 import { checkInvariants } from '@foldwright/shared/part/invariants';
 import { checkPart } from '@foldwright/shared/rules/check-part';
+import { layOutMesh, poseFormed } from '@foldwright/shared/bending/formed-mesh';
+import { meshFacts } from '@foldwright/shared/bending/testing/mesh-facts';
 
 const root = join(__dirname, '../..');
 const fixtures = join(root, 'test/fixtures/parts');
@@ -38,6 +40,10 @@ describe('parts with sizes worked out by hand', () => {
       expect(formedBox.max[axis] - formedBox.min[axis]).toBeCloseTo(expected.formedBoxMm[index] ?? 0, 3);
     });
     expect(checkPart(document, expected.stock).map(({ rule }) => rule)).toEqual(expected.findings);
+    expect(meshFacts(poseFormed(layOutMesh(result.development, 0.1), 1))).toMatchObject({
+      openEdges: 0,
+      isFinite: true,
+    });
     // The other sheet has to work too: a trial that cannot be bent would be no trial.
     expect(developPart(document, 'trial').ok).toBe(true);
   });

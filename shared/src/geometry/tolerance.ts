@@ -18,3 +18,6 @@ export const TINY_AREA_MM2 = 1e-9;
 
 /** Angles that differ by less are equal, degrees. */
 export const COINCIDENT_DEG = 1e-9;
+
+/** Corners this near to a triangle's edge, mm, are the ones that a triangulation took for part of it. */
+export const ON_EDGE_MM = 1e-9;

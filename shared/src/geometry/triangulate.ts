@@ -1,5 +1,6 @@
 import earcut from 'earcut';
 import type { Point } from './point';
+import { ON_EDGE_MM } from './tolerance';
 
 /**
  * Triangles of a polygon with openings, as triples of indices into all points in the order given (outer first).
@@ -25,7 +26,7 @@ export function triangulate(outer: readonly Point[], openings: readonly (readonl
     points.flatMap((point) => [point.x, point.y]),
     starts,
   );
-  return splitAtCorners(counterClockwise(found, points), nextOf);
+  return splitAtCorners(counterClockwise(found, points), nextOf, points);
 }
 
 /** The library keeps one sense for all triangles, which depends on its version and the input. */
@@ -46,32 +47,48 @@ function counterClockwise(triangles: readonly number[], points: readonly Point[]
 }
 
 /**
- * The library leaves out corners on straight runs. An edge that has no neighbour and is no edge of the polygon stands for such a
- * run: its triangle is split into a fan over the corners left out.
+ * The library leaves out corners on straight runs, along the polygon and along its own bridges to openings. An edge that has no
+ * neighbour and is no edge of the polygon stands for such a run: its triangle is split into a fan over the corners left out.
  */
-function splitAtCorners(triangles: readonly number[], nextOf: readonly number[]): readonly number[] {
-  const travelled = new Set<string>();
-  const keyOf = (from: number, to: number): string => `${String(from)} ${String(to)}`;
+function splitAtCorners(
+  triangles: readonly number[],
+  nextOf: readonly number[],
+  points: readonly Point[],
+): readonly number[] {
+  const travelled = new Set<number>();
+  const keyOf = (from: number, to: number): number => from * points.length + to;
   for (let at = 0; at + 2 < triangles.length; at += 3) {
     for (let side = 0; side < 3; side += 1) {
       travelled.add(keyOf(triangles[at + side] ?? 0, triangles[at + ((side + 1) % 3)] ?? 0));
     }
   }
-  const between = (from: number, to: number): readonly number[] => {
-    if (nextOf[from] === to || travelled.has(keyOf(to, from))) return [];
-    const skipped: number[] = [];
-    for (let at = nextOf[from]; at !== undefined && at !== to; at = nextOf[at]) {
-      if (at === from || skipped.length > nextOf.length) return [];
-      skipped.push(at);
-    }
-    return skipped;
-  };
+  const between = (from: number, to: number): readonly number[] =>
+    nextOf[from] === to || travelled.has(keyOf(to, from)) ? [] : cornersBetween(from, to, points);
   const split: number[] = [];
   for (let at = 0; at + 2 < triangles.length; at += 3) {
     const [a, b, c] = [triangles[at] ?? 0, triangles[at + 1] ?? 0, triangles[at + 2] ?? 0];
     split.push(...splitTriangle([a, b, c], [between(a, b), between(b, c), between(c, a)]));
   }
   return split;
+}
+
+/** Corners on the straight way from one to another, in order, each place once. */
+function cornersBetween(from: number, to: number, points: readonly Point[]): readonly number[] {
+  const [start, end] = [points[from], points[to]];
+  if (start === undefined || end === undefined) return [];
+  const way = { x: end.x - start.x, y: end.y - start.y };
+  const length = Math.sqrt(way.x * way.x + way.y * way.y);
+  const found: { readonly index: number; readonly at: number }[] = [];
+  points.forEach((point, index) => {
+    const off = { x: point.x - start.x, y: point.y - start.y };
+    const at = (off.x * way.x + off.y * way.y) / length;
+    if (at <= ON_EDGE_MM || at >= length - ON_EDGE_MM) return;
+    if (Math.abs(off.x * way.y - off.y * way.x) <= ON_EDGE_MM * length) found.push({ index, at });
+  });
+  found.sort((a, b) => a.at - b.at);
+  return found
+    .filter(({ at }, place) => place === 0 || at - (found[place - 1]?.at ?? 0) > ON_EDGE_MM)
+    .map(({ index }) => index);
 }
 
 type Three<T> = readonly [T, T, T];
