@@ -68,7 +68,52 @@ function bendDeg(before: TracePrimitive, after: TracePrimitive): number {
   return Math.abs((Math.atan2(Math.sin(turn), Math.cos(turn)) * 180) / Math.PI);
 }
 
+/** A plate whose upper right corner turns by 38 degrees only, rounded with R 8: the arc is 5.3 mm long and bulges by 0.44. */
+function gentlyRounded(): Point[] {
+  const turn = (38 * Math.PI) / 180;
+  const tangentMm = 8 * Math.tan(turn / 2);
+  const tip = { x: 60, y: 40 };
+  // Up along x = 60, then on to the left by 38 degrees.
+  const way = { x: -Math.sin(turn), y: Math.cos(turn) };
+  const end = { x: tip.x + 30 * way.x, y: tip.y + 30 * way.y };
+  const touch = { x: tip.x + tangentMm * way.x, y: tip.y + tangentMm * way.y };
+  return [
+    ...alongLine({ x: 0, y: 0 }, { x: 60, y: 0 }, 0.3),
+    ...alongLine({ x: 60, y: 0 }, { x: 60, y: 40 - tangentMm }, 0.3),
+    ...alongArc({ x: 52, y: 40 - tangentMm }, 8, 0, 38, 0.3),
+    ...alongLine(touch, end, 0.3),
+    ...alongLine(end, { x: 0, y: end.y }, 0.3),
+    ...alongLine({ x: 0, y: end.y }, { x: 0, y: 0 }, 0.3),
+  ];
+}
+
+/** An edge that a shadow bends by a tenth of a millimetre half way along, as two edges at an angle would. */
+function bentByShadow(): Point[] {
+  return [
+    ...alongLine({ x: 0, y: 0 }, { x: 60, y: 0.1 }, 0.3),
+    ...alongLine({ x: 60, y: 0.1 }, { x: 120, y: 0 }, 0.3),
+    ...alongLine({ x: 120, y: 0 }, { x: 120, y: 40 }, 0.3),
+    ...alongLine({ x: 120, y: 40 }, { x: 0, y: 40 }, 0.3),
+    ...alongLine({ x: 0, y: 40 }, { x: 0, y: 0 }, 0.3),
+  ];
+}
+
 describe('fitLoop', () => {
+  it.each([0, 0.03])('rounds a corner that turns by 38 degrees with R 8 under %p mm of noise', (sigmaMm) => {
+    const loop = fitLoop(shaken(gentlyRounded(), sigmaMm))?.primitives ?? [];
+    expect(loop.map(({ kind }) => kind).sort()).toEqual(['arc', 'line', 'line', 'line', 'line', 'line']);
+    const arc = loop.find(({ kind }) => kind === 'arc');
+    if (arc?.kind !== 'arc') throw new Error('no arc');
+    expect(Math.abs(Math.hypot(arc.from[0] - arc.centre[0], arc.from[1] - arc.centre[1]) - 8)).toBeLessThan(1);
+    expect(gapMm(loop)).toBeLessThan(0.01);
+  });
+
+  it('keeps one edge where a shadow bends it a little, and two where they differ', () => {
+    expect(fitLoop(shaken(bentByShadow(), 0.02))?.primitives).toHaveLength(4);
+    const bent = bentByShadow().map(({ x, y }) => ({ x, y: y < 5 ? y * 8 : y }));
+    expect(fitLoop(shaken(bent, 0.02))?.primitives).toHaveLength(5);
+  });
+
   it.each([0, 0.03, 0.06])('finds four lines and one tangent arc under %p mm of noise', (sigmaMm) => {
     const fit = fitLoop(shaken(plate(), sigmaMm));
     expect(fit?.primitives.map(({ kind }) => kind).sort()).toEqual(['arc', 'line', 'line', 'line', 'line']);

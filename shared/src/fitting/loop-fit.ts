@@ -1,4 +1,5 @@
 import type { Point } from '../geometry/point';
+import { roundCorners } from './fillets';
 import { joinPrimitives, joinTwo, type Joint } from './joints';
 import { minimise } from './least-squares';
 import { type FittedPrimitive, PrefixMoments } from './moments';
@@ -23,6 +24,9 @@ const CORNER_TRIM_MM = 0.6;
 const SLIVER_MM = 2.2;
 const SLIVER_MEETS_WITHIN_MM = 0.75;
 const SLIVER_OFF_MM = 0.5;
+/** How near one line or circle keeps to the points of two neighbours that become one, mm. */
+const MERGE_WITHIN_MM = 0.2;
+const MERGE_RMS_MM = 0.07;
 const HUBER_MM = 0.12;
 /** Pull of a tangent joint against one point's distance: enough to hold it within a thousandth of a millimetre. */
 const TANGENT_WEIGHT = 200;
@@ -148,45 +152,86 @@ function fitAlone(points: readonly Point[], kind: 'line' | 'arc'): FittedPrimiti
   return circle?.primitive ?? moments.line(0, points.length).primitive;
 }
 
+/** A stretch while slivers are taken away: whether it has taken one already, at either end. */
+interface Growing extends Stretch {
+  readonly hasGrownAtStart: boolean;
+  readonly hasGrownAtEnd: boolean;
+}
+
 /** The stretches without those that only follow the blur of a corner: their points go to both neighbours. */
 function withoutSlivers(stretches: readonly Stretch[], points: readonly Point[]): readonly Stretch[] {
-  const kept = [...stretches];
-  // A neighbour that has taken one sliver takes no other: two in a row are a curve, not the blur of a corner.
-  const grown = new Set<Stretch>();
+  const kept: Growing[] = stretches.map((stretch) => ({ ...stretch, hasGrownAtStart: false, hasGrownAtEnd: false }));
   for (let index = 0; index < kept.length && kept.length > 3; index++) {
-    const sliver = kept[index];
-    const before = kept[(index + kept.length - 1) % kept.length];
-    const after = kept[(index + 1) % kept.length];
-    if (!sliver || !before || !after || grown.has(before) || grown.has(after) || grown.has(sliver)) continue;
-    const own = stretchPoints(points, sliver);
-    const first = own[0];
-    const last = own.at(-1);
-    const middle = own[own.length >> 1];
-    if (!first || !last || !middle || Math.hypot(first.x - last.x, first.y - last.y) > SLIVER_MM) continue;
-    const a = fitAlone(trimmed(stretchPoints(points, before)), before.kind);
-    const b = fitAlone(trimmed(stretchPoints(points, after)), after.kind);
-    const meeting = joinTwo(a, b, middle);
-    const isCorner =
-      Math.hypot(meeting.at.x - middle.x, meeting.at.y - middle.y) < SLIVER_MEETS_WITHIN_MM &&
-      own.every(
-        (point) =>
-          Math.min(Math.abs(distanceToPrimitive(a, point)), Math.abs(distanceToPrimitive(b, point))) < SLIVER_OFF_MM,
-      );
-    if (!isCorner) continue;
+    const at = { before: (index + kept.length - 1) % kept.length, after: (index + 1) % kept.length };
+    const [before, sliver, after] = [kept[at.before], kept[index], kept[at.after]];
+    if (!before || !sliver || !after || !isCornerBlur(before, sliver, after, points)) continue;
     const half = sliver.count >> 1;
-    const longerBefore = { ...before, count: before.count + half };
-    const longerAfter = {
+    kept[at.before] = { ...before, count: before.count + half, hasGrownAtEnd: true };
+    kept[at.after] = {
       ...after,
       first: (sliver.first + half) % points.length,
       count: after.count + sliver.count - half,
+      hasGrownAtStart: true,
     };
-    kept[(index + kept.length - 1) % kept.length] = longerBefore;
-    kept[(index + 1) % kept.length] = longerAfter;
-    grown.add(longerBefore).add(longerAfter);
     kept.splice(index, 1);
     index--;
   }
+  return kept.map(({ kind, first, count }) => ({ kind, first, count }));
+}
+
+/** Whether a stretch is short and its neighbours, carried on, make a corner near it. Two slivers in a row are a curve. */
+function isCornerBlur(before: Growing, sliver: Growing, after: Growing, points: readonly Point[]): boolean {
+  if (before.hasGrownAtEnd || after.hasGrownAtStart || sliver.hasGrownAtStart || sliver.hasGrownAtEnd) return false;
+  const own = stretchPoints(points, sliver);
+  const [first, middle, last] = [own[0], own[own.length >> 1], own.at(-1)];
+  if (!first || !last || !middle || Math.hypot(first.x - last.x, first.y - last.y) > SLIVER_MM) return false;
+  const a = fitAlone(trimmed(stretchPoints(points, before)), before.kind);
+  const b = fitAlone(trimmed(stretchPoints(points, after)), after.kind);
+  const meeting = joinTwo(a, b, middle);
+  return (
+    Math.hypot(meeting.at.x - middle.x, meeting.at.y - middle.y) < SLIVER_MEETS_WITHIN_MM &&
+    own.every(
+      (point) =>
+        Math.min(Math.abs(distanceToPrimitive(a, point)), Math.abs(distanceToPrimitive(b, point))) < SLIVER_OFF_MM,
+    )
+  );
+}
+
+/** Neighbours that one line or one circle serves as well, within what shadows bend an edge, become one. */
+function merged(stretches: readonly Stretch[], points: readonly Point[]): readonly Stretch[] {
+  let kept = stretches;
+  while (kept.length > 3) {
+    let best: { readonly index: number; readonly stretch: Stretch; readonly rmsMm: number } | null = null;
+    for (let index = 0; index < kept.length; index++) {
+      const union = unionOf(kept[index], kept[(index + 1) % kept.length], points);
+      if (union !== null && (best === null || union.rmsMm < best.rmsMm)) best = { index, ...union };
+    }
+    if (best === null) return kept;
+    const { index, stretch } = best;
+    const isLast = index === kept.length - 1;
+    kept = isLast ? [stretch, ...kept.slice(1, -1)] : kept.toSpliced(index, 2, stretch);
+  }
   return kept;
+}
+
+/** Two neighbours as one stretch, or `null` when no single line or circle keeps near enough to their points. */
+function unionOf(
+  before: Stretch | undefined,
+  after: Stretch | undefined,
+  points: readonly Point[],
+): { readonly stretch: Stretch; readonly rmsMm: number } | null {
+  if (!before || !after) return null;
+  const count = before.count + after.count;
+  const used = trimmed(stretchPoints(points, { ...before, count }));
+  const kinds = before.kind === 'line' && after.kind === 'line' ? (['line'] as const) : (['line', 'arc'] as const);
+  for (const kind of kinds) {
+    const primitive = fitAlone(used, kind);
+    if (primitive.kind !== kind) continue;
+    const rms = rmsMm(primitive, used);
+    const isNear = used.every((point) => Math.abs(distanceToPrimitive(primitive, point)) <= MERGE_WITHIN_MM);
+    if (rms <= MERGE_RMS_MM && isNear) return { stretch: { kind, first: before.first, count }, rmsMm: rms };
+  }
+  return null;
 }
 
 /**
@@ -195,7 +240,8 @@ function withoutSlivers(stretches: readonly Stretch[], points: readonly Point[])
  * `null` when the chain is too short or its pieces do not close.
  */
 export function fitLoop(points: readonly Point[], options: SplitOptions = DEFAULT_SPLIT): LoopFit | null {
-  const stretches = withoutSlivers(splitContour(points, options), points);
+  const split = withoutSlivers(splitContour(points, options), points);
+  const stretches = roundCorners(merged(split, points), points);
   if (stretches.length < 2) return null;
   const groups = stretches.map((stretch): Group => {
     const all = stretchPoints(points, stretch);
