@@ -19,7 +19,7 @@ const MOST_TURN_DEG = 165;
 /** A rounding keeps to its points this well, mm (root mean square), and takes this much off the squares, in squared sigmas. */
 const ROUNDED_WITHIN_MM = 0.08;
 const SIGMA_MM = 0.05;
-const LEAST_GAIN = 90;
+const LEAST_GAIN = 40;
 
 interface Edge {
   /** A point of the line and its direction of travel. */
