@@ -45,6 +45,8 @@ async function resultOf(reader: PhotoReader, name: string): Promise<Result> {
   try {
     const { trace } = await reader.read(readFileSync(path.join(FOLDER, `${name}.jpg`)), {
       thicknessMm: truth.thicknessMm,
+      // The rulers were measured: the renderer prints true to scale.
+      printScale: [1, 1],
     });
     const ms = trace.timingsMs['total'] ?? performance.now() - began;
     const score = scoreTrace(trace, truth);
