@@ -185,6 +185,11 @@ export function loopReach(loop: Loop, direction: Point): number {
   }, -Infinity);
 }
 
+/** How far the loop reaches from and to along a direction, exact with arcs. */
+export function loopExtent(loop: Loop, direction: Point): { readonly low: number; readonly high: number } {
+  return { low: -loopReach(loop, { x: -direction.x, y: -direction.y }), high: loopReach(loop, direction) };
+}
+
 /** Where a point lies. `on` means within the tolerance of the boundary. */
 export type PointPlace = 'inside' | 'outside' | 'on';
 

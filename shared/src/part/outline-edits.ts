@@ -2,7 +2,7 @@ import type { OutlineEdge, OutlineLoop } from '../bending/layout';
 import type { Point } from '../geometry/point';
 import { nearestOnSegment, segmentFromBulge } from '../geometry/segment';
 import { COINCIDENT_MM, JOIN_MM } from '../geometry/tolerance';
-import { along, cross, distance, dot, scale, subtract, unit } from '../geometry/vector';
+import { along, cross, distance, dot, magnitude, scale, subtract, unit } from '../geometry/vector';
 import { CommandRefusal } from './command-refusal';
 import { crossing, edgeAt, edgeLengthMm, findEdge, roundedCorner, straightDirection } from './outline-edge-sizes';
 import type { EdgeInChain } from './outline-edge-sizes';
@@ -209,5 +209,5 @@ function mustBeStraight(loop: OutlineLoop, index: number, edgeId: string): Point
 }
 
 function unitOr(vector: Point, fallback: Point): Point {
-  return Math.hypot(vector.x, vector.y) > 0 ? unit(vector) : fallback;
+  return magnitude(vector) > 0 ? unit(vector) : fallback;
 }

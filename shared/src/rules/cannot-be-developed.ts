@@ -26,13 +26,13 @@ const ADVICE: Readonly<Record<DevelopmentProblem['code'], string>> = {
   holeUnknown: 'Choose a thread from the fastener table.',
 };
 
-/** What stands in the way of a flat pattern, as findings. `skip` names problems that another rule tells better. */
+/** What stands in the way of a flat pattern, as findings. `isTold` knows problems that another rule tells better. */
 export function checkCannotBeDeveloped(
   context: RuleContext,
-  skip: ReadonlySet<DevelopmentProblem['code']>,
+  isTold: (problem: DevelopmentProblem) => boolean,
 ): readonly Finding[] {
   return context.problems
-    .filter(({ code }) => !skip.has(code))
+    .filter((problem) => !isTold(problem))
     .map((problem): Finding => {
       const at = placeOfIds(context, problem.ids);
       return {

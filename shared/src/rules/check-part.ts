@@ -1,33 +1,66 @@
 import type { DevelopmentProblem, DevelopmentResult } from '../bending/development';
+import { applyCommands } from '../part/apply-command';
+import { CommandRefusal } from '../part/command-refusal';
+import type { PartCommand } from '../part/commands';
 import { developPart } from '../part/develop-part';
 import { entityNames } from '../part/entity-names';
 import type { PartDocument, StockRole } from '../part/part-document';
 import { findMaterial } from '../stock/materials';
+import { checkBlankOutOfRange } from './blank-out-of-range';
+import { checkBrakeTooSmall } from './brake-too-small';
 import { checkCannotBeDeveloped } from './cannot-be-developed';
 import { checkDeclaredUse } from './declared-use';
+import { checkDeliveredRadius } from './delivered-radius';
+import { checkDieOpening } from './die-opening';
+import { checkDrawnTwice } from './drawn-twice';
+import { checkEdgeInBendZone } from './edge-in-bend-zone';
+import { checkEtchedText } from './etched-text';
 import type { Finding, Severity } from './finding';
 import { checkFlangeTooShort } from './flange-too-short';
 import { checkHoleInBendZone } from './hole-in-bend-zone';
 import { checkHoleTooSmall } from './hole-too-small';
+import { checkInsideCorner } from './inside-corner';
 import { checkLandTooThin } from './land-too-thin';
 import { checkMissingRelief } from './missing-relief';
 import { checkOutlineCrossesItself } from './outline-crosses-itself';
+import { checkPieceDropsOut } from './piece-drops-out';
 import { checkRadiusBelowMinimum } from './radius-below-minimum';
-import type { RuleContext } from './rule-context';
+import type { RuleContext, TryOut } from './rule-context';
+import { checkSeatCorner } from './seat-corner';
+import { checkTinyEdge } from './tiny-edge';
+import { checkUnitsSlip } from './units-slip';
+import { checkWrongHand } from './wrong-hand';
 
 /** Version of the rules and their limits; a release keeps it. Raised whenever a rule answers differently. */
-export const RULES_VERSION = 1;
+export const RULES_VERSION = 2;
 
-const RULES = [
+type Rule = (context: RuleContext) => readonly Finding[];
+
+/** Rules about outline, flat pattern and bends alone. They are quick, and mends are tried on them. */
+const PLAIN_RULES: readonly Rule[] = [
+  checkUnitsSlip,
   checkOutlineCrossesItself,
+  checkDrawnTwice,
+  checkTinyEdge,
   checkFlangeTooShort,
   checkHoleInBendZone,
+  checkEdgeInBendZone,
   checkMissingRelief,
   checkRadiusBelowMinimum,
+  checkDeliveredRadius,
+  checkDieOpening,
+  checkBrakeTooSmall,
+  checkBlankOutOfRange,
   checkHoleTooSmall,
   checkLandTooThin,
-  checkDeclaredUse,
-] as const;
+  checkPieceDropsOut,
+  checkInsideCorner,
+  checkEtchedText,
+  checkSeatCorner,
+  checkWrongHand,
+];
+
+const RULES: readonly Rule[] = [...PLAIN_RULES, checkDeclaredUse];
 
 /**
  * All checks of a part in one of its sheets, worst first.
@@ -43,8 +76,16 @@ export function checkDevelopedPart(
   role: StockRole,
   result: DevelopmentResult,
 ): readonly Finding[] {
+  const context = contextOf(document, role, result);
+  const findings = findWith(RULES, { ...context, tryOut: tryOutOn(context) });
+  return [...findings].sort((a, b) => RANK[a.severity] - RANK[b.severity]);
+}
+
+const RANK: Readonly<Record<Severity, number>> = { blocker: 0, caution: 1, hint: 2 };
+
+function contextOf(document: PartDocument, role: StockRole, result: DevelopmentResult): RuleContext {
   const sheet = document.stocks[role];
-  const context: RuleContext = {
+  return {
     document,
     role,
     sheet,
@@ -52,18 +93,49 @@ export function checkDevelopedPart(
     names: entityNames(document.layout),
     development: result.ok ? result.development : null,
     problems: result.ok ? [] : result.problems,
+    tryOut: null,
   };
-  const found = RULES.flatMap((check) => check(context));
-  const findings = [...found, ...checkCannotBeDeveloped(context, toldAlready(found))];
-  return findings.sort((a, b) => RANK[a.severity] - RANK[b.severity]);
 }
 
-const RANK: Readonly<Record<Severity, number>> = { blocker: 0, caution: 1, hint: 2 };
+function findWith(rules: readonly Rule[], context: RuleContext): readonly Finding[] {
+  const found = rules.flatMap((check) => check(context));
+  return [...found, ...checkCannotBeDeveloped(context, (problem) => isTold(problem, found))];
+}
 
-/** A bad outline is told by the rules that show where: crossing edges, or an opening over the edge. */
-function toldAlready(findings: readonly Finding[]): ReadonlySet<DevelopmentProblem['code']> {
-  const isTold = findings.some(
-    ({ rule, severity }) => severity === 'blocker' && (rule === 'outlineCrossesItself' || rule === 'landTooThin'),
-  );
-  return new Set(isTold ? (['outlineNotSimple'] as const) : []);
+/** Mends are compared with the findings of the document as it is, which are looked for once and only when needed. */
+function tryOutOn(context: RuleContext): TryOut {
+  let known: ReadonlySet<string> | null = null;
+  return (commands) => {
+    const document = applied(context.document, commands);
+    if (document === null) return null;
+    known ??= blockerIds(findWith(PLAIN_RULES, context));
+    const before = known;
+    const after = findWith(PLAIN_RULES, contextOf(document, context.role, developPart(document, context.role)));
+    return {
+      findingIds: new Set(after.map(({ id }) => id)),
+      addsBlocker: [...blockerIds(after)].some((id) => !before.has(id)),
+    };
+  };
+}
+
+function applied(document: PartDocument, commands: readonly PartCommand[]): PartDocument | null {
+  try {
+    return applyCommands(document, commands);
+  } catch (error) {
+    if (error instanceof CommandRefusal) return null;
+    throw error;
+  }
+}
+
+function blockerIds(findings: readonly Finding[]): ReadonlySet<string> {
+  return new Set(findings.filter(({ severity }) => severity === 'blocker').map(({ id }) => id));
+}
+
+/** A bad outline and things drawn twice are told by the rules that show where. */
+function isTold({ code, ids }: DevelopmentProblem, findings: readonly Finding[]): boolean {
+  const blockers = findings.filter(({ severity }) => severity === 'blocker');
+  const twice = blockers.filter(({ rule }) => rule === 'drawnTwice').flatMap((finding) => finding.ids);
+  if (ids.length > 0 && ids.every((id) => twice.includes(id))) return true;
+  const isOfOutline = blockers.some(({ rule }) => rule === 'outlineCrossesItself' || rule === 'landTooThin');
+  return code === 'outlineNotSimple' && (isOfOutline || twice.length > 0);
 }

@@ -1,7 +1,9 @@
+import type { Layout } from '../bending/layout';
 import type { Loop } from '../geometry/path';
 import { circleLoop, loopFromBulges, pointInLoop, slotLoop } from '../geometry/loop';
 import type { Point } from '../geometry/point';
 import { findHoleDiameterMm } from '../stock/hole-diameter';
+import { copyIds } from './copies';
 import { placeOfLayout, type RuleContext } from './rule-context';
 
 /** An opening as the laser cuts it. */
@@ -22,16 +24,7 @@ export interface CutSheet {
 /** Outline and openings in the flat pattern; in the layout when the part cannot be developed. */
 export function cutSheet(context: RuleContext): CutSheet {
   const { document, development } = context;
-  const { layout } = document;
-  if (development === null) {
-    const features = layout.features.flatMap((feature): readonly CutOpening[] => {
-      if (feature.kind === 'slot') return [slotOpening(feature.id, feature.from, feature.to, feature.widthMm)];
-      const diameterMm = findHoleDiameterMm(feature.purpose);
-      return diameterMm === null ? [] : [holeOpening(feature.id, feature.centre, diameterMm)];
-    });
-    const cutouts = layout.cutouts.map(({ id, edges }) => cutoutOpening(id, loopFromBulges(edges)));
-    return { frame: 'layout', outer: loopFromBulges(layout.outer.edges), openings: [...features, ...cutouts] };
-  }
+  if (development === null) return drawnSheet(document.layout);
   const { flat } = development;
   return {
     frame: 'flat',
@@ -42,6 +35,25 @@ export function cutSheet(context: RuleContext): CutSheet {
       ...flat.cutouts.map((loop, index) => cutoutOpening(cutoutId(context, loop) ?? `cutout-${index}`, loop)),
     ],
   };
+}
+
+/** Outline and openings as drawn. What was drawn twice counts once. */
+export function drawnSheet(layout: Layout): CutSheet {
+  const copies = copyIds(layout);
+  const features = layout.features.flatMap((feature): readonly CutOpening[] => {
+    if (feature.kind === 'slot') return [slotOpening(feature.id, feature.from, feature.to, feature.widthMm)];
+    const diameterMm = findHoleDiameterMm(feature.purpose);
+    return diameterMm === null ? [] : [holeOpening(feature.id, feature.centre, diameterMm)];
+  });
+  const cutouts = layout.cutouts.map(({ id, edges }) => cutoutOpening(id, loopFromBulges(edges)));
+  const openings = [...features, ...cutouts].filter(({ id }) => !copies.has(id));
+  return { frame: 'layout', outer: loopFromBulges(layout.outer.edges), openings };
+}
+
+/** Whether one opening starts inside another; for openings that do not cross it then lies inside whole. */
+export function isInsideOf(inner: CutOpening, outer: CutOpening): boolean {
+  const point = inner.loop[0]?.from;
+  return point !== undefined && pointInLoop(point, outer.loop, 0) === 'inside';
 }
 
 /** Layout cut-out that a loop of the flat pattern came from: one of its corners lies on the loop. */

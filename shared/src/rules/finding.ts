@@ -14,7 +14,20 @@ export type RuleId =
   | 'landTooThin'
   | 'outlineCrossesItself'
   | 'cannotBeDeveloped'
-  | 'declaredUse';
+  | 'declaredUse'
+  | 'edgeInBendZone'
+  | 'insideCornerTooSharp'
+  | 'pieceDropsOut'
+  | 'blankOutOfRange'
+  | 'brakeTooSmall'
+  | 'dieOpeningUnusual'
+  | 'etchedText'
+  | 'deliveredRadius'
+  | 'seatCorner'
+  | 'unitsSlip'
+  | 'drawnTwice'
+  | 'tinyEdge'
+  | 'wrongHand';
 
 /** A mend that one click applies; `label` is a verb phrase ("Move both 0.5 mm out"). */
 export interface Mend {

@@ -1,6 +1,5 @@
 import type { BendZone, Development } from '../bending/development';
-import { loopReach } from '../geometry/loop';
-import type { Loop } from '../geometry/path';
+import { loopExtent } from '../geometry/loop';
 import type { Point } from '../geometry/point';
 import { invert, moveLoop, movePoint, shiftBy } from '../geometry/transform';
 import { add, between, dot, scale, subtract } from '../geometry/vector';
@@ -8,6 +7,7 @@ import type { PartCommand } from '../part/commands';
 import { formatDecimal } from '../units/length';
 import { type CutOpening, cutSheet } from './cut-openings';
 import type { Finding, Severity } from './finding';
+import { capital } from './in-words';
 import { DIE_MOUTH, LIMIT_SLACK_MM, TANGENT_DISTANCE } from './limits';
 import { type RuleContext, listNames, nameOf, panelAt, placeOfFlat } from './rule-context';
 
@@ -39,11 +39,11 @@ export function checkHoleInBendZone(context: RuleContext): readonly Finding[] {
 
 function intrusionOf(development: Development, opening: CutOpening, zone: BendZone): Intrusion | null {
   const { thicknessMm, vOpeningMm } = development.stock;
-  const beside = range(opening.loop, zone.along);
-  const bendRange = range(zone.outer, zone.along);
+  const beside = loopExtent(opening.loop, zone.along);
+  const bendRange = loopExtent(zone.outer, zone.along);
   if (beside.high <= bendRange.low || beside.low >= bendRange.high) return null;
   const centre = dot(zone.origin, zone.towardsChild) + zone.bendAllowanceMm / 2;
-  const { low, high } = range(opening.loop, zone.towardsChild);
+  const { low, high } = loopExtent(opening.loop, zone.towardsChild);
   const halfMouthMm = DIE_MOUTH.shareOfV * vOpeningMm;
   const nearMm = zone.bendAllowanceMm / 2 + TANGENT_DISTANCE.overT * thicknessMm;
   const clearMm = Math.max(halfMouthMm, nearMm);
@@ -59,11 +59,6 @@ function intrusionOf(development: Development, opening: CutOpening, zone: BendZo
     requiredMm: clearMm,
     away: isOnChildSide ? zone.towardsChild : scale(zone.towardsChild, -1),
   };
-}
-
-/** Extent of a loop along a direction, exact with arcs. */
-function range(loop: Loop, direction: Point): { readonly low: number; readonly high: number } {
-  return { low: -loopReach(loop, scale(direction, -1)), high: loopReach(loop, direction) };
 }
 
 /** Openings at the same bend, of the same kind and depth, make one finding: a person moves them together. */
@@ -131,8 +126,4 @@ function moveAway(context: RuleContext, development: Development, intrusion: Int
   const from = feature.kind === 'hole' ? feature.centre : between(feature.from, feature.to, 0.5);
   const by = subtract(movePoint(invert(panel.placement), target), from);
   return [{ kind: 'moveFeature', featureId: opening.id, by }];
-}
-
-function capital(text: string): string {
-  return text.charAt(0).toUpperCase() + text.slice(1);
 }

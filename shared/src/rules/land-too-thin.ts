@@ -6,7 +6,7 @@ import { moveLoop, shiftBy } from '../geometry/transform';
 import { segmentBounds } from '../geometry/segment';
 import { boundsMeet, magnitude, scale, subtract } from '../geometry/vector';
 import { formatDecimal } from '../units/length';
-import { type CutOpening, type CutSheet, cutSheet } from './cut-openings';
+import { type CutOpening, type CutSheet, cutSheet, isInsideOf } from './cut-openings';
 import type { Finding, Mend } from './finding';
 import { LAND, LIMIT_SLACK_MM } from './limits';
 import { type RuleContext, layoutShift, nameOf, placeOfFlat } from './rule-context';
@@ -125,14 +125,9 @@ function checkBetween(
 ): readonly Finding[] {
   const land = loopClearance(first.loop, second.loop);
   if (land === null) return [];
-  const isInside = [
-    [first, second],
-    [second, first],
-  ].some(([inner, outer]) => {
-    const point = inner?.loop[0]?.from;
-    return point !== undefined && outer !== undefined && pointInLoop(point, outer.loop, 0) === 'inside';
-  });
-  const foundMm = isInside ? 0 : land.distanceMm;
+  const foundMm = land.distanceMm;
+  // An opening inside another has no land beside it; that it drops out is told by a rule of its own.
+  if (foundMm > LIMIT_SLACK_MM && (isInsideOf(first, second) || isInsideOf(second, first))) return [];
   if (foundMm >= requiredMm - LIMIT_SLACK_MM) return [];
   const isBlocker = foundMm <= LIMIT_SLACK_MM;
   const names = `${named(context, first)} and ${lower(named(context, second))}`;

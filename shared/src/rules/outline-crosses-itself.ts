@@ -4,15 +4,17 @@ import type { Loop } from '../geometry/path';
 import { segmentLength } from '../geometry/segment';
 import { COINCIDENT_MM } from '../geometry/tolerance';
 import { edgeSegment } from '../part/outline-edge-sizes';
+import { copyIds } from './copies';
 import type { Finding } from './finding';
 import { type RuleContext, listNames, nameOf, placeOfLayout } from './rule-context';
 
 const WHY = { text: 'a cut has two sides', source: 'plane geometry', confidence: 'published' } as const;
 
-/** Edges of the outline and its cut-outs that cross, touch or lie on one another, as drawn. */
+/** Edges of the outline and its cut-outs that cross, touch or lie on one another, as drawn. Cut-outs drawn twice count once. */
 export function checkOutlineCrossesItself(context: RuleContext): readonly Finding[] {
   const { layout } = context.document;
-  const chains = [layout.outer, ...layout.cutouts].map(usableEdges);
+  const copies = copyIds(layout);
+  const chains = [layout.outer, ...layout.cutouts.filter(({ id }) => !copies.has(id))].map(usableEdges);
   const seen = new Set<string>();
   return findCrossings(
     chains.map(({ loop }) => loop),

@@ -29,12 +29,7 @@ function checkBend(
 ): readonly Finding[] {
   const thicknessMm = context.sheet.thicknessMm;
   const { minimumRadius } = material;
-  const recommendedOverT =
-    minimumRadius.rows.find(({ upToThicknessMm }) => thicknessMm <= upToThicknessMm * NOMINAL_THICKNESS_SLACK)
-      ?.recommendedOverT ??
-    minimumRadius.rows[minimumRadius.rows.length - 1]?.recommendedOverT ??
-    0;
-  const acrossMm = recommendedOverT * thicknessMm;
+  const acrossMm = acrossGrainMm(material, thicknessMm);
   const grain = grainOf(context.sheet.grainDirectionDeg, bend);
   const requiredMm = grain === 'across' ? acrossMm : acrossMm * ALONG_GRAIN.factor;
   const absoluteMm = (minimumRadius.absoluteOverT ?? 0) * thicknessMm;
@@ -87,6 +82,20 @@ function checkBend(
       },
     },
   ];
+}
+
+/** Smallest inside radius across the grain that the material's table wants for a thickness, mm. */
+function acrossGrainMm({ minimumRadius: { rows } }: SheetMaterial, thicknessMm: number): number {
+  const row = rows.find(({ upToThicknessMm }) => thicknessMm <= upToThicknessMm * NOMINAL_THICKNESS_SLACK);
+  return ((row ?? rows[rows.length - 1])?.recommendedOverT ?? 0) * thicknessMm;
+}
+
+/** Whether the sheet stands a bend of this radius, its grain considered; true where the tables know no material. */
+export function standsRadius({ material, sheet }: RuleContext, bend: BendDeclaration, radiusMm: number): boolean {
+  if (material === null) return true;
+  const acrossMm = acrossGrainMm(material, sheet.thicknessMm);
+  const isAcross = grainOf(sheet.grainDirectionDeg, bend) === 'across';
+  return radiusMm >= acrossMm * (isAcross ? 1 : ALONG_GRAIN.factor) - LIMIT_SLACK_MM;
 }
 
 /** How a bend lies to the rolling direction: within 45° of it counts as along. */

@@ -3,6 +3,7 @@ import { pointInLoop } from '../geometry/loop';
 import type { Point } from '../geometry/point';
 import { COINCIDENT_MM } from '../geometry/tolerance';
 import { invert, moveDirection, movePoint } from '../geometry/transform';
+import type { PartCommand } from '../part/commands';
 import type { PartDocument, SheetStock, StockRole } from '../part/part-document';
 import type { SheetMaterial } from '../stock/material';
 
@@ -18,7 +19,17 @@ export interface RuleContext {
   /** Null when the part cannot be developed; `problems` then says why. */
   readonly development: Development | null;
   readonly problems: readonly DevelopmentProblem[];
+  /** Tries commands out; null while that is being done already, so that it comes to an end. */
+  readonly tryOut: TryOut | null;
 }
+
+/** What commands would lead to in the same sheet; null when the document refuses them. */
+export type TryOut = (commands: readonly PartCommand[]) => {
+  /** Ids of the findings that there would be. */
+  readonly findingIds: ReadonlySet<string>;
+  /** Whether something that cannot be made would be new. */
+  readonly addsBlocker: boolean;
+} | null;
 
 /** Name of a thing, or its id when it has none. */
 export function nameOf(context: RuleContext, id: string): string {
@@ -30,6 +41,14 @@ export function listNames(names: readonly string[]): string {
   if (names.length < 2) return names[0] ?? '';
   return `${names.slice(0, -1).join(', ')} and ${names[names.length - 1] ?? ''}`;
 }
+
+/** The same for lists that may be long: "E1, E2, E3 and 12 more". */
+export function listSome(names: readonly string[]): string {
+  if (names.length <= LISTED) return listNames(names);
+  return `${names.slice(0, LISTED - 1).join(', ')} and ${names.length - LISTED + 1} more`;
+}
+
+const LISTED = 6;
 
 /** Panel of the flat pattern that a point lies in; null inside a bend zone or off the sheet. */
 export function panelAt(development: Development, flatPoint: Point): Panel | null {
