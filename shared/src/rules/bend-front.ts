@@ -1,7 +1,11 @@
 import type { BendZone, Development, Panel } from '../bending/development';
+import type { OutlineLoop } from '../bending/layout';
 import type { Loop, Segment } from '../geometry/path';
 import type { Point } from '../geometry/point';
+import { nearestOnSegment, pointAt } from '../geometry/segment';
+import { invert, movePoint } from '../geometry/transform';
 import { along, dot, scale, subtract } from '../geometry/vector';
+import { chainSegments } from '../part/outline-edge-sizes';
 
 /** One side of a bend: the panel there, and its boundary as seen from the tangent line. Flat-pattern coordinates. */
 export interface BendFront {
@@ -58,3 +62,18 @@ function frontOf(development: Development, zone: BendZone, side: 'child' | 'pare
 
 /** Points of a tangent line carry rounding from being moved into the flat pattern. */
 const ON_LINE_MM = 1e-4;
+
+/** Edge of these outlines that a piece of a panel's boundary came from; null for everything else. */
+export function outlineEdgeOf(outlines: readonly OutlineLoop[], { panel }: BendFront, segment: Segment): string | null {
+  const middle = movePoint(invert(panel.placement), pointAt(segment, 0.5));
+  for (const outline of outlines) {
+    const index = chainSegments(outline).findIndex(
+      (edge) => nearestOnSegment(edge, middle).distanceMm <= BOUNDARY_MATCH_MM,
+    );
+    if (index >= 0) return outline.edges[index]?.id ?? null;
+  }
+  return null;
+}
+
+/** Boundaries were moved into the flat pattern unchanged; they come back to within rounding. */
+export const BOUNDARY_MATCH_MM = 0.001;

@@ -2,12 +2,10 @@ import type { Development } from '../bending/development';
 import { edgeCrossings } from '../geometry/clip';
 import type { Loop, Segment } from '../geometry/path';
 import type { Point } from '../geometry/point';
-import { extremePoint, nearestOnSegment, pointAt } from '../geometry/segment';
-import { invert, movePoint } from '../geometry/transform';
+import { extremePoint, nearestOnSegment } from '../geometry/segment';
 import { dot, scale, subtract, unit } from '../geometry/vector';
-import { chainSegments } from '../part/outline-edge-sizes';
 import { formatDecimal } from '../units/length';
-import { type BendFront, bendFronts } from './bend-front';
+import { BOUNDARY_MATCH_MM, type BendFront, bendFronts, outlineEdgeOf } from './bend-front';
 import type { Finding, Mend } from './finding';
 import { DIE_MOUTH, LIMIT_SLACK_MM, TANGENT_DISTANCE } from './limits';
 import { mendThatHolds } from './mend-that-holds';
@@ -30,16 +28,10 @@ interface NearEdge {
 export function checkEdgeInBendZone(context: RuleContext): readonly Finding[] {
   const { development } = context;
   if (development === null) return [];
-  const outline = chainSegments(context.document.layout.outer);
-  return bendFronts(development).flatMap((front) => checkFront(context, development, front, outline));
+  return bendFronts(development).flatMap((front) => checkFront(context, development, front));
 }
 
-function checkFront(
-  context: RuleContext,
-  development: Development,
-  front: BendFront,
-  outline: readonly Segment[],
-): readonly Finding[] {
+function checkFront(context: RuleContext, development: Development, front: BendFront): readonly Finding[] {
   const { thicknessMm, vOpeningMm } = development.stock;
   const halfZoneMm = front.zone.bendAllowanceMm / 2;
   const nearMm = TANGENT_DISTANCE.overT * thicknessMm;
@@ -48,7 +40,7 @@ function checkFront(
   if (isLow) return [];
   const near = withoutFlanks(
     front,
-    front.runs.flatMap((run) => nearEdges(context, front, run, clearMm, thicknessMm, outline)),
+    front.runs.flatMap((run) => nearEdges(context, front, run, clearMm, thicknessMm)),
   );
   const [first] = near;
   if (first === undefined) return [];
@@ -97,7 +89,6 @@ function nearEdges(
   run: Loop,
   clearMm: number,
   thicknessMm: number,
-  outline: readonly Segment[],
 ): readonly NearEdge[] {
   const isClear = (segment: Segment) => peakOf(front, segment) >= clearMm - LIMIT_SLACK_MM;
   const leaves = run.findIndex(isClear);
@@ -109,7 +100,7 @@ function nearEdges(
     if (at === null) return [];
     const heightMm = front.heightOf(at);
     if (heightMm <= LIMIT_SLACK_MM || heightMm >= clearMm - LIMIT_SLACK_MM) return [];
-    const edgeId = edgeOf(context, front, segment, outline);
+    const edgeId = outlineEdgeOf([context.document.layout.outer], front, segment);
     return edgeId === null ? [] : [{ edgeId, segment, at, heightMm }];
   });
 }
@@ -120,7 +111,8 @@ function withoutFlanks(front: BendFront, near: readonly NearEdge[]): readonly Ne
   const bottoms = near.filter((edge) => !isFlank(edge));
   return near.filter(
     (edge) =>
-      !isFlank(edge) || !bottoms.some(({ segment }) => nearestOnSegment(segment, edge.at).distanceMm <= MATCH_MM),
+      !isFlank(edge) ||
+      !bottoms.some(({ segment }) => nearestOnSegment(segment, edge.at).distanceMm <= BOUNDARY_MATCH_MM),
   );
 }
 
@@ -154,26 +146,11 @@ function nearestBeside(
       ...[stretch.low, stretch.high].flatMap((level) =>
         edgeCrossings(segment, { origin: scale(axis, level), inward: axis }, LIMIT_SLACK_MM),
       ),
-    ].filter((point) => isBeside(point) && nearestOnSegment(segment, point).distanceMm <= MATCH_MM);
+    ].filter((point) => isBeside(point) && nearestOnSegment(segment, point).distanceMm <= BOUNDARY_MATCH_MM);
     for (const point of candidates) if (best === null || dot(point, outward) < dot(best, outward)) best = point;
   }
   return best;
 }
-
-/** Outline edge of the layout that a piece of the panel's boundary came from; null for reliefs and openings. */
-function edgeOf(
-  context: RuleContext,
-  { panel }: BendFront,
-  segment: Segment,
-  outline: readonly Segment[],
-): string | null {
-  const middle = movePoint(invert(panel.placement), pointAt(segment, 0.5));
-  const index = outline.findIndex((edge) => nearestOnSegment(edge, middle).distanceMm <= MATCH_MM);
-  return context.document.layout.outer.edges[index]?.id ?? null;
-}
-
-/** Boundaries were moved into the flat pattern unchanged; they come back to within rounding. */
-const MATCH_MM = 0.001;
 
 /** Slides a straight edge away from the bend until it is clear, which fills a notch or raises a step. */
 function pushOut(context: RuleContext, findingId: string, edge: NearEdge, clearMm: number): Mend | null {

@@ -41,8 +41,9 @@ export const LAND = {
   why: rule('a land of 1 T or 1 mm, whichever is more, for laser cutting'),
 } as const;
 
-/** Reliefs: width, and depth past the tangent line. */
+/** Reliefs: width, and depth past the tangent line. A notch wider than 4 T is the panel's own shape. */
 export const RELIEF = {
+  widestOverT: 4,
   widthOverT: 1,
   smallestWidthMm: 1,
   why: rule('a relief 1 T (at least 1 mm) wide that reaches R + T past the tangent line'),

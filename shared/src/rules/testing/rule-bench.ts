@@ -60,6 +60,20 @@ export function outcomeOfMending(document: PartDocument, rule: RuleId) {
   };
 }
 
+/** A layout drawn anew: corners of the outline joined by straight edges named "t0", "t1", ... */
+export function outlined(document: PartDocument, corners: readonly (readonly [number, number])[]): PartDocument {
+  const edges = corners.map(([x, y], index) => ({ id: `t${String(index)}`, start: { x, y }, bulge: 0 }));
+  return applyCommands(document, [
+    { kind: 'replaceLayout', origin: 'import', layout: { ...document.layout, outer: { id: 'outer', edges } } },
+  ]);
+}
+
+/** A cut-out with straight edges named after it. */
+export function cutout(id: string, corners: readonly (readonly [number, number])[]): PartCommand {
+  const edges = corners.map(([x, y], index) => ({ id: `${id}${String(index)}`, start: { x, y }, bulge: 0 }));
+  return { kind: 'addCutout', loop: { id, edges } };
+}
+
 /** Applies mends of a rule until it offers none. @throws Error when that does not come to an end */
 function mended(document: PartDocument, rule: RuleId): PartDocument {
   let current = document;
