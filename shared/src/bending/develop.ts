@@ -8,27 +8,14 @@ import { along, distance, dot, subtract } from '../geometry/vector';
 import { bendDeductionMm } from './allowance';
 import { bendForceKn } from './bend-force';
 import type { CardTemplate } from './card';
-import { readCreases } from './crease';
-import type {
-  BendRow,
-  BendZone,
-  BendingStock,
-  DevelopmentProblem,
-  DevelopmentResult,
-  FlatBend,
-  FlatPattern,
-  Relief,
-} from './development';
-import { unfold } from './flat-pattern';
+import type { BendRow, BendZone, BendingStock, DevelopmentResult, FlatBend, FlatPattern, Relief } from './development';
 import type { Unfolded } from './flat-pattern';
 import { formedBox } from './formed-box';
 import { formedSizes } from './formed-sizes';
 import type { Layout } from './layout';
-import { cutPanels } from './panels';
-import { resolveBend } from './resolved-bend';
 import type { ResolvedBend } from './resolved-bend';
-import { readSheet } from './sheet';
 import type { Sheet } from './sheet';
+import { unfoldLayout } from './unfold-layout';
 
 const MM3_PER_M3 = 1_000_000_000;
 
@@ -38,27 +25,9 @@ const MM3_PER_M3 = 1_000_000_000;
  * @param template the card the layout was taken from; null when it was typed.
  */
 export function developLayout(layout: Layout, template: CardTemplate | null, stock: BendingStock): DevelopmentResult {
-  if (!(stock.thicknessMm > 0) || !Number.isFinite(stock.thicknessMm)) {
-    const message = `A sheet ${String(stock.thicknessMm)} mm thick cannot be bent.`;
-    return { ok: false, problems: [{ code: 'stockUnknown', message, ids: [stock.materialId] }] };
-  }
-  const problems: DevelopmentProblem[] = [];
-  const sheet = readSheet(layout);
-  const bends: ResolvedBend[] = [];
-  layout.bends.forEach((declaration, index) => {
-    const resolved = resolveBend(declaration, `B${String(index + 1)}`, template, stock);
-    if (resolved.ok) bends.push(resolved.bend);
-    else problems.push(resolved.problem);
-  });
-  if (!sheet.ok) return { ok: false, problems: [...sheet.problems, ...problems] };
-  const creases = readCreases(layout.bends, sheet.sheet);
-  if (!creases.ok) return { ok: false, problems: [...problems, ...creases.problems] };
-  if (problems.length > 0) return { ok: false, problems };
-  const tree = cutPanels(sheet.sheet, creases.creases, layout.baseAnchor);
-  if (!tree.ok) return { ok: false, problems: tree.problems };
-  const result = unfold(tree.tree, creases.creases, bends, layout.reliefs);
-  if (!result.ok) return { ok: false, problems: result.problems };
-  const { unfolded } = result;
+  const laidOut = unfoldLayout(layout, template, stock);
+  if (!laidOut.ok) return laidOut;
+  const { unfolded, bends, sheet } = laidOut;
   const flatBends = describeBends(unfolded, bends);
   return {
     ok: true,
@@ -70,7 +39,7 @@ export function developLayout(layout: Layout, template: CardTemplate | null, sto
       bendTable: bends.map((bend) => bendRow(bend, flatBends, stock)),
       formedBox: formedBox(unfolded.panels, unfolded.zones, stock.thicknessMm),
       formedSizes: formedSizes(unfolded.panels, unfolded.zones, nameIn(bends), stock.thicknessMm),
-      featuresInBendZones: openingsInZones(sheet.sheet, unfolded),
+      featuresInBendZones: openingsInZones(sheet, unfolded),
       reliefs: describeReliefs(unfolded, bends),
     },
   };
