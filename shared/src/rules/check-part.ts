@@ -102,12 +102,19 @@ function findWith(rules: readonly Rule[], context: RuleContext): readonly Findin
   return [...found, ...checkCannotBeDeveloped(context, (problem) => isTold(problem, found))];
 }
 
-/** Mends are compared with the findings of the document as it is, which are looked for once and only when needed. */
+/**
+ * Mends are compared with the findings of the document as it is, which are looked for once and only when needed. How many are
+ * tried depends on the size of the document alone, so that everybody is offered the same ones and nobody waits for them.
+ */
 function tryOutOn(context: RuleContext): TryOut {
+  const { outer, cutouts, features } = context.document.layout;
+  const size = [outer, ...cutouts].reduce((sum, { edges }) => sum + edges.length, features.length);
+  let triesLeft = Math.floor(THINGS_TRIED / Math.max(1, size));
   let known: ReadonlySet<string> | null = null;
   return (commands) => {
-    const document = applied(context.document, commands);
+    const document = triesLeft > 0 ? applied(context.document, commands) : null;
     if (document === null) return null;
+    triesLeft -= 1;
     known ??= blockerIds(findWith(PLAIN_RULES, context));
     const before = known;
     const after = findWith(PLAIN_RULES, contextOf(document, context.role, developPart(document, context.role)));
@@ -117,6 +124,9 @@ function tryOutOn(context: RuleContext): TryOut {
     };
   };
 }
+
+/** Edges, holes and slots that all tries of one check may look at together: under half a second of work. */
+const THINGS_TRIED = 2000;
 
 function applied(document: PartDocument, commands: readonly PartCommand[]): PartDocument | null {
   try {

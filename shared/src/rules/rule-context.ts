@@ -23,7 +23,7 @@ export interface RuleContext {
   readonly tryOut: TryOut | null;
 }
 
-/** What commands would lead to in the same sheet; null when the document refuses them. */
+/** What commands would lead to in the same sheet; null when the document refuses them or enough has been tried. */
 export type TryOut = (commands: readonly PartCommand[]) => {
   /** Ids of the findings that there would be. */
   readonly findingIds: ReadonlySet<string>;
