@@ -1,11 +1,11 @@
 import type { BendZone, Development } from '../bending/development';
-import { loopBounds, loopExtent, loopFromBulges, pointInLoop, polygonLoop } from '../geometry/loop';
+import { loopBounds, loopFromBulges, pointInLoop, polygonLoop } from '../geometry/loop';
 import { findCrossings } from '../geometry/loop-crossings';
 import type { Loop } from '../geometry/path';
 import type { Point } from '../geometry/point';
 import { COINCIDENT_MM } from '../geometry/tolerance';
 import { moveLoop, shiftBy } from '../geometry/transform';
-import { add, dot, scale, subtract, turn } from '../geometry/vector';
+import { add, scale, subtract, turn } from '../geometry/vector';
 import { type Mark, markLengthMm } from '../part/assembly';
 import type { PartCommand } from '../part/commands';
 import { findFinish } from '../stock/finishes';
@@ -15,6 +15,7 @@ import type { Finding } from './finding';
 import { ETCHED_TEXT, LAND, LIMIT_SLACK_MM } from './limits';
 import { mendThatHolds } from './mend-that-holds';
 import { type RuleContext, listSome, nameOf, placeOfLayout } from './rule-context';
+import { type ZoneReach, zoneReach } from './zone-reach';
 
 /**
  * Etched texts: high enough to be read at the width of an etched line, on the part, clear of openings and of bend zones, and
@@ -117,18 +118,10 @@ function checkBends(
   ];
 }
 
-/** How near a text comes to the centre of a bend it lies beside, when it reaches between the tangent lines; else null. */
-function reachInto(zone: BendZone, box: Loop): { readonly rimFromCentreMm: number; readonly away: Point } | null {
-  const beside = loopExtent(box, zone.along);
-  const bend = loopExtent(zone.outer, zone.along);
-  if (beside.high <= bend.low || beside.low >= bend.high) return null;
-  const halfMm = zone.bendAllowanceMm / 2;
-  const centre = dot(zone.origin, zone.towardsChild) + halfMm;
-  const { low, high } = loopExtent(box, zone.towardsChild);
-  const isOnChildSide = (low + high) / 2 >= centre;
-  const rimFromCentreMm = isOnChildSide ? low - centre : centre - high;
-  if (rimFromCentreMm >= halfMm - LIMIT_SLACK_MM) return null;
-  return { rimFromCentreMm, away: isOnChildSide ? zone.towardsChild : scale(zone.towardsChild, -1) };
+/** How a text lies to a bend when it reaches between the tangent lines; else null. */
+function reachInto(zone: BendZone, box: Loop): ZoneReach | null {
+  const reach = zoneReach(box, zone);
+  return reach === null || reach.rimFromCentreMm >= zone.bendAllowanceMm / 2 - LIMIT_SLACK_MM ? null : reach;
 }
 
 function checkCoat(context: RuleContext, marks: readonly Mark[]): readonly Finding[] {

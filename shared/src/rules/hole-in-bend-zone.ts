@@ -1,5 +1,4 @@
 import type { BendZone, Development } from '../bending/development';
-import { loopExtent } from '../geometry/loop';
 import type { Point } from '../geometry/point';
 import { invert, moveLoop, movePoint, shiftBy } from '../geometry/transform';
 import { add, between, dot, scale, subtract } from '../geometry/vector';
@@ -10,6 +9,7 @@ import type { Finding, Severity } from './finding';
 import { capital } from './in-words';
 import { DIE_MOUTH, LIMIT_SLACK_MM, TANGENT_DISTANCE } from './limits';
 import { type RuleContext, listNames, nameOf, panelAt, placeOfFlat } from './rule-context';
+import { zoneReach } from './zone-reach';
 
 /** An opening that comes too near to one bend. */
 interface Intrusion {
@@ -39,17 +39,13 @@ export function checkHoleInBendZone(context: RuleContext): readonly Finding[] {
 
 function intrusionOf(development: Development, opening: CutOpening, zone: BendZone): Intrusion | null {
   const { thicknessMm, vOpeningMm } = development.stock;
-  const beside = loopExtent(opening.loop, zone.along);
-  const bendRange = loopExtent(zone.outer, zone.along);
-  if (beside.high <= bendRange.low || beside.low >= bendRange.high) return null;
-  const centre = dot(zone.origin, zone.towardsChild) + zone.bendAllowanceMm / 2;
-  const { low, high } = loopExtent(opening.loop, zone.towardsChild);
+  const reach = zoneReach(opening.loop, zone);
+  if (reach === null) return null;
+  const { rimFromCentreMm, away } = reach;
   const halfMouthMm = DIE_MOUTH.shareOfV * vOpeningMm;
   const nearMm = zone.bendAllowanceMm / 2 + TANGENT_DISTANCE.overT * thicknessMm;
   const clearMm = Math.max(halfMouthMm, nearMm);
-  if (opening.kind === 'cutout' && low <= centre - clearMm && high >= centre + clearMm) return null;
-  const isOnChildSide = (low + high) / 2 >= centre;
-  const rimFromCentreMm = isOnChildSide ? low - centre : centre - high;
+  if (opening.kind === 'cutout' && reach.lowMm <= -clearMm && reach.highMm >= clearMm) return null;
   if (rimFromCentreMm >= clearMm - LIMIT_SLACK_MM) return null;
   return {
     opening,
@@ -57,7 +53,7 @@ function intrusionOf(development: Development, opening: CutOpening, zone: BendZo
     severity: rimFromCentreMm < nearMm - LIMIT_SLACK_MM ? 'blocker' : 'caution',
     rimFromCentreMm,
     requiredMm: clearMm,
-    away: isOnChildSide ? zone.towardsChild : scale(zone.towardsChild, -1),
+    away,
   };
 }
 

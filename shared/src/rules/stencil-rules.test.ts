@@ -2,9 +2,18 @@ import { loopFromBulges, signedArea } from '../geometry/loop';
 import { applyCommand, applyCommands } from '../part/apply-command';
 import type { Assembly, Mark } from '../part/assembly';
 import type { PartDocument } from '../part/part-document';
-import { add, bracket, cutout, found, hole, outcomeOfMending, outlined, plain, severities } from './testing/rule-bench';
-
-const MENDED = { left: 0, newBlockers: 0 };
+import {
+  add,
+  bracket,
+  cutout,
+  found,
+  hole,
+  MENDED,
+  outcomeOfMending,
+  outlined,
+  plain,
+  severities,
+} from './testing/rule-bench';
 
 const square = (from: number, to: number) =>
   [
@@ -75,9 +84,9 @@ describe('insideCornerTooSharp', () => {
   });
 
   it('is mended by rounding', () => {
-    expect(outcomeOfMending(rounded(0.05), 'insideCornerTooSharp')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(rounded(0.05), 'insideCornerTooSharp')).toEqual(MENDED);
     const document = applyCommand(outlined(bracket(), notched), cutout('c', square(5, 15)));
-    expect(outcomeOfMending(shaken(document), 'insideCornerTooSharp')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(shaken(document), 'insideCornerTooSharp')).toEqual(MENDED);
   });
 });
 
@@ -104,13 +113,13 @@ describe('pieceDropsOut', () => {
     expect(found(inWindow, 'pieceDropsOut')).toMatchObject([
       { ids: ['c', 'h1', 'h2'], mend: { label: 'Take H1 and H2 away' } },
     ]);
-    expect(outcomeOfMending(inWindow, 'pieceDropsOut')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(inWindow, 'pieceDropsOut')).toEqual(MENDED);
   });
 
   it('is mended for a piece by a bridge that holds it', () => {
     const document = stencil(12, 28);
     expect(found(document, 'pieceDropsOut')).toMatchObject([{ severity: 'blocker', requiredMm: 2, ids: ['c', 'd'] }]);
-    expect(outcomeOfMending(document, 'pieceDropsOut')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(document, 'pieceDropsOut')).toEqual(MENDED);
     const mended = applyCommands(document, found(document, 'pieceDropsOut')[0]?.mend?.commands ?? []);
     const [gap, ...others] = mended.layout.cutouts;
     expect(others).toEqual([]);
@@ -131,10 +140,10 @@ describe('pieceDropsOut', () => {
         },
       }) as const;
     const ring = applyCommands(bracket(), [round('c', 25, 25, 20), round('d', 24, 25, 8)]);
-    expect(outcomeOfMending(ring, 'pieceDropsOut')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(ring, 'pieceDropsOut')).toEqual(MENDED);
     const eight = applyCommands(bracket(), [round('c', 25, 25, 20), round('d', 17, 25, 5), round('f', 33, 25, 5)]);
     expect(found(eight, 'pieceDropsOut')).toMatchObject([{ mend: { label: 'Leave 2 bridges of 2 mm' } }]);
-    expect(outcomeOfMending(eight, 'pieceDropsOut')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(eight, 'pieceDropsOut')).toEqual(MENDED);
   });
 
   it('offers no bridge that is wider than the piece', () => {
@@ -152,7 +161,7 @@ describe('etchedText', () => {
   it('flips at letters 8 lines high', () => {
     expect(found(marked({ heightMm: 2.44 }), 'etchedText')).toEqual([]);
     expect(found(marked({ heightMm: 2.36 }), 'etchedText')).toMatchObject([{ severity: 'caution', ids: ['m1'] }]);
-    expect(outcomeOfMending(marked({ heightMm: 1 }), 'etchedText')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(marked({ heightMm: 1 }), 'etchedText')).toEqual(MENDED);
   });
 
   it('flips where it runs off the part, and comes back onto it', () => {
@@ -162,7 +171,7 @@ describe('etchedText', () => {
       { severity: 'caution', title: '“FW 7” runs off the part' },
     ]);
     expect(found(marked({ at: { x: -40, y: 80 } }), 'etchedText')).toHaveLength(1);
-    expect(outcomeOfMending(marked({ at: { x: -40, y: 80 } }), 'etchedText')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(marked({ at: { x: -40, y: 80 } }), 'etchedText')).toEqual(MENDED);
   });
 
   it('flips at the tangent line of a bend', () => {
@@ -170,11 +179,11 @@ describe('etchedText', () => {
     const upTo = (x: number) => marked({ at: { x: x - 12, y: 20 } });
     expect(found(upTo(55.36), 'etchedText')).toEqual([]);
     expect(found(upTo(55.44), 'etchedText')).toMatchObject([{ title: '“FW 7” runs over B1', ids: ['m1', 'b1'] }]);
-    expect(outcomeOfMending(upTo(57), 'etchedText')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(upTo(57), 'etchedText')).toEqual(MENDED);
     const flange = (x: number) => marked({ at: { x, y: 20 } });
     expect(found(flange(64.64), 'etchedText')).toEqual([]);
     expect(found(flange(64.56), 'etchedText')).toHaveLength(1);
-    expect(outcomeOfMending(flange(62), 'etchedText')).toMatchObject({ before: 1, ...MENDED });
+    expect(outcomeOfMending(flange(62), 'etchedText')).toEqual(MENDED);
   });
 
   it('turns with the text and sees openings under it', () => {

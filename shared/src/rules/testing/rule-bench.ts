@@ -20,6 +20,12 @@ export function bracket(stock: Partial<SheetStock> = {}, bend: Partial<BendDecla
   ]);
 }
 
+/** A flat plate in the same sheet. */
+export function plate(widthMm: number, heightMm: number): PartDocument {
+  const start = starterDocument({ shape: 'flat-plate', widthMm, heightMm });
+  return applyCommands(start, [{ kind: 'setStock', role: 'production', stock: ACROSS }]);
+}
+
 /** A hole for a test. */
 export function hole(id: string, x: number, y: number, purpose: HolePurpose): Feature {
   return { kind: 'hole', id, centre: { x, y }, purpose };
@@ -47,6 +53,9 @@ export function found(document: PartDocument, rule: RuleId): readonly Finding[] 
 export function severities(document: PartDocument, rule: RuleId): readonly string[] {
   return found(document, rule).map(({ severity }) => severity);
 }
+
+/** What is left of a single finding when its mend holds. */
+export const MENDED = { before: 1, left: 0, newBlockers: 0 } as const;
 
 /** What applying all mends of a rule leads to: how often the rule speaks before and after, blockers of all rules likewise. */
 export function outcomeOfMending(document: PartDocument, rule: RuleId) {
