@@ -1,6 +1,9 @@
 import type { BendRow } from '../bending/development';
+import type { BendDeclaration } from '../bending/layout';
 import { between } from '../geometry/vector';
 import type { PartCommand } from '../part/commands';
+import type { SheetStock } from '../part/part-document';
+import { resolveStock } from '../stock/resolve-stock';
 import { formatDecimal } from '../units/length';
 import type { Finding } from './finding';
 import { plural } from './in-words';
@@ -44,7 +47,7 @@ function describe(context: RuleContext, rows: readonly BendRow[], deliveredMm: n
     bendId: bend.id,
     bend: { ...bend, insideRadiusMm: null },
   }));
-  const isEnough = bends.every((bend) => standsRadius(context, bend, deliveredMm));
+  const isEnough = Object.values(context.document.stocks).every((sheet) => isDeliveredEnough(sheet, bends));
   return [
     {
       id,
@@ -70,4 +73,10 @@ function describe(context: RuleContext, rows: readonly BendRow[], deliveredMm: n
       mend: isEnough ? mendThatHolds(context, id, `Take ${mm(deliveredMm)} mm as delivered`, commands) : null,
     },
   ];
+}
+
+/** One declaration holds for both sheets, so each has to stand what its own die delivers. */
+function isDeliveredEnough(sheet: SheetStock, bends: readonly BendDeclaration[]): boolean {
+  const resolution = resolveStock(sheet);
+  return resolution.ok && bends.every((bend) => standsRadius(sheet, bend, resolution.stock.deliveredRadiusMm));
 }

@@ -1,7 +1,9 @@
 import type { BendDeclaration } from '../bending/layout';
 import type { BendRow } from '../bending/development';
 import { between, directionDeg, subtract } from '../geometry/vector';
+import type { SheetStock } from '../part/part-document';
 import type { SheetMaterial } from '../stock/material';
+import { findMaterial } from '../stock/materials';
 import { formatDecimal } from '../units/length';
 import type { Finding, Severity } from './finding';
 import { ALONG_GRAIN, LIMIT_SLACK_MM, NOMINAL_THICKNESS_SLACK, ruleFrom } from './limits';
@@ -90,12 +92,16 @@ function acrossGrainMm({ minimumRadius: { rows } }: SheetMaterial, thicknessMm: 
   return ((row ?? rows[rows.length - 1])?.recommendedOverT ?? 0) * thicknessMm;
 }
 
-/** Whether the sheet stands a bend of this radius, its grain considered; true where the tables know no material. */
-export function standsRadius({ material, sheet }: RuleContext, bend: BendDeclaration, radiusMm: number): boolean {
+/**
+ * Whether a sheet stands a bend of this radius; true where the tables know no material. Bends that run along the grain have to
+ * be rounder; where the grain is unknown the part can still be laid across it.
+ */
+export function standsRadius(sheet: SheetStock, bend: BendDeclaration, radiusMm: number): boolean {
+  const material = findMaterial(sheet.materialId);
   if (material === null) return true;
   const acrossMm = acrossGrainMm(material, sheet.thicknessMm);
-  const isAcross = grainOf(sheet.grainDirectionDeg, bend) === 'across';
-  return radiusMm >= acrossMm * (isAcross ? 1 : ALONG_GRAIN.factor) - LIMIT_SLACK_MM;
+  const isAlong = grainOf(sheet.grainDirectionDeg, bend) === 'along';
+  return radiusMm >= acrossMm * (isAlong ? ALONG_GRAIN.factor : 1) - LIMIT_SLACK_MM;
 }
 
 /** How a bend lies to the rolling direction: within 45° of it counts as along. */

@@ -63,7 +63,8 @@ function checkCorner(context: RuleContext, row: BendRow, cornerMm: number): read
       at: placeOfLayout(context, between(bend.line.from, bend.line.to, 0.5)),
       advice:
         'Round or chamfer the corner it sits on, put a shim under the flange, or bend it tighter if the metal stands it.',
-      mend: standsRadius(context, bend, setMm)
+      // One radius holds for both sheets, so both have to stand it.
+      mend: Object.values(context.document.stocks).every((sheet) => standsRadius(sheet, bend, setMm))
         ? mendThatHolds(context, id, `Set the radius to ${mm(setMm)} mm`, [
             { kind: 'changeBend', bendId: bend.id, bend: { ...bend, insideRadiusMm: setMm } },
           ])
