@@ -8,6 +8,7 @@ import { RULES_VERSION, checkDevelopedPart } from '@foldwright/shared/rules/chec
 import type { Finding, Severity } from '@foldwright/shared/rules/finding';
 import { METRIC_FASTENERS } from '@foldwright/shared/stock/fastener-tables';
 import { GAUGE_TABLE } from '@foldwright/shared/stock/gauges';
+import { LASER_KERF } from '@foldwright/shared/stock/laser-kerf';
 import { SHEET_MATERIALS, findMaterial } from '@foldwright/shared/stock/materials';
 import { V_DIE_CHART } from '@foldwright/shared/stock/v-dies';
 import { formatDecimal } from '@foldwright/shared/units/length';
@@ -18,7 +19,7 @@ export const rulesVersion = String(RULES_VERSION);
 
 /** Tables in force: a hash of their content, so that it changes with every figure and nobody has to remember to. */
 export const tablesVersion = createHash('sha256')
-  .update(JSON.stringify([SHEET_MATERIALS, V_DIE_CHART, METRIC_FASTENERS, GAUGE_TABLE], sayInfinity))
+  .update(JSON.stringify([SHEET_MATERIALS, V_DIE_CHART, METRIC_FASTENERS, GAUGE_TABLE, LASER_KERF], sayInfinity))
   .digest('hex')
   .slice(0, 16);
 

@@ -1,4 +1,5 @@
 import { applyCommand } from '../part/apply-command';
+import { mirrorDocument } from '../part/mirror-document';
 import type { PartDocument } from '../part/part-document';
 import { bracket, cutout, found, MENDED, outcomeOfMending, outlined, severities } from './testing/rule-bench';
 
@@ -96,6 +97,11 @@ describe('edgeInBendZone', () => {
       [0, 50],
     ]);
     expect(found(pointed, 'edgeInBendZone')).toMatchObject([{ ids: ['t2', 't3', 'b1'], mend: null }]);
+  });
+
+  it.each([9, 7, 4])('finds the same in the other hand, with a notch %d mm from the centre', (fromCentreMm) => {
+    const mirrored = mirrorDocument(notched(fromCentreMm));
+    expect(severities(mirrored, 'edgeInBendZone')).toEqual(severities(notched(fromCentreMm), 'edgeInBendZone'));
   });
 
   it('is mended by moving the bottom of the notch out', () => {

@@ -1,7 +1,16 @@
-import { loopFromBulges, signedArea } from '../geometry/loop';
+import * as fc from 'fast-check';
+import { runs } from '../bending/testing/runs';
+import { loopClearance } from '../geometry/clearance';
+import { loopFromBulges, polygonLoop, signedArea } from '../geometry/loop';
+import { findCrossings } from '../geometry/loop-crossings';
+import type { Loop } from '../geometry/path';
+import type { Point } from '../geometry/point';
+import { COINCIDENT_MM } from '../geometry/tolerance';
+import { add as add2, turn } from '../geometry/vector';
 import { applyCommand, applyCommands } from '../part/apply-command';
 import type { Assembly, Mark } from '../part/assembly';
 import type { PartDocument } from '../part/part-document';
+import { bridgedGap } from './bridge';
 import {
   add,
   bracket,
@@ -148,6 +157,45 @@ describe('pieceDropsOut', () => {
 
   it('offers no bridge that is wider than the piece', () => {
     expect(found(stencil(19, 20.5), 'pieceDropsOut')).toMatchObject([{ mend: null }]);
+  });
+});
+
+describe('bridgedGap', () => {
+  /** A polygon with as many corners as asked, turned by an angle. */
+  const ngon = (corners: number, radiusMm: number, at: Point, turnDeg: number): Loop =>
+    polygonLoop(
+      Array.from({ length: corners }, (_, index) =>
+        add2(at, turn({ x: radiusMm, y: 0 }, turnDeg + (360 * index) / corners)),
+      ),
+    );
+  const count = fc.integer({ min: 3, max: 9 });
+  const angleDeg = fc.double({ min: 0, max: 360, noNaN: true });
+
+  it('is one simple loop whose area is the gap’s less a bridge of its width, for any polygon in another', () => {
+    fc.assert(
+      fc.property(
+        count,
+        count,
+        angleDeg,
+        angleDeg,
+        fc.double({ min: 0, max: 0.9, noNaN: true }),
+        angleDeg,
+        (m, n, a, b, off, dir) => {
+          const outer = ngon(m, 100, { x: 0, y: 0 }, a);
+          // A triangle's inscribed circle is half as large as the one around it.
+          const inner = ngon(n, 20, turn({ x: 29 * off, y: 0 }, dir), b);
+          const gap = bridgedGap(outer, inner, 2);
+          if (gap === null) throw new Error('there is room for a bridge of 2 on any edge of 13 or more');
+          expect(findCrossings([gap], COINCIDENT_MM)).toEqual([]);
+          const bridgeMm2 = Math.abs(signedArea(outer)) - Math.abs(signedArea(inner)) - signedArea(gap);
+          // The bridge is 2 wide; its outer end may be cut at a slant or by a corner, which changes its mean length by at most 4.
+          const clearance = loopClearance(outer, inner)?.distanceMm ?? 0;
+          expect(bridgeMm2 / 2).toBeGreaterThan(clearance - 4);
+          expect(bridgeMm2 / 2).toBeLessThan(120);
+        },
+      ),
+      { numRuns: runs() },
+    );
   });
 });
 
