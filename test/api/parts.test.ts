@@ -106,6 +106,17 @@ describe('parts and drafts', () => {
     expect(body).toMatchObject({ type: '/problems/already-exists', errors: [{ pointer: '/number' }] });
   });
 
+  it('says in words which sizes do not go together', async () => {
+    const gusset = { shape: 'gusseted-l', baseMm: 90, flangeMm: 40, widthMm: 60, gussetMm: 41 };
+    const refused = await create({ name: 'Gusset', starter: gusset }).expect(400);
+    expect(refused.body).toMatchObject({
+      type: '/problems/invalid-input',
+      detail: 'A gusset of 41 mm doesn’t fit: on this base and flange it lies between 12 and 40 mm.',
+    });
+    const made = await create({ name: 'Gusset', starter: { ...gusset, gussetMm: 35 } }).expect(201);
+    expect(made.body).toMatchObject({ name: 'Gusset' });
+  });
+
   it('lists everything wrong with a new part at once', async () => {
     const { body } = await create({
       name: '  ',

@@ -1,11 +1,13 @@
 import type { PartDetail, Starter } from '@foldwright/shared/contracts/parts';
 import { partDetailSchema } from '@foldwright/shared/contracts/parts';
 import type { PartDocument } from '@foldwright/shared/part/part-document';
+import { StarterError } from '@foldwright/shared/part/folded-starters';
 import { starterDocument } from '@foldwright/shared/part/starter-document';
 import * as z from 'zod/mini';
 import type { Database } from '../database/database';
 import type { WorkshopScope } from '../database/workshop-scope';
 import { recordEvent } from '../events/record-event';
+import { Problem } from '../http/problem';
 import type { Member } from '../http/visitor';
 import { canEditParts } from '../policies/parts';
 import { presentPart } from '../presenters/parts';
@@ -64,9 +66,18 @@ export async function addPart(
   return { partId: row.id, draftId: draft.id };
 }
 
+function documentOf(starter: Starter): PartDocument {
+  try {
+    return starterDocument(starter);
+  } catch (error) {
+    if (!(error instanceof StarterError)) throw error;
+    throw new Problem('invalid-input', { detail: error.message, kept: 'No part was started.' });
+  }
+}
+
 /**
  * Start a part, once under the caller's key.
- * @throws Problem `already-exists` when the number is taken
+ * @throws Problem `already-exists` when the number is taken, `invalid-input` for sizes that do not go together
  */
 export function createPart(
   database: Database,
@@ -80,7 +91,7 @@ export function createPart(
       const key = { userId: member.userId, route: 'createPart', key: idempotencyKey, request: input };
       return once(scope, key, partDetailSchema, async () => {
         const number = input.number ?? (await nextNumber(scope));
-        const document = starterDocument(input.starter ?? PLACEHOLDER);
+        const document = documentOf(input.starter ?? PLACEHOLDER);
         const hasOutline = input.starter !== null;
         const { partId } = await addPart(scope, member, { name: input.name, number, document, hasOutline }, now);
         const { row, nameOf } = await loadPart(scope, await scope.rows.parts.get(partId));

@@ -30,6 +30,28 @@ export const starterSchema = z.discriminatedUnion('shape', [
     widthMm: positiveMm,
     bendAngleDeg: z.number().check(z.gte(5), z.lte(165)),
   }),
+  z.strictObject({
+    shape: z.literal('z-bracket'),
+    webMm: positiveMm,
+    lowerFlangeMm: positiveMm,
+    upperFlangeMm: positiveMm,
+    widthMm: positiveMm,
+  }),
+  z.strictObject({
+    shape: z.literal('hat-section'),
+    topMm: positiveMm,
+    sideMm: positiveMm,
+    brimMm: positiveMm,
+    widthMm: positiveMm,
+  }),
+  z.strictObject({ shape: z.literal('tray'), lengthMm: positiveMm, widthMm: positiveMm, flangeMm: positiveMm }),
+  z.strictObject({
+    shape: z.literal('gusseted-l'),
+    baseMm: positiveMm,
+    flangeMm: positiveMm,
+    widthMm: positiveMm,
+    gussetMm: positiveMm,
+  }),
 ]);
 export type Starter = z.output<typeof starterSchema>;
 

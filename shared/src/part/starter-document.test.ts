@@ -39,9 +39,15 @@ describe('starterDocument', () => {
         expectSize(z, [a, widthMm, b + c - thicknessOf(z, stock)]);
         const hat: StarterShape = { shape: 'hat-section', topMm: a, sideMm: b, brimMm: c, widthMm };
         expectSize(hat, [a + 2 * (c - thicknessOf(hat, stock)), widthMm, b]);
+        const tray: StarterShape = { shape: 'tray', lengthMm: a, widthMm: b, flangeMm: c / 8 + 20 };
+        expectSize(tray, [a, b, c / 8 + 20]);
+        const gussetMm = Math.min(a - 14, b) / 2 + 12;
+        if (gussetMm <= Math.min(a - 13, b)) {
+          expectSize({ shape: 'gusseted-l', baseMm: a, flangeMm: b, widthMm, gussetMm }, [a, widthMm, b]);
+        }
         expectSize({ shape: 'flat-plate', widthMm: a, heightMm: b }, [a, b, thicknessOf(z, stock)]);
       }),
-      { numRuns: 15 },
+      { numRuns: 100 },
     );
   });
 
@@ -71,6 +77,8 @@ describe('starterDocument', () => {
   });
 
   it.each<[string, StarterShape]>([
+    ['a gusset taller than its flange', { shape: 'gusseted-l', baseMm: 90, flangeMm: 40, widthMm: 50, gussetMm: 41 }],
+    ['a tray without room for a flange', { shape: 'tray', lengthMm: 12, widthMm: 60, flangeMm: 20 }],
     ['a size of 0', { shape: 'flat-plate', widthMm: 0, heightMm: 10 }],
     ['a size that is no number', { shape: 'flat-plate', widthMm: Number.NaN, heightMm: 10 }],
     ['a bend that closes on itself', { shape: 'l-bracket', baseMm: 50, flangeMm: 30, widthMm: 20, bendAngleDeg: 170 }],

@@ -1,5 +1,6 @@
 import type { BendDeclaration, BendDirection, Layout, OutlineLoop } from '../bending/layout';
 import type { Point } from '../geometry/point';
+import { gussetedLayout, trayLayout } from './folded-starters';
 import type { PartDocument, SheetStock } from './part-document';
 
 /**
@@ -37,6 +38,21 @@ export type StarterShape =
       readonly sideMm: number;
       readonly brimMm: number;
       readonly widthMm: number;
+    }
+  | {
+      readonly shape: 'tray';
+      /** Outside of the tray on the ground, and its height. */
+      readonly lengthMm: number;
+      readonly widthMm: number;
+      readonly flangeMm: number;
+    }
+  | {
+      readonly shape: 'gusseted-l';
+      readonly baseMm: number;
+      readonly flangeMm: number;
+      readonly widthMm: number;
+      /** Legs of the gusset, along the base and up the flange; it is folded up from one side of the base. */
+      readonly gussetMm: number;
     };
 
 /** Sheet for the trial: thin steel that any shop has. */
@@ -127,6 +143,21 @@ function starterLayout(starter: StarterShape): Layout {
         sized('widthMm', starter.widthMm),
         2,
       );
+    }
+    case 'tray':
+      return trayLayout(
+        sized('lengthMm', starter.lengthMm),
+        sized('widthMm', starter.widthMm),
+        sized('flangeMm', starter.flangeMm),
+      );
+    case 'gusseted-l': {
+      const { baseMm, flangeMm, widthMm, gussetMm } = starter;
+      return gussetedLayout({
+        baseMm: sized('baseMm', baseMm),
+        flangeMm: sized('flangeMm', flangeMm),
+        widthMm: sized('widthMm', widthMm),
+        gussetMm: sized('gussetMm', gussetMm),
+      });
     }
   }
 }

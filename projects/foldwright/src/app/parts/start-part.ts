@@ -6,6 +6,7 @@ import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInputModule } from '@angular/material/input';
 import { Router } from '@angular/router';
 import { developPart } from '@foldwright/shared/part/develop-part';
+import { StarterError } from '@foldwright/shared/part/folded-starters';
 import { starterDocument } from '@foldwright/shared/part/starter-document';
 import { findMaterial } from '@foldwright/shared/stock/materials';
 import { formatDecimal } from '@foldwright/shared/units/length';
@@ -21,12 +22,12 @@ import { PartsApi } from '../api/parts-api';
 import { PhotosApi } from '../api/photos-api';
 import { OriginChoice } from './origin-choice';
 import { SheetSketch } from './sheet-sketch';
-import { type Origin, hasBend, isOrigin, sizeFieldsOf, starterFrom } from './starter-form';
+import { type Origin, hasAngle, isOrigin, sizeFieldsOf, starterFrom } from './starter-form';
 
 const PREVIEW_ROOM_PX = { width: 420, height: 300 };
 const LARGEST_PX_PER_MM = 4;
 
-/** Starts a part: from a photo of a mock-up, or from the typed sizes of a plate, an L or a U that is drawn as it is typed. */
+/** Starts a part: from a photo of a mock-up, or from the typed sizes of a shape that is drawn as it is typed. */
 @Component({
   selector: 'fw-start-part',
   imports: [
@@ -64,6 +65,14 @@ export class StartPart {
       flangeMm: new FormControl<number | null>(40),
       leftFlangeMm: new FormControl<number | null>(30),
       rightFlangeMm: new FormControl<number | null>(30),
+      webMm: new FormControl<number | null>(50),
+      lowerFlangeMm: new FormControl<number | null>(40),
+      upperFlangeMm: new FormControl<number | null>(40),
+      topMm: new FormControl<number | null>(60),
+      sideMm: new FormControl<number | null>(40),
+      brimMm: new FormControl<number | null>(30),
+      lengthMm: new FormControl<number | null>(140),
+      gussetMm: new FormControl<number | null>(35),
       bendAngleDeg: new FormControl<number | null>(90, [Validators.required, Validators.min(5), Validators.max(165)]),
     }),
   });
@@ -77,7 +86,7 @@ export class StartPart {
 
   private readonly sizes = toSignal(this.form.controls.sizes.valueChanges, { initialValue: null });
   protected readonly sizeFields = computed(() => sizeFieldsOf(this.origin()));
-  protected readonly hasBend = computed(() => hasBend(this.origin()));
+  protected readonly hasAngle = computed(() => hasAngle(this.origin()));
   protected readonly starter = computed(() => {
     // Read for its changes; the raw value is whole where the change may lack disabled fields.
     this.sizes();
@@ -86,10 +95,18 @@ export class StartPart {
       ? null
       : starterFrom(this.origin(), sizes.getRawValue());
   });
-  protected readonly document = computed(() => {
+  private readonly started = computed(() => {
     const starter = this.starter();
-    return starter === null ? null : starterDocument(starter);
+    if (starter === null) return { document: null, fault: null };
+    try {
+      return { document: starterDocument(starter), fault: null };
+    } catch (error) {
+      // Sizes that don't go together: the gusset taller than its flange, a tray too small for one.
+      if (!(error instanceof StarterError)) throw error;
+      return { document: null, fault: error.message };
+    }
   });
+  protected readonly document = computed(() => this.started().document);
   protected readonly pxPerMm = computed(() => {
     const document = this.document();
     if (document === null) return 1;
@@ -98,7 +115,8 @@ export class StartPart {
   });
   /** What the sizes come to in the sheet the part starts with; or why they don't. */
   protected readonly outcome = computed(() => {
-    const document = this.document();
+    const { document, fault } = this.started();
+    if (fault !== null) return { problem: fault, facts: null };
     if (document === null) return null;
     const result = developPart(document, 'production');
     if (!result.ok) return { problem: result.problems[0]?.message ?? 'These sizes can’t be unfolded.', facts: null };
