@@ -1,14 +1,11 @@
-import { joinPieces } from '../geometry/chain';
-import { clipRegion } from '../geometry/clip';
 import { flattenLoop } from '../geometry/flatten';
-import { intersectSegments } from '../geometry/intersect';
-import { loopBounds, loopReach, pointInLoop, signedArea } from '../geometry/loop';
 import type { Loop } from '../geometry/path';
 import type { Point } from '../geometry/point';
-import { line } from '../geometry/segment';
-import { COINCIDENT_MM, TINY_AREA_MM2 } from '../geometry/tolerance';
-import { along, boundsMeet, dot, subtract } from '../geometry/vector';
+import { COINCIDENT_MM } from '../geometry/tolerance';
+import { dot, subtract } from '../geometry/vector';
 import type { BendZone, Development } from './development';
+import { mayMeet, panelRegions, zoneRegions } from './flat-regions';
+import type { FlatRegion } from './flat-regions';
 
 /** A piece of the flat pattern that is folded as one: a panel, or a strip of a bend zone. Corners counter-clockwise, openings clockwise. */
 export interface MeshCell {
@@ -26,21 +23,9 @@ export function cutMeshCells(development: Development, chordErrorMm: number): re
   const { panels, zones } = development;
   const openings = panels.flatMap((panel) => panel.openings);
   const zoneCells = zones.flatMap((zone, index) => zoneCellsOf(zone, index, development, openings, chordErrorMm));
-  const panelCells = panels.flatMap((panel): readonly MeshCell[] => {
-    const own = zones.filter(
-      ({ parentIndex, childIndex }) => parentIndex === panel.index || childIndex === panel.index,
-    );
-    const cut = openings.flatMap((opening) => {
-      if (!mayMeet(opening, panel.outer)) return [];
-      const crossed = own.filter((zone) => crossesTangent(opening, zone, panel.index));
-      if (crossed.length === 0) return isWithin(opening, panel.outer) ? [opening] : [];
-      return crossed.reduce<readonly Loop[]>(
-        (loops, zone) => loops.flatMap((loop) => clipOpening(loop, panelSide(zone, panel.index))),
-        [opening],
-      );
-    });
-    return cellsFrom(panel.outer, cut, { kind: 'panel', index: panel.index }, chordErrorMm);
-  });
+  const panelCells = panels.flatMap((panel) =>
+    panelRegions(panel, zones, openings).map(cellOf({ kind: 'panel', index: panel.index }, chordErrorMm)),
+  );
   const ofZones = zones.map((zone, index) =>
     onTangents(
       zone,
@@ -81,84 +66,19 @@ function zoneCellsOf(
 ): readonly MeshCell[] {
   const count = stripCount(zone, development.stock.thicknessMm, chordErrorMm);
   const near = openings.filter((opening) => mayMeet(opening, zone.outer));
-  return Array.from({ length: count }, (_, strip) => strip).flatMap((strip) => {
-    const from = {
-      origin: along(zone.origin, zone.towardsChild, (zone.bendAllowanceMm * strip) / count),
-      inward: zone.towardsChild,
-    };
-    const to = {
-      origin: along(zone.origin, zone.towardsChild, (zone.bendAllowanceMm * (strip + 1)) / count),
-      inward: { x: -zone.towardsChild.x, y: -zone.towardsChild.y },
-    };
-    const outers = clipRegion(clipRegion([zone.outer], from, COINCIDENT_MM), to, COINCIDENT_MM);
-    return outers.flatMap((outer) => {
-      const cut = near.flatMap((opening) => clipOpening(opening, from).flatMap((loop) => clipOpening(loop, to)));
-      return cellsFrom(
-        outer,
-        cut.filter((loop) => mayMeet(loop, outer)),
-        { kind: 'zone', index },
-        chordErrorMm,
-      );
-    });
-  });
+  return Array.from({ length: count }, (_, strip) => strip).flatMap((strip) =>
+    zoneRegions(zone, near, (zone.bendAllowanceMm * strip) / count, (zone.bendAllowanceMm * (strip + 1)) / count).map(
+      cellOf({ kind: 'zone', index }, chordErrorMm),
+    ),
+  );
 }
 
-/** Openings run clockwise; clipping wants counter-clockwise. */
-function clipOpening(opening: Loop, half: { readonly origin: Point; readonly inward: Point }): readonly Loop[] {
-  return clipRegion([turnedRound(opening)], half, COINCIDENT_MM).map(turnedRound);
-}
-
-function turnedRound(loop: Loop): Loop {
-  return [...loop]
-    .reverse()
-    .map((segment) =>
-      segment.kind === 'line'
-        ? line(segment.to, segment.from)
-        : { ...segment, from: segment.to, to: segment.from, clockwise: !segment.clockwise },
-    );
-}
-
-/** Takes openings out of a boundary. Those that reach its edge do so along a straight stretch, which vanishes. */
-function cellsFrom(
-  outer: Loop,
-  openings: readonly Loop[],
-  of: MeshCell['of'],
-  chordErrorMm: number,
-): readonly MeshCell[] {
-  const loops = openings.length === 0 ? [outer] : joinPieces([outer, ...openings], 2 * COINCIDENT_MM);
-  if (loops === null) return [{ of, outer: flattenLoop(outer, chordErrorMm), openings: [] }];
-  const outers = loops.filter((loop) => signedArea(loop) > TINY_AREA_MM2);
-  const inner = loops.filter((loop) => signedArea(loop) < -TINY_AREA_MM2);
-  return outers.map((boundary) => ({
+function cellOf(of: MeshCell['of'], chordErrorMm: number): (region: FlatRegion) => MeshCell {
+  return ({ outer, openings }) => ({
     of,
-    outer: flattenLoop(boundary, chordErrorMm),
-    openings: inner.filter((loop) => isWithin(loop, boundary)).map((loop) => flattenLoop(loop, chordErrorMm)),
-  }));
-}
-
-function isWithin(loop: Loop, outer: Loop): boolean {
-  const corner = loop[0]?.from;
-  return corner !== undefined && pointInLoop(corner, outer, COINCIDENT_MM) !== 'outside';
-}
-
-function mayMeet(a: Loop, b: Loop): boolean {
-  const first = loopBounds(a);
-  const second = loopBounds(b);
-  return first !== null && second !== null && boundsMeet(first, second, COINCIDENT_MM);
-}
-
-function panelSide(zone: BendZone, panelIndex: number): { readonly origin: Point; readonly inward: Point } {
-  if (panelIndex === zone.parentIndex)
-    return { origin: zone.origin, inward: { x: -zone.towardsChild.x, y: -zone.towardsChild.y } };
-  return { origin: along(zone.origin, zone.towardsChild, zone.bendAllowanceMm), inward: zone.towardsChild };
-}
-
-function crossesTangent(opening: Loop, zone: BendZone, panelIndex: number): boolean {
-  const { origin, inward } = panelSide(zone, panelIndex);
-  const reach = zone.outer.map(({ from }) => dot(subtract(from, zone.origin), zone.along));
-  const tangent = line(along(origin, zone.along, Math.min(...reach)), along(origin, zone.along, Math.max(...reach)));
-  const isBothSides = loopReach(opening, inward) - dot(origin, inward) > COINCIDENT_MM;
-  return isBothSides && opening.some((segment) => intersectSegments(segment, tangent, COINCIDENT_MM).kind !== 'none');
+    outer: flattenLoop(outer, chordErrorMm),
+    openings: openings.map((loop) => flattenLoop(loop, chordErrorMm)),
+  });
 }
 
 /** Adds the corners of neighbouring cells that lie on this cell's edges along tangent lines. `corners` are given for each zone. */
