@@ -1,6 +1,6 @@
 import type { ArcSegment, LineSegment, Segment } from './path';
 import type { Bounds, Point } from './point';
-import { COINCIDENT_MM, FULL_CIRCLE_MM } from './tolerance';
+import { COINCIDENT_MM, FLAT_ARC_MM, FULL_CIRCLE_MM } from './tolerance';
 import {
   add,
   between,
@@ -22,11 +22,12 @@ export function line(from: Point, to: Point): LineSegment {
 
 /**
  * A segment from its ends and bulge = tan(sweep / 4): 0 is straight, positive a counter-clockwise arc, 1 a half circle.
- * Degenerate: coincident ends give a line of no length whatever the bulge.
+ * Degenerate: coincident ends give a line of no length whatever the bulge; an arc that rises less than `FLAT_ARC_MM` over its
+ * chord is straight, because its centre would be too far away to calculate with.
  */
 export function segmentFromBulge(from: Point, to: Point, bulge: number): Segment {
   const chord = distance(from, to);
-  if (bulge === 0 || chord <= COINCIDENT_MM) return line(from, to);
+  if (chord <= COINCIDENT_MM || Math.abs(bulge) * chord <= 2 * FLAT_ARC_MM) return line(from, to);
   // Centre lies off the chord's middle by chord/4 * (1/bulge - bulge), to the left for a positive value.
   const offset = (chord / 4) * (1 / bulge - bulge);
   const direction = { x: (to.x - from.x) / chord, y: (to.y - from.y) / chord };

@@ -4,6 +4,9 @@ export const COINCIDENT_MM = 1e-6;
 /** Ends of an arc nearer than this are the same point and the arc a full circle; far below any arc that is cut off on purpose, mm. */
 export const FULL_CIRCLE_MM = 1e-9;
 
+/** An arc that rises less than this over its chord is straight: a thousandth of what counts as the same point, mm. */
+export const FLAT_ARC_MM = 1e-9;
+
 /** A line drawn by hand or traced may miss the edge it is meant to reach by this much and is still taken to reach it, mm. */
 export const JOIN_MM = 1;
 
