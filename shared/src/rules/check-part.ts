@@ -77,7 +77,7 @@ export function checkDevelopedPart(
   result: DevelopmentResult,
 ): readonly Finding[] {
   const context = contextOf(document, role, result);
-  const findings = findWith(RULES, { ...context, tryOut: tryOutOn(context) });
+  const findings = findWith(RULES, { ...context, tryOut: tryOutOn(context, result) });
   return [...findings].sort((a, b) => RANK[a.severity] - RANK[b.severity]);
 }
 
@@ -106,7 +106,7 @@ function findWith(rules: readonly Rule[], context: RuleContext): readonly Findin
  * Mends are compared with the findings of the document as it is, which are looked for once and only when needed. How many are
  * tried depends on the size of the document alone, so that everybody is offered the same ones and nobody waits for them.
  */
-function tryOutOn(context: RuleContext): TryOut {
+function tryOutOn(context: RuleContext, result: DevelopmentResult): TryOut {
   const { outer, cutouts, features } = context.document.layout;
   const size = [outer, ...cutouts].reduce((sum, { edges }) => sum + edges.length, features.length);
   let triesLeft = Math.floor(THINGS_TRIED / Math.max(1, size));
@@ -117,7 +117,11 @@ function tryOutOn(context: RuleContext): TryOut {
     triesLeft -= 1;
     known ??= blockerIds(findWith(PLAIN_RULES, context));
     const before = known;
-    const after = findWith(PLAIN_RULES, contextOf(document, context.role, developPart(document, context.role)));
+    const isSameSheet = (['layout', 'template', 'stocks'] as const).every(
+      (part) => document[part] === context.document[part],
+    );
+    const tried = isSameSheet ? result : developPart(document, context.role);
+    const after = findWith(PLAIN_RULES, contextOf(document, context.role, tried));
     return {
       findingIds: new Set(after.map(({ id }) => id)),
       addsBlocker: [...blockerIds(after)].some((id) => !before.has(id)),
