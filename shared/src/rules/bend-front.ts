@@ -6,6 +6,7 @@ import { nearestOnSegment, pointAt } from '../geometry/segment';
 import { invert, movePoint } from '../geometry/transform';
 import { along, dot, scale, subtract } from '../geometry/vector';
 import { chainSegments } from '../part/outline-edge-sizes';
+import { wholeBends } from './zone-reach';
 
 /** One side of a bend: the panel there, and its boundary as seen from the tangent line. Flat-pattern coordinates. */
 export interface BendFront {
@@ -27,13 +28,9 @@ export interface BendFront {
 
 /** Both sides of every bend. A bend that opens several tabs has a pair for each. */
 export function bendFronts(development: Development): readonly BendFront[] {
-  const seen = new Set<string>();
-  return development.zones.flatMap((zone) => {
-    const key = `${zone.bendId} ${String(zone.parentIndex)} ${String(zone.childIndex)}`;
-    if (seen.has(key)) return [];
-    seen.add(key);
-    return (['child', 'parent'] as const).flatMap((side) => frontOf(development, zone, side) ?? []);
-  });
+  return wholeBends(development).flatMap(({ zone }) =>
+    (['child', 'parent'] as const).flatMap((side) => frontOf(development, zone, side) ?? []),
+  );
 }
 
 function frontOf(development: Development, zone: BendZone, side: 'child' | 'parent'): BendFront | null {

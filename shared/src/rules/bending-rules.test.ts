@@ -4,7 +4,7 @@ import type { PartDocument, SheetStock } from '../part/part-document';
 import { starterDocument } from '../part/starter-document';
 import { checkPart } from './check-part';
 import type { RuleId } from './finding';
-import { ACROSS, add, bracket, found, hole, outcomeOfMending, plain, severities } from './testing/rule-bench';
+import { ACROSS, add, bracket, cutout, found, hole, outcomeOfMending, plain, severities } from './testing/rule-bench';
 
 /** The mend takes the findings away and brings none that cannot be made. */
 function expectMended(document: PartDocument, rule: RuleId): void {
@@ -56,6 +56,19 @@ describe('flangeTooShort', () => {
       });
     expect(found(z(11.04), 'flangeTooShort')).toEqual([]);
     expect(severities(z(10.96), 'flangeTooShort')).toEqual(['blocker', 'blocker']);
+  });
+
+  it('tells of a flange once that a window parts at the bend', () => {
+    const parted = applyCommand(
+      withFlange(8),
+      cutout('c', [
+        [50, 20],
+        [50, 30],
+        [65, 30],
+        [65, 20],
+      ]),
+    );
+    expect(found(parted, 'flangeTooShort')).toHaveLength(1);
   });
 
   it('is mended by lengthening the flange, rounded corners and all', () => {
@@ -115,7 +128,7 @@ describe('holeInBendZone', () => {
     expectMended(add(bracket(), slot), 'holeInBendZone');
   });
 
-  it('leaves a window alone that spans the whole mouth, and a hole beside the bend’s end', () => {
+  it('leaves a window to the rule about reliefs that the bend runs across, and sees one beside the bend', () => {
     const window = (fromX: number, toX: number): PartDocument =>
       applyCommand(bracket(), {
         kind: 'addCutout',
@@ -130,6 +143,8 @@ describe('holeInBendZone', () => {
         },
       });
     expect(found(window(45, 75), 'holeInBendZone')).toEqual([]);
+    expect(found(window(54, 66), 'holeInBendZone')).toEqual([]);
+    expect(severities(window(54, 66), 'missingRelief')).toEqual(['caution']);
     const [finding] = found(window(66, 75), 'holeInBendZone');
     expect(finding).toMatchObject({ severity: 'blocker', ids: ['c1', 'b1'], mend: null });
   });

@@ -1,4 +1,4 @@
-import type { BendZone, Development } from '../bending/development';
+import type { Development } from '../bending/development';
 import { loopBounds, loopFromBulges, pointInLoop, polygonLoop } from '../geometry/loop';
 import { findCrossings } from '../geometry/loop-crossings';
 import type { Loop } from '../geometry/path';
@@ -15,7 +15,7 @@ import type { Finding } from './finding';
 import { ETCHED_TEXT, LAND, LIMIT_SLACK_MM } from './limits';
 import { mendThatHolds } from './mend-that-holds';
 import { type RuleContext, listSome, nameOf, placeOfLayout } from './rule-context';
-import { type ZoneReach, zoneReach } from './zone-reach';
+import { type WholeBend, type ZoneReach, wholeBends, zoneReach } from './zone-reach';
 
 /**
  * Etched texts: high enough to be read at the width of an etched line, on the part, clear of openings and of bend zones, and
@@ -93,9 +93,10 @@ function checkBends(
   box: Loop,
   base: ReturnType<typeof textFinding> & Pick<Finding, 'why'>,
 ): readonly Finding[] {
-  const zone = development.zones.find((one) => reachInto(one, box) !== null);
-  const reach = zone === undefined ? null : reachInto(zone, box);
-  if (zone === undefined || reach === null) return [];
+  const over = wholeBends(development).find((one) => reachInto(one, box) !== null);
+  const reach = over === undefined ? null : reachInto(over, box);
+  if (over === undefined || reach === null) return [];
+  const { zone } = over;
   const bend = nameOf(context, zone.bendId);
   const halfMm = zone.bendAllowanceMm / 2;
   const shift = scale(reach.away, halfMm - reach.rimFromCentreMm);
@@ -119,9 +120,9 @@ function checkBends(
 }
 
 /** How a text lies to a bend when it reaches between the tangent lines; else null. */
-function reachInto(zone: BendZone, box: Loop): ZoneReach | null {
-  const reach = zoneReach(box, zone);
-  return reach === null || reach.rimFromCentreMm >= zone.bendAllowanceMm / 2 - LIMIT_SLACK_MM ? null : reach;
+function reachInto(bend: WholeBend, box: Loop): ZoneReach | null {
+  const reach = zoneReach(box, bend);
+  return reach === null || reach.rimFromCentreMm >= bend.zone.bendAllowanceMm / 2 - LIMIT_SLACK_MM ? null : reach;
 }
 
 function checkCoat(context: RuleContext, marks: readonly Mark[]): readonly Finding[] {

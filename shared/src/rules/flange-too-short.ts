@@ -14,6 +14,7 @@ import { radiansFromDeg } from '../units/angle';
 import type { Finding, Mend } from './finding';
 import { LIMIT_SLACK_MM, ruleFrom } from './limits';
 import { type RuleContext, nameOf, placeOfFlat } from './rule-context';
+import { wholeBends } from './zone-reach';
 
 /**
  * Every panel beside a bend must span the die: its outside height (to the apex up to 90°, to the outermost point of the
@@ -23,7 +24,7 @@ import { type RuleContext, nameOf, placeOfFlat } from './rule-context';
 export function checkFlangeTooShort(context: RuleContext): readonly Finding[] {
   const { development } = context;
   if (development === null) return [];
-  return development.zones.flatMap((zone) =>
+  return wholeBends(development).flatMap(({ zone }) =>
     (['child', 'parent'] as const).flatMap((side) => checkSide(context, development, zone, side)),
   );
 }

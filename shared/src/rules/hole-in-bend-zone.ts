@@ -9,7 +9,7 @@ import type { Finding, Severity } from './finding';
 import { capital } from './in-words';
 import { DIE_MOUTH, LIMIT_SLACK_MM, TANGENT_DISTANCE } from './limits';
 import { type RuleContext, listNames, nameOf, panelAt, placeOfFlat } from './rule-context';
-import { zoneReach } from './zone-reach';
+import { type WholeBend, wholeBends, zoneReach } from './zone-reach';
 
 /** An opening that comes too near to one bend. */
 interface Intrusion {
@@ -25,27 +25,29 @@ interface Intrusion {
 
 /**
  * Holes, slots and cut-outs near a bend. Within 2 T of a tangent line the opening is pulled out of shape: a blocker. Over
- * the die's mouth, V/2 from the bend's centre, the metal is not held: a caution. A cut-out that spans the whole mouth has
- * no rim in it and is a usual relief. Openings count where they lie beside the bend's own length.
+ * the die's mouth, V/2 from the bend's centre, the metal is not held: a caution. A cut-out that the bend runs across
+ * interrupts it and is judged as a relief. Openings count where they lie beside the bend's own length.
  */
 export function checkHoleInBendZone(context: RuleContext): readonly Finding[] {
   const { development } = context;
   if (development === null) return [];
+  const bends = wholeBends(development);
   const intrusions = cutSheet(context).openings.flatMap((opening) =>
-    development.zones.flatMap((zone) => intrusionOf(development, opening, zone) ?? []),
+    bends.flatMap((bend) => intrusionOf(development, opening, bend) ?? []),
   );
   return groupAlike(intrusions).map((group) => describe(context, development, group));
 }
 
-function intrusionOf(development: Development, opening: CutOpening, zone: BendZone): Intrusion | null {
+function intrusionOf(development: Development, opening: CutOpening, bend: WholeBend): Intrusion | null {
+  const { zone } = bend;
   const { thicknessMm, vOpeningMm } = development.stock;
-  const reach = zoneReach(opening.loop, zone);
+  const reach = zoneReach(opening.loop, bend);
   if (reach === null) return null;
   const { rimFromCentreMm, away } = reach;
   const halfMouthMm = DIE_MOUTH.shareOfV * vOpeningMm;
   const nearMm = zone.bendAllowanceMm / 2 + TANGENT_DISTANCE.overT * thicknessMm;
   const clearMm = Math.max(halfMouthMm, nearMm);
-  if (opening.kind === 'cutout' && reach.lowMm <= -clearMm && reach.highMm >= clearMm) return null;
+  if (opening.kind === 'cutout' && reach.lowMm < 0 && reach.highMm > 0) return null;
   if (rimFromCentreMm >= clearMm - LIMIT_SLACK_MM) return null;
   return {
     opening,
@@ -118,7 +120,7 @@ function moveAway(context: RuleContext, development: Development, intrusion: Int
   const panel = panelAt(development, target);
   const feature = context.document.layout.features.find(({ id }) => id === opening.id);
   if (feature === undefined || panel === null) return [];
-  if (development.zones.some((zone) => intrusionOf(development, moved, zone) !== null)) return [];
+  if (wholeBends(development).some((bend) => intrusionOf(development, moved, bend) !== null)) return [];
   const from = feature.kind === 'hole' ? feature.centre : between(feature.from, feature.to, 0.5);
   const by = subtract(movePoint(invert(panel.placement), target), from);
   return [{ kind: 'moveFeature', featureId: opening.id, by }];
