@@ -17,6 +17,7 @@ const ENTRIES = {
   migrate: 'server/src/migrate.ts',
   cli: 'server/src/cli/main.ts',
   'photo-worker': 'server/src/vision/photo-worker.ts',
+  'step-worker': 'server/src/step/step-worker.ts',
   'cutting-service': 'server/src/fakes/cutting-service.ts',
   'payment-host': 'server/src/fakes/payment-host.ts',
   'mail-server': 'server/src/fakes/mail-server.ts',

@@ -159,6 +159,10 @@ const serverRows = [
     others: [SHARED, NODE, ...BYTES],
     why: 'Photos are read without a database: the command line and the worker threads use this folder as it is.',
   }),
+  ...folderRow('server/src/step', {
+    others: [SHARED, NODE, ...packageNames(['replicad-opencascadejs', 'zod'])],
+    why: 'Only this folder knows the solid modeller, so that another build of it can take its place.',
+  }),
   ...folderRow('server/src/cli', {
     neighbours: ['vision', 'documents'],
     others: [SHARED, NODE],
