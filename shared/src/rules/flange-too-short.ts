@@ -13,6 +13,7 @@ import { formatDecimal } from '../units/length';
 import { radiansFromDeg } from '../units/angle';
 import type { Finding, Mend } from './finding';
 import { LIMIT_SLACK_MM, ruleFrom } from './limits';
+import { tried } from './mend-that-holds';
 import { type RuleContext, nameOf, placeOfFlat } from './rule-context';
 import { wholeBends } from './zone-reach';
 
@@ -49,10 +50,11 @@ function checkSide(
   const bend = nameOf(context, zone.bendId);
   const mm = (valueMm: number) => formatDecimal(valueMm, 1);
   const edgeId = side === 'child' ? freeEdge(context, development, panel, outward) : null;
+  const id = `flangeTooShort-${zone.bendId}-${zone.childIndex}-${side}`;
   const mend = edgeId === null ? null : lengthen(context, panel, outward, edgeId, missingMm);
   return [
     {
-      id: `flangeTooShort-${zone.bendId}-${zone.childIndex}-${side}`,
+      id,
       rule: 'flangeTooShort',
       severity: 'blocker',
       title: `The ${side === 'child' ? 'flange' : 'panel'} at ${bend} is too short for the die`,
@@ -69,7 +71,7 @@ function checkSide(
       at: placeOfFlat(development, along(tangent, outward, heightMm / 2)),
       advice:
         'Make it longer, take a narrower die if the radius allows it, or leave a strip to trim off after bending.',
-      mend,
+      mend: tried(context, id, mend),
     },
   ];
 }

@@ -8,6 +8,7 @@ import { type CutOpening, cutSheet } from './cut-openings';
 import type { Finding, Severity } from './finding';
 import { capital } from './in-words';
 import { DIE_MOUTH, LIMIT_SLACK_MM, TANGENT_DISTANCE } from './limits';
+import { mendThatHolds } from './mend-that-holds';
 import { type RuleContext, listNames, nameOf, panelAt, placeOfFlat } from './rule-context';
 import { type WholeBend, wholeBends, zoneReach } from './zone-reach';
 
@@ -87,8 +88,9 @@ function describe(context: RuleContext, development: Development, group: readonl
   const commands = group.flatMap((intrusion) => moveAway(context, development, intrusion));
   const shiftMm = requiredMm - rimFromCentreMm;
   const who = group.length === 1 ? 'it' : group.length === 2 ? 'both' : 'all';
+  const id = `holeInBendZone-${zone.bendId}-${group.map((intrusion) => intrusion.opening.id).join('-')}`;
   return {
-    id: `holeInBendZone-${zone.bendId}-${group.map(({ opening: { id } }) => id).join('-')}`,
+    id,
     rule: 'holeInBendZone',
     severity,
     title: isBlocker ? `${capital(subject)} would be bent at ${bend}` : `${capital(subject)} may pull oval at ${bend}`,
@@ -104,7 +106,9 @@ function describe(context: RuleContext, development: Development, group: readonl
     at: placeOfFlat(development, opening.centre),
     advice: `Move ${who} ${formatDecimal(shiftMm, 2)} mm away from the bend, or cut ${who === 'it' ? 'it' : 'them'} after bending.`,
     mend:
-      commands.length === group.length ? { label: `Move ${who} ${formatDecimal(shiftMm, 2)} mm out`, commands } : null,
+      commands.length === group.length
+        ? mendThatHolds(context, id, `Move ${who} ${formatDecimal(shiftMm, 2)} mm out`, commands)
+        : null,
   };
 }
 

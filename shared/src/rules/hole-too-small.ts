@@ -5,6 +5,7 @@ import { findHoleDiameterMm } from '../stock/hole-diameter';
 import { formatDecimal } from '../units/length';
 import type { Finding } from './finding';
 import { LIMIT_SLACK_MM, SMALLEST_CUT } from './limits';
+import { mendThatHolds } from './mend-that-holds';
 import { type RuleContext, nameOf, placeOfLayout } from './rule-context';
 
 /**
@@ -28,6 +29,7 @@ function checkFeature(context: RuleContext, feature: Feature): readonly Finding[
     ? Math.max(SMALLEST_CUT.thinSteelOverT * thicknessMm, SMALLEST_CUT.smallestHoleMm)
     : requiredMm;
   const isBlocker = foundMm < lowestMm - LIMIT_SLACK_MM;
+  const id = `holeTooSmall-${feature.id}`;
   const name = nameOf(context, feature.id);
   const what = isHole ? 'Hole' : 'Slot';
   const size = isHole ? `${formatDecimal(foundMm, 2)} mm across` : `${formatDecimal(foundMm, 2)} mm wide`;
@@ -37,7 +39,7 @@ function checkFeature(context: RuleContext, feature: Feature): readonly Finding[
     : { x: (feature.from.x + feature.to.x) / 2, y: (feature.from.y + feature.to.y) / 2 };
   return [
     {
-      id: `holeTooSmall-${feature.id}`,
+      id,
       rule: 'holeTooSmall',
       severity: isBlocker ? 'blocker' : 'caution',
       title: `${what} ${name} is ${isBlocker ? 'too small to cut' : 'small for the laser'}`,
@@ -55,7 +57,8 @@ function checkFeature(context: RuleContext, feature: Feature): readonly Finding[
         wider === null
           ? 'Mark its centre on the laser and drill it, or take a larger thread.'
           : 'Make it larger, or mark it on the laser and drill it afterwards.',
-      mend: wider === null ? null : { label: `Grow it to ${formatDecimal(requiredMm, 2)} mm`, commands: [wider] },
+      mend:
+        wider === null ? null : mendThatHolds(context, id, `Grow it to ${formatDecimal(requiredMm, 2)} mm`, [wider]),
     },
   ];
 }

@@ -9,6 +9,7 @@ import { formatDecimal } from '../units/length';
 import { type CutOpening, type CutSheet, cutSheet, isInsideOf } from './cut-openings';
 import type { Finding, Mend } from './finding';
 import { LAND, LIMIT_SLACK_MM } from './limits';
+import { tried } from './mend-that-holds';
 import { type RuleContext, layoutShift, nameOf, placeOfFlat } from './rule-context';
 
 /**
@@ -63,9 +64,10 @@ function checkToEdge(
   const foundMm = land.distanceMm;
   const isBlocker = foundMm <= LIMIT_SLACK_MM;
   const subject = named(context, opening);
+  const id = `landTooThin-${opening.id}-edge`;
   return [
     {
-      id: `landTooThin-${opening.id}-edge`,
+      id,
       rule: 'landTooThin',
       severity: isBlocker ? 'blocker' : 'caution',
       title: isBlocker
@@ -81,7 +83,7 @@ function checkToEdge(
       ids: [opening.id],
       at: placeOf(context, sheet, land.to),
       advice: 'Move the opening in, make it smaller, or give the sheet more edge.',
-      mend: isBlocker ? null : moveIn(context, sheet, opening, land, requiredMm),
+      mend: isBlocker ? null : tried(context, id, moveIn(context, sheet, opening, land, requiredMm)),
     },
   ];
 }

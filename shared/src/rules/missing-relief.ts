@@ -112,8 +112,9 @@ function finding(
   words: Pick<Finding, 'title' | 'detail' | 'foundMm' | 'requiredMm'>,
 ): Finding {
   const { reliefs } = context.document.layout;
+  const id = `missingRelief-${bendId}`;
   return {
-    id: `missingRelief-${bendId}`,
+    id,
     rule: 'missingRelief',
     severity: 'caution',
     ...words,
@@ -121,9 +122,8 @@ function finding(
     ids: [bendId],
     at: { layout, flat },
     advice: 'Let Foldwright cut the reliefs, or draw notches of your own at the ends of the bend.',
-    mend: {
-      label: 'Cut reliefs by the rule',
-      commands: [{ kind: 'setReliefs', reliefs: { ...reliefs, mode: 'automatic', widthMm: null, depthMm: null } }],
-    },
+    mend: mendThatHolds(context, id, 'Cut reliefs by the rule', [
+      { kind: 'setReliefs', reliefs: { ...reliefs, mode: 'automatic', widthMm: null, depthMm: null } },
+    ]),
   };
 }

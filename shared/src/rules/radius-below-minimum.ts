@@ -7,6 +7,7 @@ import { findMaterial } from '../stock/materials';
 import { formatDecimal } from '../units/length';
 import type { Finding, Severity } from './finding';
 import { ALONG_GRAIN, LIMIT_SLACK_MM, NOMINAL_THICKNESS_SLACK, ruleFrom } from './limits';
+import { mendThatHolds } from './mend-that-holds';
 import { type RuleContext, nameOf, placeOfLayout } from './rule-context';
 
 /**
@@ -47,13 +48,14 @@ function checkBend(
       : minimumRadius.refuseBelow
         ? 'caution'
         : 'hint';
+  const id = `radiusBelowMinimum-${row.bendId}`;
   const name = nameOf(context, row.bendId);
   const times = (valueMm: number) => `${formatDecimal(valueMm / thicknessMm, 2)} T`;
   const setMm = Math.ceil(requiredMm * 100 - LIMIT_SLACK_MM) / 100;
   const { from, to } = bend.line;
   return [
     {
-      id: `radiusBelowMinimum-${row.bendId}`,
+      id,
       rule: 'radiusBelowMinimum',
       severity,
       title:
@@ -78,10 +80,9 @@ function checkBend(
         grain === 'across'
           ? `Bend it over a radius of ${formatDecimal(setMm, 2)} mm or more, or take a softer sheet.`
           : `Bend it over ${formatDecimal(setMm, 2)} mm or more, or lay the part so that the grain crosses this bend.`,
-      mend: {
-        label: `Set the radius to ${formatDecimal(setMm, 2)} mm`,
-        commands: [{ kind: 'changeBend', bendId: bend.id, bend: { ...bend, insideRadiusMm: setMm } }],
-      },
+      mend: mendThatHolds(context, id, `Set the radius to ${formatDecimal(setMm, 2)} mm`, [
+        { kind: 'changeBend', bendId: bend.id, bend: { ...bend, insideRadiusMm: setMm } },
+      ]),
     },
   ];
 }

@@ -19,7 +19,7 @@ export interface RuleContext {
   /** Null when the part cannot be developed; `problems` then says why. */
   readonly development: Development | null;
   readonly problems: readonly DevelopmentProblem[];
-  /** Tries commands out; null while that is being done already, so that it comes to an end. */
+  /** Tries commands out; null where no mends are wanted, as while one is being tried, so that it comes to an end. */
   readonly tryOut: TryOut | null;
 }
 

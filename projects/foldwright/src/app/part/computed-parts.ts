@@ -64,13 +64,16 @@ export class ComputedParts {
    * while a gesture lasts, a few times a second.
    */
   private readonly followed = toSignal(
-    toObservable(this.editor.drawn).pipe(audit(() => timer(this.editor.isInGesture() ? GESTURE_STEP_MS : 0))),
+    toObservable(computed(() => ({ document: this.editor.drawn(), isMoving: this.editor.isInGesture() }))).pipe(
+      audit(({ isMoving }) => timer(isMoving ? GESTURE_STEP_MS : 0)),
+    ),
     { initialValue: null },
   );
   private readonly figured = computed(() => {
     const drawn = this.editor.drawn();
-    return drawn === null ? null : (this.followed() ?? drawn);
+    return drawn === null ? null : (this.followed()?.document ?? drawn);
   });
+  private readonly isMoving = computed(() => this.followed()?.isMoving === true);
 
   readonly trial = this.inStock('trial');
   readonly production = this.inStock('production');
@@ -93,7 +96,8 @@ export class ComputedParts {
   private inStock(role: StockRole): Signal<PartInStock | null> {
     const preview = computed(() => {
       const document = this.figured();
-      return document === null ? null : previewPart(document, role);
+      // Nobody can press a mend while a hand moves, and trying them takes longer than a frame.
+      return document === null ? null : previewPart(document, role, this.isMoving() ? 'left out' : 'offered');
     });
     return computed(() => {
       const here = preview();
@@ -126,13 +130,17 @@ export class ComputedParts {
 }
 
 /** The part in one sheet, computed in the browser by the same kernel that the server uses. */
-export function previewPart(document: PartDocument, role: StockRole): PartInStock {
+export function previewPart(
+  document: PartDocument,
+  role: StockRole,
+  mends: 'offered' | 'left out' = 'offered',
+): PartInStock {
   const result = developPart(document, role);
   return {
     role,
     stockLabel: stockWords(document.stocks[role]),
     figures: result.ok ? result.development : null,
-    findings: checkDevelopedPart(document, role, result),
+    findings: checkDevelopedPart(document, role, result, mends),
     origin: 'preview',
     development: result.ok ? result.development : null,
   };
