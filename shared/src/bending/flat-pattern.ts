@@ -277,7 +277,7 @@ function reversed(segments: readonly Segment[]): readonly Segment[] {
 }
 
 function tooClose(indices: readonly number[], creases: readonly Crease[]): DevelopmentProblem {
-  const named = indices.flatMap((index) => creases[index] ?? []);
+  const named = [...indices].sort((a, b) => a - b).flatMap((index) => creases[index] ?? []);
   const names = named.map(({ name }) => name).join(' and ');
   const message =
     named.length > 1

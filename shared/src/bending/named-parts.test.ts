@@ -1,7 +1,10 @@
 import { segmentLength, tangentAt } from '../geometry/segment';
 import { dot } from '../geometry/vector';
+import { developLayout } from './develop';
 import { boxOf, developed, sizeOf } from './testing/developed';
 import { EDGES } from './testing/named-parts/edges';
+import { IMPOSSIBLE_PARTS } from './testing/named-parts/impossible';
+import { MILD } from './testing/named-parts/named-part';
 import { PLATES } from './testing/named-parts/plates';
 import { CARD_STRIPS, STRIPS } from './testing/named-parts/strips';
 
@@ -49,5 +52,21 @@ describe('parts people bend, against sizes worked out by hand', () => {
     expect(steepest('sides leaning one way, blended')).toBeLessThan(0.01);
     // atan(4 / 4.178318) - atan(1 / 2) = 43.751 - 26.565
     expect(steepest('sides leaning one way, trimmed')).toBeCloseTo(17.186, 2);
+  });
+});
+
+describe('parts that cannot be', () => {
+  it.each(IMPOSSIBLE_PARTS.map((part) => [part.name, part] as const))('%s', (_, { layout, code, offenders }) => {
+    const result = developLayout(layout, null, MILD);
+    if (result.ok) throw new Error('This part must not come out.');
+    expect(result.problems.map(({ ids }) => ids)).toEqual(offenders);
+    for (const problem of result.problems) {
+      expect(problem.code).toBe(code);
+      // People know bends by their place in the list: B1, B2.
+      for (const id of problem.ids) {
+        const place = layout.bends.findIndex((bend) => bend.id === id);
+        expect(problem.message).toContain(`B${String(place + 1)}`);
+      }
+    }
   });
 });

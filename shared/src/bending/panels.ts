@@ -54,11 +54,14 @@ export type PanelTreeResult =
  * Refuses rings of faces, bend lines that part nothing and an anchor off the sheet, naming the bends.
  */
 export function cutPanels(sheet: Sheet, creases: readonly Crease[], baseAnchor: Point): PanelTreeResult {
-  const faces = traceFaces(sheet, creases);
-  if (faces === null) {
+  const loops = traceLoops(sheet, creases);
+  if (loops === null) {
     const message = 'The outline and the bend lines do not part the sheet into panels.';
     return { ok: false, problems: [{ code: 'outlineNotSimple', message, ids: creases.map(({ bend }) => bend.id) }] };
   }
+  const inner = bendsInsidePanels(loops, creases);
+  if (inner.length > 0) return { ok: false, problems: inner };
+  const faces = facesOf(loops, sheet, creases);
   const base = baseFace(faces, baseAnchor);
   if (base === null) {
     return {
@@ -69,8 +72,13 @@ export function cutPanels(sheet: Sheet, creases: readonly Crease[], baseAnchor: 
   return growTree(faces, creases, base);
 }
 
-function traceFaces(sheet: Sheet, creases: readonly Crease[]): readonly Face[] | null {
-  const ends = creases.flatMap(({ chords }) => chords.flatMap(({ from, to }) => [from, to]));
+function chordEnds(creases: readonly Crease[]): readonly Point[] {
+  return creases.flatMap(({ chords }) => chords.flatMap(({ from, to }) => [from, to]));
+}
+
+/** Outlines of faces, counter-clockwise, and openings that lie within them, clockwise. */
+function traceLoops(sheet: Sheet, creases: readonly Crease[]): readonly (readonly FaceEdge[])[] | null {
+  const ends = chordEnds(creases);
   const boundary: readonly FaceEdge[] = [sheet.outer, ...sheet.cutouts.map(({ loop }) => loop)]
     .flat()
     .flatMap((segment) => splitSegment(segment, ends, COINCIDENT_MM));
@@ -78,8 +86,31 @@ function traceFaces(sheet: Sheet, creases: readonly Crease[]): readonly Face[] |
     ...boundary,
     ...creases.flatMap((crease, index) => crease.chords.flatMap((chord, at) => bothWays(chord, index, at))),
   ];
-  const loops = closeLoops(edges, 2 * COINCIDENT_MM);
-  if (loops === null) return null;
+  return closeLoops(edges, 2 * COINCIDENT_MM);
+}
+
+/**
+ * Bends of a tab that is cut free inside a panel. The sheet goes on all round it, so its bend line is no part of a panel's outline:
+ * left unsaid, tab and opening would be missing from the flat pattern.
+ */
+function bendsInsidePanels(
+  loops: readonly (readonly FaceEdge[])[],
+  creases: readonly Crease[],
+): readonly DevelopmentProblem[] {
+  return loops
+    .filter((loop) => signedArea(loop) <= 0)
+    .flatMap((loop): readonly DevelopmentProblem[] => {
+      const indices = [...new Set(loop.filter(isChordEdge).map(({ crease }) => crease))].sort((a, b) => a - b);
+      const found = indices.flatMap((index) => creases[index] ?? []);
+      if (found.length === 0) return [];
+      const names = found.map(({ name }) => name).join(' and ');
+      const message = `Bend line ${names} lies inside a panel, with sheet all round it. Take the opening beside it to an edge.`;
+      return [{ code: 'bendLineEndsInside', message, ids: found.map(({ bend }) => bend.id) }];
+    });
+}
+
+function facesOf(loops: readonly (readonly FaceEdge[])[], sheet: Sheet, creases: readonly Crease[]): readonly Face[] {
+  const ends = chordEnds(creases);
   const outers = loops.filter((loop) => signedArea(loop) > 0);
   const inner = sheet.cutouts.filter(({ loop }) => !loop.some((segment) => touchesAny(segment, ends)));
   return outers.map((outer) => ({
@@ -141,13 +172,10 @@ function growTree(faces: readonly Face[], creases: readonly Crease[], base: numb
       used.add(pair);
       const other = pair.left === face ? pair.right : pair.left;
       if (order.includes(other)) {
-        const ids = ringBends(face, other, pair.crease, order, hinges, creases);
-        return {
-          ok: false,
-          problems: [
-            { code: 'panelRing', message: 'These bends join panels into a ring, which cannot be folded.', ids },
-          ],
-        };
+        const ring = ringBends(face, other, pair.crease, order, hinges, creases);
+        const names = ring.map(({ name }) => name).join(', ');
+        const message = `Bends ${names} join panels into a ring, which cannot be folded.`;
+        return { ok: false, problems: [{ code: 'panelRing', message, ids: ring.map(({ bend }) => bend.id) }] };
       }
       hinges.push({
         crease: pair.crease,
@@ -204,7 +232,7 @@ function ringBends(
   order: readonly number[],
   hinges: readonly Hinge[],
   creases: readonly Crease[],
-): readonly string[] {
+): readonly Crease[] {
   const wayUp = (start: number): readonly number[] => {
     const passed: number[] = [];
     let at = order.indexOf(start);
@@ -225,5 +253,5 @@ function ringBends(
     ...second.filter((crease) => !first.includes(crease)),
     closing,
   ];
-  return [...new Set(around)].sort((a, b) => a - b).flatMap((index) => creases[index]?.bend.id ?? []);
+  return [...new Set(around)].sort((a, b) => a - b).flatMap((index) => creases[index] ?? []);
 }
