@@ -42,6 +42,7 @@ export async function startWorkerProcess(
       { queue: 'cutting-order', handle: ({ data }) => commerce['cutting-order'](data) },
       { queue: 'payment', handle: ({ data }) => commerce.payment(data) },
       { queue: 'sale', handle: ({ data }) => commerce.sale(data) },
+      { queue: 'solid', handle: ({ data }) => commerce.solid(data) },
     ],
   });
   logger.info({ workerId: worker.workerId }, 'worker waits for work');

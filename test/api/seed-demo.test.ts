@@ -46,7 +46,7 @@ describe('the demo', () => {
     const file = await owner.get(`/api/revisions/${revisionId}/files/dxf?stock=production`).buffer(true).expect(200);
     expect(file.headers['content-disposition']).toMatch(/^attachment; filename="LC-02 A Pump tray production.dxf"/);
     const detail = await owner.get(`/api/revisions/${revisionId}`).expect(200);
-    expect(detail.body.files).toHaveLength(3);
+    expect(detail.body.files).toHaveLength(4);
   });
 
   it('has a shop whose water kit lacks one bracket in moss, and can be sent at once in cream', async () => {

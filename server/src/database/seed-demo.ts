@@ -16,6 +16,7 @@ import grinderCradle from '../setup/demo/parts/grinder-cradle.json';
 import pumpTray from '../setup/demo/parts/pump-tray.json';
 import regulatorBracket from '../setup/demo/parts/regulator-bracket.json';
 import signBracket from '../setup/demo/parts/sign-bracket.json';
+import { writeSolids } from '../services/write-solids';
 import type { Database } from './database';
 import { seedShop } from './seed-shop';
 
@@ -200,7 +201,13 @@ async function addDemoPart(options: SeedOptions, member: Member, part: DemoPart)
   const key = createHash('sha256').update(`demo ${part.number}`).digest('hex');
   const acceptedCautionIds = [...new Set(cautions.map(({ id }) => id))];
   const input = { baseRevision: 0, note: part.releaseNote, acceptedCautionIds };
-  await releaseDraft(database, files, member, draftId, input, key, now());
+  let released = '';
+  await releaseDraft(database, files, member, draftId, input, key, now(), (_, revisionId) => {
+    released = revisionId;
+    return Promise.resolve();
+  });
+  // No worker runs yet.
+  if (released !== '') await writeSolids(database, files, { workshopId: member.workshopId, revisionId: released });
 }
 
 /**

@@ -7,6 +7,7 @@ import { sendMail } from '../services/send-mail';
 import { closeSaleCheckout, expireSale, sendRefund } from '../services/sales/settle-sale';
 import { closeCheckout, refundPayment } from '../services/settle-payment';
 import { submitCuttingOrder } from '../services/submit-cutting-order';
+import { writeSolids } from '../services/write-solids';
 import type { QueueName } from './queue';
 
 /** What the work after commit of orders needs. */
@@ -32,9 +33,12 @@ const saleWork = z.discriminatedUnion('task', [
   z.object({ task: z.literal('close-checkout'), workshopId: z.uuid(), saleId: z.uuid() }),
 ]);
 
-/** The handlers of everything that follows an order: mail, the cutting service, the payment host. */
+const solidWork = z.object({ workshopId: z.uuid(), revisionId: z.uuid() });
+
+/** The handlers of everything that follows a release or an order: solids, mail, the cutting service, the payment host. */
 export function commerceWork(tools: CommerceTools): Readonly<Record<Exclude<QueueName, 'trace'>, Handle>> {
   return {
+    solid: (data) => writeSolids(tools.database, tools.files, solidWork.parse(data)),
     mail: (data) => sendMail(tools, mailWork.parse(data)),
     'cutting-order': (data) => submitCuttingOrder(tools, orderWork.parse(data)),
     payment: async (data) => {

@@ -4,7 +4,7 @@ import PgBoss from 'pg-boss';
 import type { Transaction } from 'sequelize';
 
 /** Queues that migrations have made. A new kind of work adds its name here and its queue in a migration. */
-export type QueueName = 'trace' | 'mail' | 'cutting-order' | 'payment' | 'sale';
+export type QueueName = 'trace' | 'mail' | 'cutting-order' | 'payment' | 'sale' | 'solid';
 
 /** Channel on which workers hear that there is something to do, so that they need not wait for their next look. */
 export const WORK_CHANNEL = 'foldwright_work';

@@ -6,6 +6,7 @@ import { shopAndSales } from './20261201-0500-shop-and-sales';
 import { invitations } from './20261201-0600-invitations';
 import { failedMessages } from './20261201-0700-failed-messages';
 import { reviews } from './20261201-0800-reviews';
+import { solids } from './20261201-0900-solids';
 import type { Migration } from './migration';
 
 /** Every step of the schema in order. A list rather than a folder, so that it survives bundling. */
@@ -18,4 +19,5 @@ export const ALL_MIGRATIONS: readonly Migration[] = [
   invitations,
   failedMessages,
   reviews,
+  solids,
 ];

@@ -6,7 +6,7 @@ export class RevisionFile extends Model<InferAttributes<RevisionFile>, InferCrea
   declare id: CreationOptional<string>;
   declare workshopId: string;
   declare revisionId: string;
-  declare kind: 'dxf' | 'drawing' | 'full-size-print';
+  declare kind: 'dxf' | 'drawing' | 'full-size-print' | 'step';
   declare stock: 'trial' | 'production';
   declare paper: 'none' | 'A4' | 'Letter';
   declare fileName: string;

@@ -14,7 +14,7 @@ import { renamePart } from '../services/rename-part';
 import { sendCommands } from '../services/send-commands';
 import { startDraft } from '../services/start-draft';
 
-export function partRoutes({ database, files, now }: AppDependencies): BoundRoute[] {
+export function partRoutes({ database, files, queue, now }: AppDependencies): BoundRoute[] {
   const cache = new ComputationCache();
   return [
     bind(contracts.listParts, async ({ actor, query }) => ({ parts: await listParts(database, actor, query.search) })),
@@ -40,7 +40,9 @@ export function partRoutes({ database, files, now }: AppDependencies): BoundRout
       printDraft(database, cache, actor, params.draftId, { role: query.stock, paper: query.paper }),
     ),
     bind(contracts.releaseDraft, ({ actor, params, body, idempotencyKey }) =>
-      releaseDraft(database, files, actor, params.draftId, body, idempotencyKey, now()),
+      releaseDraft(database, files, actor, params.draftId, body, idempotencyKey, now(), async (scope, revisionId) => {
+        await queue.enqueue(scope.transaction, 'solid', { workshopId: scope.workshopId, revisionId });
+      }),
     ),
   ];
 }

@@ -7,6 +7,7 @@ import { notFound } from '../http/problem';
 import type { Member } from '../http/visitor';
 import { presentRevision } from '../presenters/revisions';
 import { namesOfPeople } from './names-of-people';
+import type { ReleasedFileKind } from './released-file';
 
 /** @throws Problem `not-found` */
 export function readRevision(database: Database, member: Member, revisionId: string): Promise<RevisionDetail> {
@@ -25,7 +26,7 @@ export function readRevision(database: Database, member: Member, revisionId: str
 }
 
 export interface RevisionFileChoice {
-  readonly kind: 'dxf' | 'drawing' | 'full-size-print';
+  readonly kind: ReleasedFileKind;
   readonly stock: StockRole;
   /** Counts for the full-size print only; A4 when not said. */
   readonly paper?: 'A4' | 'Letter' | undefined;
@@ -52,7 +53,7 @@ export async function readRevisionFile(
     bytes: await files.read(row.storedAs),
     contentType: row.contentType,
     fileName: row.fileName,
-    disposition: row.kind === 'dxf' ? 'attachment' : 'inline',
+    disposition: row.contentType === 'application/pdf' ? 'inline' : 'attachment',
     isImmutable: true,
   };
 }

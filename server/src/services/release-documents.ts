@@ -1,5 +1,4 @@
-import { createHash } from 'node:crypto';
-import type { PartDocument, StockRole } from '@foldwright/shared/part/part-document';
+import type { PartDocument } from '@foldwright/shared/part/part-document';
 import type { DocumentInput } from '../documents/document-input';
 import { makeDxf } from '../documents/dxf';
 import { makeFullSizePrint } from '../documents/full-size-print';
@@ -9,18 +8,8 @@ import type { Member } from '../http/visitor';
 import type { Draft } from '../models/draft';
 import type { Part } from '../models/part';
 import type { Computation, PartComputations } from './computed-part';
-
-/** A written file with all that its row needs. */
-export interface ReleasedFile {
-  readonly kind: 'dxf' | 'drawing' | 'full-size-print';
-  readonly stock: StockRole;
-  readonly paper: 'none' | 'A4' | 'Letter';
-  readonly fileName: string;
-  readonly storedAs: string;
-  readonly contentType: string;
-  readonly byteLength: number;
-  readonly sha256: string;
-}
+import type { ReleasedFile } from './released-file';
+import { keepReleasedFile, releaseName } from './released-file';
 
 export interface ReleaseSubject {
   readonly part: Part;
@@ -29,9 +18,6 @@ export interface ReleaseSubject {
   readonly computations: PartComputations;
   readonly hash: string;
 }
-
-/** Characters that file systems and mail programs take everywhere. */
-const plainName = (text: string): string => text.replace(/[^\p{L}\p{N} ._-]+/gu, '-').trim();
 
 function inputFor(subject: ReleaseSubject, member: Member, computation: Computation, now: Date): DocumentInput {
   const { part, draft, document, hash } = subject;
@@ -65,20 +51,9 @@ export async function writeReleaseDocuments(
   now: Date,
 ): Promise<ReleasedFile[]> {
   const written: ReleasedFile[] = [];
-  const name = plainName(`${subject.part.number} ${subject.draft.letter} ${subject.part.name}`);
-  const pdf = 'application/pdf';
-
+  const name = releaseName(subject.part, subject.draft.letter);
   const keep = async (file: Pick<ReleasedFile, 'kind' | 'stock' | 'paper'>, label: string, bytes: Buffer) => {
-    const isDxf = file.kind === 'dxf';
-    const extension = isDxf ? 'dxf' : 'pdf';
-    written.push({
-      ...file,
-      fileName: `${name} ${label}.${extension}`,
-      storedAs: await store.put(member.workshopId, extension, bytes),
-      contentType: isDxf ? 'image/vnd.dxf' : pdf,
-      byteLength: bytes.length,
-      sha256: createHash('sha256').update(bytes).digest('hex'),
-    });
+    written.push(await keepReleasedFile(store, member.workshopId, file, `${name} ${label}`, bytes));
   };
 
   try {

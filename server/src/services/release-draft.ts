@@ -17,7 +17,7 @@ import { computeBothStocks, rulesVersion, tablesVersion } from './computed-part'
 import { earlierAnswer, once } from './once';
 import { cannotBeDeveloped } from './print-draft';
 import { recordAudit } from './record-audit';
-import type { ReleasedFile } from './release-documents';
+import type { ReleasedFile } from './released-file';
 import { writeReleaseDocuments } from './release-documents';
 import { refuseClosed, refuseOldBase } from './send-commands';
 import { readStoredDocument } from './stored-document';
@@ -95,6 +95,7 @@ async function freeze(
   files: readonly ReleasedFile[],
   input: ReleaseInput,
   now: Date,
+  followUp: FollowUp,
 ): Promise<RevisionSummary> {
   const { part, document, computations, hash } = prepared;
   const draft = await scope.rows.drafts.get(prepared.draft.id, { lock: true });
@@ -117,12 +118,16 @@ async function freeze(
     releasedAt: now,
   });
   for (const file of files) await scope.rows.revisionFiles.add({ ...file, revisionId: revision.id });
+  await followUp(scope, revision.id);
   await scope.rows.drafts.change(draft, { closedAt: now, releasedRevisionId: revision.id, furthestStep: 'release' });
   await scope.rows.parts.changeWhere({ id: part.id }, { updatedAt: now });
   await recordAudit(scope, member, `Released revision ${draft.letter}`, `${part.number} ${part.name}`);
   recordEvent(scope, { kind: 'part-changed', partId: part.id });
   return presentRevisionSummary(revision, () => member.userName);
 }
+
+/** What is done in the transaction of a release besides: work for later is put into the queue. */
+export type FollowUp = (scope: WorkshopScope, revisionId: string) => Promise<void>;
 
 /**
  * Freeze a draft as a revision: document, computed tables, versions and hash, with its files written. The files are made
@@ -137,6 +142,7 @@ export async function releaseDraft(
   input: ReleaseInput,
   idempotencyKey: string,
   now: Date,
+  followUp: FollowUp,
 ): Promise<RevisionSummary> {
   const key = { userId: member.userId, route: 'releaseDraft', key: idempotencyKey, request: { draftId, ...input } };
   const start = await database.inWorkshop(member.workshopId, async (scope) => {
@@ -152,7 +158,7 @@ export async function releaseDraft(
       isFrozenHere = false;
       const answer = await once(scope, key, revisionSummarySchema, async () => {
         isFrozenHere = true;
-        return freeze(scope, member, start, files, input, now);
+        return freeze(scope, member, start, files, input, now, followUp);
       });
       return answer;
     });

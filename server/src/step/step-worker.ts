@@ -14,14 +14,8 @@ async function main(): Promise<void> {
     try {
       const solid = buildSolid(oc, plan);
       const builtInMs = performance.now() - began;
-      const answer = {
-        ok: true,
-        step: writeStep(oc, solid, name, stamp),
-        measures: measureSolid(oc, solid),
-        builtInMs,
-      };
-      solid.delete();
-      return answer;
+      const step = writeStep(oc, solid, name, stamp);
+      return { ok: true, step, measures: measureSolid(oc, solid), builtInMs };
     } catch (error) {
       if (error instanceof SolidBuildError) return { ok: false, reason: error.message };
       // What the modeller throws is a number that stands for an exception of its own.

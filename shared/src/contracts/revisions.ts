@@ -4,6 +4,8 @@ import { partDocumentSchema } from './part-document-schema';
 import { defineRoute } from './route';
 import { rowId, timestamp } from './scalars';
 
+const fileKind = z.enum(['dxf', 'drawing', 'full-size-print', 'step']);
+
 export const revisionSummarySchema = z.object({
   id: rowId,
   partId: rowId,
@@ -26,7 +28,7 @@ export const revisionDetailSchema = z.object({
   /** Versions of the rules and tables that were in force. */
   rulesVersion: z.string(),
   tablesVersion: z.string(),
-  files: z.array(z.object({ kind: z.enum(['dxf', 'drawing', 'full-size-print']), fileName: z.string() })),
+  files: z.array(z.object({ kind: fileKind, fileName: z.string() })),
 });
 export type RevisionDetail = z.output<typeof revisionDetailSchema>;
 
@@ -51,8 +53,8 @@ export const readRevisionFile = defineRoute({
   path: '/api/revisions/:revisionId/files/:kind',
   tag: 'revisions',
   access: everyMember,
-  summary: 'DXF, drawing or full-size print of a revision',
-  params: z.strictObject({ revisionId: rowId, kind: z.enum(['dxf', 'drawing', 'full-size-print']) }),
+  summary: 'DXF, drawing, full-size print or STEP solid of a revision; solids are written soon after the release',
+  params: z.strictObject({ revisionId: rowId, kind: fileKind }),
   query: z.strictObject({ stock: z.enum(['trial', 'production']), paper: z.optional(z.enum(['A4', 'Letter'])) }),
   answer: 'file',
   successStatus: 200,

@@ -3,7 +3,7 @@ import { type RevisionDetail, readRevision, readRevisionFile } from '@foldwright
 import type { StockRole } from '@foldwright/shared/part/part-document';
 import { ApiClient, type ApiRead } from './api-client';
 
-export type RevisionFileKind = 'dxf' | 'drawing' | 'full-size-print';
+export type RevisionFileKind = 'dxf' | 'drawing' | 'full-size-print' | 'step';
 
 /** Released revisions and their documents. */
 @Injectable({ providedIn: 'root' })

@@ -6,6 +6,7 @@ import { Pictogram } from '@foldwright/ui/pictogram/pictogram';
 import { newIdempotencyKey } from '../../api/api-client';
 import { Notices } from '../../api/notices';
 import { OrdersApi } from '../../api/orders-api';
+import { rereadOn } from '../../api/reread';
 import { type RevisionFileKind, RevisionsApi } from '../../api/revisions-api';
 import { QuoteCard } from './quote-card';
 import { RevisionBuyers } from './revision-buyers';
@@ -16,6 +17,7 @@ const FILE_WORDS: Readonly<Record<RevisionFileKind, string>> = {
   dxf: 'DXF to cut from',
   drawing: 'Drawing',
   'full-size-print': 'Full-size print',
+  step: 'STEP solid',
 };
 
 /** A frozen revision: its fingerprint, its files in either sheet, prices from the cutting service, and the order. */
@@ -76,6 +78,11 @@ export class ReleasedRevision {
   protected readonly quote = computed(
     () => this.quotes.value()?.quotes.find((quote) => quote.stock === this.role()) ?? null,
   );
+
+  constructor() {
+    // Solids are written a little after the release.
+    rereadOn(['part-changed'], () => this.read.reload());
+  }
 
   protected label(role: StockRole): string {
     return this.revision()?.[role].stockLabel ?? role;
