@@ -92,16 +92,24 @@ describe('nicks in an outline', () => {
   it('are read back from a traced outline: chords for arcs, every corner a tenth of a millimetre off', () => {
     const off = fc.double({ min: -0.1, max: 0.1, noNaN: true });
     fc.assert(
-      fc.property(message, fc.array(fc.tuple(off, off), { minLength: 60, maxLength: 60 }), (said, shakes) => {
-        const { outer } = writeNicks(sheet(), said);
-        const corners = outer.flatMap((segment): readonly Point[] => flattenSegment(segment, 0.15).slice(0, -1));
-        const shaken = corners.map(({ x, y }, index) => {
-          const [dx, dy] = shakes[index % shakes.length] ?? [0, 0];
-          return { x: x + dx, y: y + dy };
-        });
-        const traced = shaken.map((from, index) => line(from, shaken[(index + 1) % shaken.length] ?? from));
-        expect(readNicks(traced)).toEqual({ kind: 'read', message: said, isMirrored: false });
-      }),
+      fc.property(
+        message,
+        fc.array(fc.tuple(off, off), { minLength: 60, maxLength: 60 }),
+        fc.double({ min: 0, max: 360, noNaN: true }),
+        (said, shakes, turnDeg) => {
+          const { outer } = writeNicks(sheet(), said);
+          const turned = moveLoop({ turnDeg, shift: { x: -11, y: 5 } }, outer);
+          const corners = turned.flatMap((segment): readonly Point[] => flattenSegment(segment, 0.15).slice(0, -1));
+          const shaken = corners.map(({ x, y }, index) => {
+            const [dx, dy] = shakes[index % shakes.length] ?? [0, 0];
+            return { x: x + dx, y: y + dy };
+          });
+          const traced = polygonLoop(shaken);
+          expect(readNicks(traced)).toEqual({ kind: 'read', message: said, isMirrored: false });
+          // The other face up: the outline of the other hand, and never another message.
+          expect(readNicks(mirrorLoop(traced))).toEqual({ kind: 'read', message: said, isMirrored: true });
+        },
+      ),
       { numRuns: runs() },
     );
   });

@@ -3,6 +3,10 @@ import type { Point } from '../geometry/point';
 
 /** Flanges of a tray end this far from its corners: room for the thickest starting sheet, 3 mm, and a gap. */
 const TRAY_CORNER_MM = 4;
+/** Reliefs at its corners reach this far from the outside of base and flange: past the tangent lines of the same sheet. */
+const TRAY_RELIEF_MM = 9;
+/** A flange goes on above its reliefs when so much of it is left there, mm; else it is as narrow as its bend. */
+const LEAST_ABOVE_RELIEF_MM = 6;
 /** A gusset keeps this far from the flange it stands against: clear of the bend's radius and of the relief beside it. */
 const GUSSET_CLEAR_MM = 12;
 /** Both ends of a gusset are cut square by this much, so that the die holds them and nobody is stabbed. */
@@ -32,33 +36,50 @@ function folded(outer: readonly Point[], bends: readonly (readonly [Point, Point
 }
 
 /**
- * A tray of outside sizes: a base with its corner at the origin and a flange on every side, reliefs at their ends.
+ * A tray of outside sizes: a base with its corner at the origin and a flange on every side. Every corner has a square relief, out of
+ * the base and out of both flanges, in which two bends end; above it the flanges nearly meet.
  * @throws StarterError when a side is too short to carry a flange
  */
 export function trayLayout(lengthMm: number, widthMm: number, flangeMm: number): Layout {
-  const c = TRAY_CORNER_MM;
+  const r = TRAY_RELIEF_MM;
   for (const [name, valueMm] of [
     ['length', lengthMm],
     ['width', widthMm],
   ] as const) {
-    if (valueMm <= 3 * c)
-      throw new StarterError(`A tray’s ${name} of ${valueMm} mm carries no flange; it starts above ${3 * c} mm.`);
+    if (valueMm <= 3 * r)
+      throw new StarterError(`A tray’s ${name} of ${valueMm} mm carries no flange; it starts above ${3 * r} mm.`);
   }
-  const [l, w, f] = [lengthMm, widthMm, flangeMm];
-  const point = (x: number, y: number): Point => ({ x, y });
-  const outer = [
-    ...[point(0, 0), point(c, 0), point(c, -f), point(l - c, -f), point(l - c, 0)],
-    ...[point(l, 0), point(l, c), point(l + f, c), point(l + f, w - c), point(l, w - c)],
-    ...[point(l, w), point(l - c, w), point(l - c, w + f), point(c, w + f), point(c, w)],
-    ...[point(0, w), point(0, w - c), point(-f, w - c), point(-f, c), point(0, c)],
+  const sides = [
+    { start: { x: 0, y: 0 }, along: { x: 1, y: 0 }, sideMm: lengthMm },
+    { start: { x: lengthMm, y: 0 }, along: { x: 0, y: 1 }, sideMm: widthMm },
+    { start: { x: lengthMm, y: widthMm }, along: { x: -1, y: 0 }, sideMm: lengthMm },
+    { start: { x: 0, y: widthMm }, along: { x: 0, y: -1 }, sideMm: widthMm },
   ];
-  const bends = [
-    [point(c, 0), point(l - c, 0)],
-    [point(l, c), point(l, w - c)],
-    [point(l - c, w), point(c, w)],
-    [point(0, w - c), point(0, c)],
-  ] as const;
-  return folded(outer, bends, point(l / 2, w / 2));
+  const outer: Point[] = [];
+  const bends: (readonly [Point, Point])[] = [];
+  for (const { start, along, sideMm } of sides) {
+    const at = (alongMm: number, outMm: number): Point => ({
+      x: start.x + along.x * alongMm + along.y * outMm,
+      y: start.y + along.y * alongMm - along.x * outMm,
+    });
+    const [from, to] = [at(r, 0), at(sideMm - r, 0)];
+    const left = flangeSide(flangeMm);
+    outer.push(at(r, -r), from, ...left.map(([offMm, outMm]) => at(offMm, outMm)));
+    outer.push(...[...left].reverse().map(([offMm, outMm]) => at(sideMm - offMm, outMm)), to);
+    bends.push([from, to]);
+  }
+  return folded(outer, bends, { x: lengthMm / 2, y: widthMm / 2 });
+}
+
+/** Corners of one side of a flange above its bend line, from the bend up: distance from the tray's corner, and outwards. */
+function flangeSide(flangeMm: number): readonly (readonly [number, number])[] {
+  const r = TRAY_RELIEF_MM;
+  if (flangeMm < r + LEAST_ABOVE_RELIEF_MM) return [[r, flangeMm]];
+  return [
+    [r, r],
+    [TRAY_CORNER_MM, r],
+    [TRAY_CORNER_MM, flangeMm],
+  ];
 }
 
 /**

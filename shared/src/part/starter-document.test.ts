@@ -62,6 +62,39 @@ describe('starterDocument', () => {
     );
   });
 
+  it('leans out by its angle where that is less than 90°', () => {
+    fc.assert(
+      fc.property(
+        size,
+        size,
+        fc.double({ min: 5, max: 90, noNaN: true }),
+        role,
+        (baseMm, flangeMm, bendAngleDeg, stock) => {
+          const starter: StarterShape = { shape: 'l-bracket', baseMm, flangeMm, widthMm: 40, bendAngleDeg };
+          const [cosine, sine] = [Math.cos((bendAngleDeg * Math.PI) / 180), Math.sin((bendAngleDeg * Math.PI) / 180)];
+          const expected = [baseMm + flangeMm * cosine, 40, flangeMm * sine + thicknessOf(starter, stock) * cosine];
+          formedSize(starter, stock).forEach((sizeMm, axis) => {
+            expect(Math.abs(sizeMm - (expected[axis] ?? 0))).toBeLessThan(0.01);
+          });
+        },
+      ),
+      { numRuns: 50 },
+    );
+  });
+
+  it.each(['trial', 'production'] as const)('ends every bend of a tray in a relief, in the %s sheet', (stock) => {
+    for (const flangeMm of [12, 15, 25]) {
+      const result = developPart(starterDocument({ shape: 'tray', lengthMm: 120, widthMm: 80, flangeMm }), stock);
+      if (!result.ok) throw new Error('A tray can be developed.');
+      // 9 mm at either end, on base and flange, so that no bend zone touches another or ends askew.
+      expect(result.development.bendTable.map(({ bendLengthMm }) => bendLengthMm)).toEqual(
+        [102, 62, 102, 62].map((lengthMm) => expect.closeTo(lengthMm, 9) as unknown),
+      );
+      for (const { outer } of result.development.zones) expect(outer).toHaveLength(4);
+      expect(result.development.reliefs).toEqual([]);
+    }
+  });
+
   it('is a good document, the same every time, and one the contract takes', () => {
     const starter: StarterShape = {
       shape: 'u-bracket',
@@ -78,7 +111,7 @@ describe('starterDocument', () => {
 
   it.each<[string, StarterShape]>([
     ['a gusset taller than its flange', { shape: 'gusseted-l', baseMm: 90, flangeMm: 40, widthMm: 50, gussetMm: 41 }],
-    ['a tray without room for a flange', { shape: 'tray', lengthMm: 12, widthMm: 60, flangeMm: 20 }],
+    ['a tray without room for a flange', { shape: 'tray', lengthMm: 27, widthMm: 60, flangeMm: 20 }],
     ['a size of 0', { shape: 'flat-plate', widthMm: 0, heightMm: 10 }],
     ['a size that is no number', { shape: 'flat-plate', widthMm: Number.NaN, heightMm: 10 }],
     ['a bend that closes on itself', { shape: 'l-bracket', baseMm: 50, flangeMm: 30, widthMm: 20, bendAngleDeg: 170 }],
