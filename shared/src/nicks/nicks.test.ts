@@ -96,8 +96,9 @@ describe('nicks in an outline', () => {
         message,
         fc.array(fc.tuple(off, off), { minLength: 60, maxLength: 60 }),
         fc.double({ min: 0, max: 360, noNaN: true }),
-        (said, shakes, turnDeg) => {
-          const { outer } = writeNicks(sheet(), said);
+        fc.constantFrom(0.8, 1.5, 2, 3),
+        (said, shakes, turnDeg, thicknessMm) => {
+          const { outer } = writeNicks(sheet({ thicknessMm }), said);
           const turned = moveLoop({ turnDeg, shift: { x: -11, y: 5 } }, outer);
           const corners = turned.flatMap((segment): readonly Point[] => flattenSegment(segment, 0.15).slice(0, -1));
           const shaken = corners.map(({ x, y }, index) => {
