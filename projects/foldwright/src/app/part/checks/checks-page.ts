@@ -1,4 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import type { Assembly } from '@foldwright/shared/part/assembly';
 import { entityNames } from '@foldwright/shared/part/entity-names';
 import type { DeclaredUse } from '@foldwright/shared/part/part-document';
 import type { Mend } from '@foldwright/shared/rules/finding';
@@ -12,12 +13,13 @@ import { drawingNotes } from '../drawing-board/drawing/notes';
 import { drawingOfLayout } from '../drawing-board/drawing/sheet-drawing';
 import { PartStore } from '../part-store';
 import { mergeFindings, sheetWords, type MergedFinding } from './merged-findings';
+import { AssemblyForm } from './assembly-form';
 import { UseForm } from './use-form';
 
 /** The checks step: every finding for both sheets with its place, reason and mend; and what the part is used for. */
 @Component({
   selector: 'fw-checks-page',
-  imports: [DrawingBoard, FindingNote, Pictogram, UseForm],
+  imports: [AssemblyForm, DrawingBoard, FindingNote, Pictogram, UseForm],
   templateUrl: './checks-page.html',
   styleUrl: './checks-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -74,5 +76,9 @@ export class ChecksPage {
 
   protected declare(uses: readonly DeclaredUse[]): void {
     this.store.apply([{ kind: 'setDeclaredUses', uses }]);
+  }
+
+  protected putOn(assembly: Assembly): void {
+    this.store.apply([{ kind: 'setAssembly', assembly }]);
   }
 }
