@@ -132,7 +132,7 @@ describe('problems name the offenders', () => {
     expect(problemsOf(plate([across('a', 98.5)]))).toMatchObject([{ code: 'bendTooClose', ids: ['a'] }]);
   });
 
-  it.each([0, -90, 180.5, Number.NaN])('an angle of %s', (bendAngleDeg) => {
+  it.each([0, 1e-9, 0.099, -90, 180.5, Number.NaN])('an angle of %s', (bendAngleDeg) => {
     expect(problemsOf(plate([{ ...across('a', 50), bendAngleDeg }]))).toMatchObject([
       { code: 'angleOutOfRange', ids: ['a'] },
     ]);

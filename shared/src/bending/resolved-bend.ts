@@ -25,6 +25,9 @@ export interface ResolvedBend {
 export type ResolvedBendResult =
   { readonly ok: true; readonly bend: ResolvedBend } | { readonly ok: false; readonly problem: DevelopmentProblem };
 
+/** A smaller turn is no bend: sheet is never flatter, and its zone would be narrower than points can be told apart. */
+const LEAST_BEND_DEG = 0.1;
+
 /**
  * Settles radius, K, allowance and setback of one bend.
  * @param template the card the layout was taken from; null when it was typed.
@@ -40,10 +43,10 @@ export function resolveBend(
     problem: { code, message, ids: [declaration.id] },
   });
   const { bendAngleDeg } = declaration;
-  if (!isBendAngle(bendAngleDeg))
+  if (!isBendAngle(bendAngleDeg) || bendAngleDeg < LEAST_BEND_DEG)
     return refuse(
       'angleOutOfRange',
-      `Bend ${name} turns ${String(bendAngleDeg)}°; it must be above 0 and at most 180.`,
+      `Bend ${name} turns ${String(bendAngleDeg)}°; it must be at least ${String(LEAST_BEND_DEG)} and at most 180.`,
     );
   const insideRadiusMm = declaration.insideRadiusMm ?? stock.deliveredRadiusMm;
   if (!(insideRadiusMm >= 0) || !Number.isFinite(insideRadiusMm)) {
