@@ -1,0 +1,146 @@
+import type { Pose } from '../bending/fold';
+import type { Point } from '../geometry/point';
+import { dot3, subtract3 } from '../geometry/vector3';
+import { cross, subtract } from '../geometry/vector';
+
+/**
+ * A convex polygon (counter-clockwise, mm) in the x-y plane of a pose, filled between two heights along its z. Plates, strips of
+ * bends, tools and the machine's beams are all of this kind, so that one test of overlap serves for everything. The pose may be
+ * left-handed: only the overlap counts.
+ */
+export interface Prism {
+  readonly pose: Pose;
+  readonly polygon: readonly Point[];
+  readonly low: number;
+  readonly high: number;
+  /** Middle of its box and the distance from there to its farthest corner, in its own axes, mm. */
+  readonly middle: { readonly x: number; readonly y: number; readonly z: number };
+  readonly half: { readonly x: number; readonly y: number; readonly z: number };
+  readonly radius: number;
+}
+
+/** Bodies that dip into each other by no more than this count as touching, mm. */
+export const TOUCHING_MM = 0.02;
+
+/** A prism over a convex polygon. */
+export function prism(pose: Pose, polygon: readonly Point[], low: number, high: number): Prism {
+  let [minX, minY, maxX, maxY] = [Infinity, Infinity, -Infinity, -Infinity];
+  for (const { x, y } of polygon) {
+    minX = Math.min(minX, x);
+    maxX = Math.max(maxX, x);
+    minY = Math.min(minY, y);
+    maxY = Math.max(maxY, y);
+  }
+  const half = { x: (maxX - minX) / 2, y: (maxY - minY) / 2, z: (high - low) / 2 };
+  return {
+    pose,
+    polygon,
+    low,
+    high,
+    middle: { x: (minX + maxX) / 2, y: (minY + maxY) / 2, z: (low + high) / 2 },
+    half,
+    radius: Math.sqrt(half.x * half.x + half.y * half.y + half.z * half.z),
+  };
+}
+
+/** The same prism somewhere else. */
+export function posed(one: Prism, pose: Pose): Prism {
+  return { ...one, pose };
+}
+
+/**
+ * Whether two prisms share more than a touch: there is no plane between them, even when either is let into the other by
+ * `TOUCHING_MM`. Exact but for that: `b` is cut to the heights of `a`, and its shadow along `a`'s axis compared with `a`'s polygon.
+ */
+export function prismsOverlap(a: Prism, b: Prism): boolean {
+  const { pose } = a;
+  const origin = subtract3(b.pose.origin, pose.origin);
+  const ox = dot3(pose.ux, origin);
+  const oy = dot3(pose.uy, origin);
+  const oz = dot3(pose.uz, origin);
+  const { ux, uy, uz } = b.pose;
+  const [xx, xy, xz] = [dot3(pose.ux, ux), dot3(pose.ux, uy), dot3(pose.ux, uz)];
+  const [yx, yy, yz] = [dot3(pose.uy, ux), dot3(pose.uy, uy), dot3(pose.uy, uz)];
+  const [zx, zy, zz] = [dot3(pose.uz, ux), dot3(pose.uz, uy), dot3(pose.uz, uz)];
+  const { middle, radius } = b;
+  const farX = Math.abs(ox + xx * middle.x + xy * middle.y + xz * middle.z - a.middle.x) - a.half.x;
+  const farY = Math.abs(oy + yx * middle.x + yy * middle.y + yz * middle.z - a.middle.y) - a.half.y;
+  const farZ = Math.abs(oz + zx * middle.x + zy * middle.y + zz * middle.z - a.middle.z) - a.half.z;
+  if (farX >= radius || farY >= radius || farZ >= radius) return false;
+
+  const corners = [b.low, b.high].map((h) =>
+    b.polygon.map(({ x, y }): Corner => ({
+      x: ox + xx * x + xy * y + xz * h,
+      y: oy + yx * x + yy * y + yz * h,
+      z: oz + zx * x + zy * y + zz * h,
+    })),
+  );
+  const shadow = shadowBetween(corners, a.low + TOUCHING_MM, a.high - TOUCHING_MM);
+  if (shadow.length === 0 || isBeside(a.polygon, shadow)) return false;
+  return !isBeside(convexHull(shadow), a.polygon);
+}
+
+interface Corner extends Point {
+  readonly z: number;
+}
+
+/** Corners, seen along z, of what a prism's two ends and sides leave between two heights. */
+function shadowBetween(ends: readonly (readonly Corner[])[], low: number, high: number): readonly Point[] {
+  const [bottom = [], top = []] = ends;
+  const shadow: Point[] = [];
+  const cut = (from: Corner, to: Corner, height: number): void => {
+    if (from.z < height === to.z < height) return;
+    const t = (height - from.z) / (to.z - from.z);
+    shadow.push({ x: from.x + (to.x - from.x) * t, y: from.y + (to.y - from.y) * t });
+  };
+  const side = (from: Corner, to: Corner): void => {
+    cut(from, to, low);
+    cut(from, to, high);
+  };
+  for (let index = 0; index < bottom.length; index += 1) {
+    const next = (index + 1) % bottom.length;
+    const [b, t, b2, t2] = [bottom[index], top[index], bottom[next], top[next]];
+    if (b === undefined || t === undefined || b2 === undefined || t2 === undefined) continue;
+    if (b.z >= low && b.z <= high) shadow.push(b);
+    if (t.z >= low && t.z <= high) shadow.push(t);
+    side(b, t);
+    side(b, b2);
+    side(t, t2);
+  }
+  return shadow;
+}
+
+/** Whether all points lie beyond one edge of a convex polygon, but for a touch. */
+function isBeside(polygon: readonly Point[], points: readonly Point[]): boolean {
+  for (let index = 0; index < polygon.length; index += 1) {
+    const from = polygon[index];
+    const to = polygon[(index + 1) % polygon.length];
+    if (from === undefined || to === undefined) continue;
+    const [ex, ey] = [to.x - from.x, to.y - from.y];
+    const limit = TOUCHING_MM * Math.sqrt(ex * ex + ey * ey);
+    if (limit > 0 && points.every(({ x, y }) => ex * (y - from.y) - ey * (x - from.x) <= limit)) return true;
+  }
+  // A shadow of no width, a plate seen from its edge where nothing of it is left, takes up no room.
+  return polygon.length < 3;
+}
+
+/** Corners of the smallest convex polygon around points, counter-clockwise, without corners on straight runs. */
+export function convexHull(points: readonly Point[]): readonly Point[] {
+  const sorted = [...points].sort((a, b) => a.x - b.x || a.y - b.y);
+  const half = (ordered: readonly Point[]): Point[] => {
+    const chain: Point[] = [];
+    for (const point of ordered) {
+      for (;;) {
+        const last = chain.at(-1);
+        const before = chain.at(-2);
+        if (last === undefined || before === undefined) break;
+        if (cross(subtract(last, before), subtract(point, before)) > 0) break;
+        chain.pop();
+      }
+      chain.push(point);
+    }
+    chain.pop();
+    return chain;
+  };
+  return [...half(sorted), ...half(sorted.reverse())];
+}
