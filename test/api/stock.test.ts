@@ -99,7 +99,7 @@ describe('the shelf', () => {
     ]);
     await expectBalance(shop.owner);
     const audit = await asOwner(shop.ownerUrl, async (client) => {
-      const { rows } = await client.query('SELECT action, subject FROM audit_entries ORDER BY id');
+      const { rows } = await client.query('SELECT what, about FROM audit_entries ORDER BY created_at');
       return rows;
     });
     expect(JSON.stringify(audit)).toContain('one fell');
