@@ -61,6 +61,9 @@ class Search {
   readonly #bends: readonly Bend[];
   readonly #deadSets = new Set<string>();
   readonly #makeable = new Set<string>();
+  /** A bend was found that fails in every order. */
+  #isStuck = false;
+  readonly #isHopeless = new Map<string, boolean>();
   readonly #farthest = new Map<string, Hindrance>();
 
   constructor(
@@ -74,10 +77,11 @@ class Search {
 
   run(testBudget: number): BendOrder {
     const spent = (): number => testBudget - Math.max(0, this.budget.left);
-    const hopeless = this.#hopeless();
-    const order = hopeless.length > 0 ? null : this.#open(new Set(this.#bends.map(({ id }) => id)), null);
-    if (order !== null) return { ok: true, order, testsSpent: spent() };
+    const order = this.#open(new Set(this.#bends.map(({ id }) => id)), null);
+    // A stroke that was broken off showed nothing, so the budget is asked before the order.
     if (this.budget.left < 0) return { ok: false, reason: 'budgetSpent', blockedBy: [], testsSpent: testBudget };
+    if (order !== null) return { ok: true, order, testsSpent: spent() };
+    const hopeless = this.#isStuck ? this.#bends.filter((bend) => this.#fails(bend)) : [];
     const never = this.#bends.filter(({ id }) => !this.#makeable.has(id));
     const named = hopeless.length > 0 ? hopeless : never.length > 0 ? never : this.#bends;
     const blockedBy = named.flatMap(({ id }) => {
@@ -87,9 +91,13 @@ class Search {
     return { ok: false, reason: 'blocked', blockedBy, testsSpent: spent() };
   }
 
-  /** Bends that fail whatever the others do: with their own two panels alone, and both as long as they ever are. */
-  #hopeless(): readonly Bend[] {
-    return this.#bends.filter((bend) => this.#make(bend, new Set(), 'ownPanels') === null);
+  /** Whether a bend fails whatever the others do: with its own two panels alone, and both as long as they ever are. */
+  #fails(bend: Bend): boolean {
+    const known = this.#isHopeless.get(bend.id);
+    if (known !== undefined) return known;
+    const isHopeless = this.#make(bend, new Set(), 'ownPanels') === null;
+    this.#isHopeless.set(bend.id, isHopeless);
+    return isHopeless;
   }
 
   /** Steps that make exactly these bends, or null. `after` is the step that follows them. */
@@ -98,10 +106,13 @@ class Search {
     const key = [...made].join('\n');
     if (this.#deadSets.has(key)) return null;
     for (const last of this.#candidates(made, after)) {
-      if (this.budget.left < 0) return null;
+      if (this.#isStuck || this.budget.left < 0) return null;
       const before = new Set([...made].filter((id) => id !== last.id));
       const step = this.#make(last, before, 'wholePart');
-      if (step === null) continue;
+      if (step === null) {
+        if (this.#fails(last)) this.#isStuck = true;
+        continue;
+      }
       this.#makeable.add(last.id);
       const steps = this.#open(before, step);
       if (steps !== null) return [...steps, step];

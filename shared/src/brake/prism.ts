@@ -1,5 +1,5 @@
 import type { Pose } from '../bending/fold';
-import type { Point } from '../geometry/point';
+import type { Point, Point3 } from '../geometry/point';
 import { dot3, subtract3 } from '../geometry/vector3';
 import { cross, subtract } from '../geometry/vector';
 
@@ -13,10 +13,12 @@ export interface Prism {
   readonly polygon: readonly Point[];
   readonly low: number;
   readonly high: number;
-  /** Middle of its box and the distance from there to its farthest corner, in its own axes, mm. */
+  /** Middle of its box and half the box's size in its own axes, and half its diagonal, mm. */
   readonly middle: { readonly x: number; readonly y: number; readonly z: number };
   readonly half: { readonly x: number; readonly y: number; readonly z: number };
   readonly radius: number;
+  /** Its middle in space. */
+  readonly centre: Point3;
 }
 
 /** Bodies that dip into each other by no more than this count as touching, mm. */
@@ -32,20 +34,22 @@ export function prism(pose: Pose, polygon: readonly Point[], low: number, high: 
     maxY = Math.max(maxY, y);
   }
   const half = { x: (maxX - minX) / 2, y: (maxY - minY) / 2, z: (high - low) / 2 };
-  return {
-    pose,
-    polygon,
-    low,
-    high,
-    middle: { x: (minX + maxX) / 2, y: (minY + maxY) / 2, z: (low + high) / 2 },
-    half,
-    radius: Math.sqrt(half.x * half.x + half.y * half.y + half.z * half.z),
-  };
+  const middle = { x: (minX + maxX) / 2, y: (minY + maxY) / 2, z: (low + high) / 2 };
+  const radius = Math.sqrt(half.x * half.x + half.y * half.y + half.z * half.z);
+  return { pose, polygon, low, high, middle, half, radius, centre: placed(middle, pose) };
 }
 
 /** The same prism somewhere else. */
-export function posed(one: Prism, pose: Pose): Prism {
-  return { ...one, pose };
+export function posed({ polygon, low, high, middle, half, radius }: Prism, pose: Pose): Prism {
+  return { pose, polygon, low, high, middle, half, radius, centre: placed(middle, pose) };
+}
+
+function placed({ x, y, z }: Point3, { origin, ux, uy, uz }: Pose): Point3 {
+  return {
+    x: origin.x + ux.x * x + uy.x * y + uz.x * z,
+    y: origin.y + ux.y * x + uy.y * y + uz.y * z,
+    z: origin.z + ux.z * x + uy.z * y + uz.z * z,
+  };
 }
 
 /**
@@ -53,21 +57,19 @@ export function posed(one: Prism, pose: Pose): Prism {
  * `TOUCHING_MM`. Exact but for that: `b` is cut to the heights of `a`, and its shadow along `a`'s axis compared with `a`'s polygon.
  */
 export function prismsOverlap(a: Prism, b: Prism): boolean {
+  if (areFarApart(a, b)) return false;
   const { pose } = a;
   const origin = subtract3(b.pose.origin, pose.origin);
-  const ox = dot3(pose.ux, origin);
-  const oy = dot3(pose.uy, origin);
-  const oz = dot3(pose.uz, origin);
   const { ux, uy, uz } = b.pose;
-  const [xx, xy, xz] = [dot3(pose.ux, ux), dot3(pose.ux, uy), dot3(pose.ux, uz)];
-  const [yx, yy, yz] = [dot3(pose.uy, ux), dot3(pose.uy, uy), dot3(pose.uy, uz)];
-  const [zx, zy, zz] = [dot3(pose.uz, ux), dot3(pose.uz, uy), dot3(pose.uz, uz)];
-  const { middle, radius } = b;
-  const farX = Math.abs(ox + xx * middle.x + xy * middle.y + xz * middle.z - a.middle.x) - a.half.x;
-  const farY = Math.abs(oy + yx * middle.x + yy * middle.y + yz * middle.z - a.middle.y) - a.half.y;
-  const farZ = Math.abs(oz + zx * middle.x + zy * middle.y + zz * middle.z - a.middle.z) - a.half.z;
-  if (farX >= radius || farY >= radius || farZ >= radius) return false;
-
+  const inAxes = (axis: Point3): readonly number[] => [
+    dot3(axis, origin),
+    dot3(axis, ux),
+    dot3(axis, uy),
+    dot3(axis, uz),
+  ];
+  const [ox = 0, xx = 0, xy = 0, xz = 0] = inAxes(pose.ux);
+  const [oy = 0, yx = 0, yy = 0, yz = 0] = inAxes(pose.uy);
+  const [oz = 0, zx = 0, zy = 0, zz = 0] = inAxes(pose.uz);
   const corners = [b.low, b.high].map((h) =>
     b.polygon.map(({ x, y }): Corner => ({
       x: ox + xx * x + xy * y + xz * h,
@@ -78,6 +80,17 @@ export function prismsOverlap(a: Prism, b: Prism): boolean {
   const shadow = shadowBetween(corners, a.low + TOUCHING_MM, a.high - TOUCHING_MM);
   if (shadow.length === 0 || isBeside(a.polygon, shadow)) return false;
   return !isBeside(convexHull(shadow), a.polygon);
+}
+
+/** Whether the ball around `b` lies beside the box of `a`: settles nearly every test. */
+function areFarApart({ pose, middle, half }: Prism, { centre, radius }: Prism): boolean {
+  const { origin, ux, uy, uz } = pose;
+  const [x, y, z] = [centre.x - origin.x, centre.y - origin.y, centre.z - origin.z];
+  return (
+    Math.abs(ux.x * x + ux.y * y + ux.z * z - middle.x) >= half.x + radius ||
+    Math.abs(uy.x * x + uy.y * y + uy.z * z - middle.y) >= half.y + radius ||
+    Math.abs(uz.x * x + uz.y * y + uz.z * z - middle.z) >= half.z + radius
+  );
 }
 
 interface Corner extends Point {
