@@ -62,11 +62,15 @@ export async function listDrawn(page: Page): Promise<void> {
 
 /** Name and length of the longest straight edge, mm: an edge that a reading surely finds. */
 export async function longestEdge(page: Page): Promise<{ readonly name: string; readonly lengthMm: number }> {
-  const rows = await page.getByRole('option', { name: /^Edge / }).allTextContents();
-  const edges = rows.map((row) => {
-    const [, name = '', lengthMm = ''] = /(Edge E\d+)\s*([\d.]+) mm long/.exec(row) ?? [];
-    return { name, lengthMm: Number(lengthMm) };
-  });
+  const rows = await page
+    .getByRole('option', { name: /^Edge / })
+    .evaluateAll((options) =>
+      options.map((option) => [option.querySelector('b')?.textContent, option.querySelector('span')?.textContent]),
+    );
+  const edges = rows.map(([name, detail]) => ({
+    name: name?.trim() ?? '',
+    lengthMm: Number(/^\s*([\d.]+) mm long/.exec(detail ?? '')?.[1]),
+  }));
   return edges.reduce((longest, edge) => (edge.lengthMm > longest.lengthMm ? edge : longest));
 }
 
