@@ -27,6 +27,15 @@ export type RuleId =
   | 'unitsSlip'
   | 'drawnTwice'
   | 'tinyEdge'
+  | 'threadTooShort'
+  | 'coatedTooSmall'
+  | 'hardwareNeedsMask'
+  | 'finishNotForMetal'
+  | 'unlikeMetals'
+  | 'washerNotSeated'
+  | 'noRoomForFastener'
+  | 'neighbourFouled'
+  | 'boltsStart'
   | 'wrongHand';
 
 /** A mend that one click applies; `label` is a verb phrase ("Move both 0.5 mm out"). */
