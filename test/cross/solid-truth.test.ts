@@ -72,8 +72,11 @@ const LAYOUTS: readonly (readonly [string, Layout])[] = [
   ['hole over a whole bend', round(12, 0)],
 ];
 
+/** Random parts whose holes overlap can't be developed; they are counted. */
+let undeveloped = 0;
 const developed = (layout: Layout): readonly Development[] => {
   const result = developLayout(layout, null, sampleStock());
+  if (!result.ok) undeveloped += 1;
   return result.ok ? [result.development] : [];
 };
 
@@ -144,16 +147,18 @@ describe('formed solids, built and measured by OpenCascade', () => {
         worst.boxMm = Math.max(worst.boxMm, offMm);
       });
       expect(answer.step).toContain('MANIFOLD_SOLID_BREP');
+      expect(answer.step).toContain('AP242_MANAGED_MODEL_BASED_3D_ENGINEERING');
     });
     const figures = ({ volume, surface }: typeof worst.straight): string =>
       `volume ${volume.toExponential(1)}, surface ${surface.toExponential(1)}`;
     process.stdout.write(
       `solids against OpenCascade: ${counts.straight} with straight sides: ${figures(worst.straight)}; ` +
         `${counts.oblique} with oblique or round ones: ${figures(worst.oblique)} (relative); boxes ${worst.boxMm.toExponential(1)} mm` +
-        `${refused.length === 0 ? '' : `; refused: ${refused.join(', ')}`}\n`,
+        `; ${undeveloped} could not be developed${refused.length === 0 ? '' : `; refused: ${refused.join(', ')}`}\n`,
     );
     expect(counts.straight + counts.oblique).toBeGreaterThanOrEqual(60);
     expect(counts.oblique).toBeGreaterThanOrEqual(8);
+    expect(undeveloped).toBeLessThanOrEqual(3);
     expect(refused).toEqual([]);
   });
 
