@@ -130,8 +130,8 @@ describe('from a photo of a template to a bracket that is on its way', () => {
     await listDrawn(page);
     await drawn(page, edge.name).click();
     const place = page.getByRole('textbox', { name: `Distance of the bend from ${edge.name}` });
-    // The template's notched corners are 14 mm deep: their edges have to keep clear of the bend.
-    await place.fill('19');
+    // Within the depth of the template's notched corners, so that their edges keep clear of the bend.
+    await place.fill('13');
     await place.press('Enter');
     await page.getByRole('button', { name: 'Bend table' }).click();
     const row = page.getByRole('region', { name: 'Bend table' }).getByRole('row', { name: /^B1/ });
@@ -197,7 +197,8 @@ describe('from a photo of a template to a bracket that is on its way', () => {
       await page
         .getByRole('listitem')
         .filter({ hasText: new RegExp(subject) })
-        .getByText('sent', { exact: true }).waitFor();
+        .getByText('sent', { exact: true })
+        .waitFor();
     }
     const { messages } = mailsSchema.parse(await (await fetch(mailListUrl())).json());
     expect(messages.map(({ subject }) => subject)).toEqual(expect.arrayContaining(subjects));

@@ -65,12 +65,13 @@ export async function longestEdge(page: Page): Promise<{ readonly name: string; 
   const rows = await page
     .getByRole('option', { name: /^Edge / })
     .evaluateAll((options) =>
-      options.map((option) => [option.querySelector('b')?.textContent, option.querySelector('span')?.textContent]),
+      options.map((option) => [option.querySelector('b')?.textContent, option.lastElementChild?.textContent]),
     );
   const edges = rows.map(([name, detail]) => ({
     name: name?.trim() ?? '',
     lengthMm: Number(/^\s*([\d.]+) mm long/.exec(detail ?? '')?.[1]),
   }));
+  if (edges.some(({ lengthMm }) => Number.isNaN(lengthMm))) throw new Error(`Not read: ${JSON.stringify(rows)}`);
   return edges.reduce((longest, edge) => (edge.lengthMm > longest.lengthMm ? edge : longest));
 }
 
