@@ -14,7 +14,7 @@ import { findBendOrder } from './find-bend-order';
 import type { BendOrder } from './find-bend-order';
 import { PUNCHES } from './tooling';
 
-/** T 2, R 2, V 16: apex setback 4 at 90 degrees, die 26 wide, its groove's edges 8 from the middle. */
+/** T 2, R 2, V 16: apex setback 4 at 90 degrees, die 24 wide, its groove's edges 8 from the middle. */
 const orderOf = (layout: Layout): BendOrder => findBendOrder(developed(layout, sampleStock()));
 const withStraightOnly = (layout: Layout): BendOrder =>
   findBendOrder(developed(layout, sampleStock()), { punches: PUNCHES.filter(({ id }) => id === 'straight') });
@@ -30,7 +30,8 @@ const obstaclesOf = (order: BendOrder): readonly string[] =>
     : order.blockedBy.map(({ hindrance }) => (hindrance.kind === 'hits' ? hindrance.obstacle : hindrance.kind));
 
 // At the end of a square bend both sides stand at 45 degrees. A flange of height h that already stands on a web w leans over the
-// punch then: seen from the apex of the bend under way its tip is at x = (h - w) / sqrt 2, y = (h + w) / sqrt 2. The straight punch
+// punch then: seen from the apex of the bend under way its tip is at x = (h - w) / sqrt 2, y = (h + w) / sqrt 2
+// outside, and T / sqrt 2 = 1.4 farther on inside. The straight punch
 // takes up x from -6 to 6 up to y = 95, its clamp -13 to 13 up to 120, the ram -40 to 40 above; the gooseneck leaves x < 14 free
 // between y = 34 and 70.
 describe('an order of bends', () => {
@@ -47,7 +48,7 @@ describe('an order of bends', () => {
   });
 
   it('the same U: the gooseneck can, for the second bend', () => {
-    // 10.6 < 14 at y = 53, within the sweep of the neck.
+    // 10.6 + 1.4 = 12 < 14 at y = 53, within the sweep of the neck.
     const order = orderOf(uLayout(45, 30));
     expect(order.ok && order.order.map(({ punchId }) => punchId)).toEqual(['straight', 'gooseneck']);
   });
@@ -96,7 +97,8 @@ describe('an order of bends', () => {
   });
 
   it('Z with a web of 16: it spans the mouth, but the flange that hangs down meets the die', () => {
-    // Web 16 - 4 - 4 = 8 flat and 2.081: reaches 10.081 of 8. The first flange hangs from 8 + 2.081 + 2..4, the die's side is at 13.
+    // Web 16 - 4 - 4 = 8 flat and 2.081: flat as far as 10.081 of 8. From there the first bend turns down with R 2; the die's edge
+    // lies at 12, where its inside face is 1.4 down already.
     expect(obstaclesOf(orderOf(zLayout(25, 16, 25)))).toEqual(['die', 'die']);
   });
 

@@ -111,7 +111,7 @@ export const STEEPEST_AIR_BEND_DEG = 150;
 /** Included angles of the grooves of dies: the usual one, and the one for acute bends, degrees. */
 const GROOVES_DEG = [88, 30] as const;
 /** Shoulders beside the groove, and the body's height. */
-const SHOULDER = { least: commonPractice(5).value, shareOfV: commonPractice(0.25).value } as const;
+const SHOULDER = { least: commonPractice(4).value, shareOfV: commonPractice(0.2).value } as const;
 const DIE_HEIGHT_MM = commonPractice(80).value;
 /** Metal left below the groove, mm. */
 const BELOW_GROOVE_MM = commonPractice(15).value;

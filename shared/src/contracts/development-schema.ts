@@ -98,6 +98,8 @@ export const findingSchema = z.object({
     'drawnTwice',
     'tinyEdge',
     'wrongHand',
+    'bendOrder',
+    'selfInterference',
     'threadTooShort',
     'coatedTooSmall',
     'hardwareNeedsMask',

@@ -8,6 +8,7 @@ import type { PartDocument, StockRole } from '../part/part-document';
 import { findMaterial } from '../stock/materials';
 import { ASSEMBLING_RULES } from './assembling/assembling-rules';
 import { checkBoltsStart } from './assembling/bolts-start';
+import { checkBendOrder } from './bend-order';
 import { checkBlankOutOfRange } from './blank-out-of-range';
 import { checkBrakeTooSmall } from './brake-too-small';
 import { checkCannotBeDeveloped } from './cannot-be-developed';
@@ -29,6 +30,7 @@ import { checkPieceDropsOut } from './piece-drops-out';
 import { checkRadiusBelowMinimum } from './radius-below-minimum';
 import type { RuleContext, TryOut } from './rule-context';
 import { checkSeatCorner } from './seat-corner';
+import { checkSelfInterference } from './self-interference';
 import { checkTinyEdge } from './tiny-edge';
 import { checkUnitsSlip } from './units-slip';
 import { checkWrongHand } from './wrong-hand';
@@ -61,9 +63,15 @@ const PLAIN_RULES: readonly Rule[] = [
   checkSeatCorner,
   checkWrongHand,
   ...ASSEMBLING_RULES,
+  checkSelfInterference,
 ];
 
-const RULES: readonly Rule[] = [...PLAIN_RULES, checkBoltsStart, checkDeclaredUse];
+const RULES: readonly Rule[] = [
+  ...PLAIN_RULES,
+  (context) => checkBendOrder(context),
+  checkBoltsStart,
+  checkDeclaredUse,
+];
 
 /**
  * All checks of a part in one of its sheets, worst first.
@@ -119,6 +127,7 @@ function tryOutOn(context: RuleContext, result: DevelopmentResult): TryOut {
   const size = [outer, ...cutouts].reduce((sum, { edges }) => sum + edges.length, features.length);
   let triesLeft = Math.min(MOST_TRIES, Math.floor(THINGS_TRIED / Math.max(1, size)));
   let known: ReadonlySet<string> | null = null;
+  let hadNoBendOrder: boolean | null = null;
   return (commands) => {
     const document = triesLeft > 0 ? applied(context.document, commands) : null;
     if (document === null) return null;
@@ -132,9 +141,23 @@ function tryOutOn(context: RuleContext, result: DevelopmentResult): TryOut {
     const after = findWith(PLAIN_RULES, contextOf(document, context.role, tried));
     return {
       findingIds: new Set(after.map(({ id }) => id)),
-      addsBlocker: [...blockerIds(after)].some((id) => !before.has(id)),
+      addsBlocker:
+        [...blockerIds(after)].some((id) => !before.has(id)) ||
+        (changesBends(context.document, document) &&
+          hasNoBendOrder(contextOf(document, context.role, tried)) &&
+          !(hadNoBendOrder ??= hasNoBendOrder(context))),
     };
   };
+}
+
+/** Whether an order of bends has to be looked for anew, which takes a millisecond for six bends: holes and slots leave it be. */
+function changesBends(before: PartDocument, after: PartDocument): boolean {
+  if (before.stocks !== after.stocks || before.template !== after.template) return true;
+  return (['outer', 'cutouts', 'bends', 'reliefs'] as const).some((part) => before.layout[part] !== after.layout[part]);
+}
+
+function hasNoBendOrder(context: RuleContext): boolean {
+  return blockerIds(checkBendOrder(context)).size > 0;
 }
 
 /** Edges, holes and slots that all tries of one check may look at together: under half a second of work. */

@@ -36,7 +36,9 @@ export type RuleId =
   | 'noRoomForFastener'
   | 'neighbourFouled'
   | 'boltsStart'
-  | 'wrongHand';
+  | 'wrongHand'
+  | 'bendOrder'
+  | 'selfInterference';
 
 /** A mend that one click applies; `label` is a verb phrase ("Move both 0.5 mm out"). */
 export interface Mend {

@@ -199,7 +199,7 @@ describe('wrongHand', () => {
     reading: { readOn: 'crease', bearingFace: 'A', hinge: { kind: 'middle' } },
   };
   const channel = (said: Template | null): PartDocument =>
-    applyCommands(starterDocument({ shape: 'hat-section', topMm: 60, sideMm: 40, brimMm: 30, widthMm: 50 }), [
+    applyCommands(starterDocument({ shape: 'hat-section', topMm: 90, sideMm: 40, brimMm: 20, widthMm: 50 }), [
       { kind: 'setStock', role: 'production', stock: ACROSS },
       { kind: 'setTemplate', template: said },
     ]);
