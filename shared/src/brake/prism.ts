@@ -58,7 +58,13 @@ function placed({ x, y, z }: Point3, { origin, ux, uy, uz }: Pose): Point3 {
  */
 export function prismsOverlap(a: Prism, b: Prism): boolean {
   if (areFarApart(a, b)) return false;
-  const { pose } = a;
+  const shadow = shadowOf(a.pose, b, a.low + TOUCHING_MM, a.high - TOUCHING_MM);
+  if (shadow.length === 0 || isBeside(a.polygon, shadow)) return false;
+  return !isBeside(convexHull(shadow), a.polygon);
+}
+
+/** What a prism leaves between two heights of a pose, seen along the pose's z: points whose hull it is. Empty where nothing is left. */
+export function shadowOf(pose: Pose, b: Prism, low: number, high: number): readonly Point[] {
   const origin = subtract3(b.pose.origin, pose.origin);
   const { ux, uy, uz } = b.pose;
   const inAxes = (axis: Point3): readonly number[] => [
@@ -77,9 +83,7 @@ export function prismsOverlap(a: Prism, b: Prism): boolean {
       z: oz + zx * x + zy * y + zz * h,
     })),
   );
-  const shadow = shadowBetween(corners, a.low + TOUCHING_MM, a.high - TOUCHING_MM);
-  if (shadow.length === 0 || isBeside(a.polygon, shadow)) return false;
-  return !isBeside(convexHull(shadow), a.polygon);
+  return shadowBetween(corners, low, high);
 }
 
 /** Whether the ball around `b` lies beside the box of `a`: settles nearly every test. */

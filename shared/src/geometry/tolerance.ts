@@ -24,3 +24,9 @@ export const COINCIDENT_DEG = 1e-9;
 
 /** Corners this near to a triangle's edge, mm, are the ones that a triangulation took for part of it. */
 export const ON_EDGE_MM = 1e-9;
+
+/** A search for the nearest point has ended when it gets closer by less than this share of the squared distance. */
+export const NO_PROGRESS_SHARE = 1e-12;
+
+/** Triangles whose squared area is below this share of their sides' squares have no plane. */
+export const NO_PLANE_SHARE = 1e-14;

@@ -148,7 +148,12 @@ function heightAround(loop: OutlineLoop, edgeId: string, direction: Point): numb
 }
 
 /** Straight outline edge that ends the panel, parallel to the bend, at its full height. */
-function freeEdge(context: RuleContext, development: Development, panel: Panel, outward: Point): string | null {
+export function freeEdge(
+  context: RuleContext,
+  development: Development,
+  panel: Panel,
+  outward: Point,
+): string | null {
   const { outer } = context.document.layout;
   const layoutOutward = moveDirection(invert(panel.placement), outward);
   const reach = loopReach(panel.layoutOuter, layoutOutward);

@@ -1,3 +1,4 @@
+import type { Development } from '../../bending/development';
 import type { Feature } from '../../bending/layout';
 import type { Point } from '../../geometry/point';
 import { between } from '../../geometry/vector';
@@ -38,6 +39,14 @@ export function boltDiameterMm(feature: Feature): number | null {
 /** Middle of an opening in the layout. */
 export function middleOf(feature: Feature): Point {
   return feature.kind === 'hole' ? feature.centre : between(feature.from, feature.to, 0.5);
+}
+
+/** Where in the flat pattern a bolt may sit: a hole's middle, both end centres of a slot. */
+export function flatPlaces({ flat }: Development, { id }: Feature): readonly Point[] {
+  const hole = flat.holes.find(({ featureId }) => featureId === id);
+  if (hole !== undefined) return [hole.centre];
+  const slot = flat.slots.find(({ featureId }) => featureId === id);
+  return slot === undefined ? [] : [slot.from, slot.to];
 }
 
 /** "Hole H3", "Slot S1". */

@@ -10,7 +10,7 @@ import type { Finding } from '../finding';
 import { LIMIT_SLACK_MM } from '../limits';
 import { mendThatHolds } from '../mend-that-holds';
 import { type RuleContext, placeOfLayout } from '../rule-context';
-import { boltThread, called, finishOf, middleOf } from './assembled-part';
+import { boltThread, called, finishOf, flatPlaces, middleOf } from './assembled-part';
 import { panelIndexAt, panelsInsideU } from './inside-u';
 import { BOLT_PLAY, INSIDE_U, RIVET_NUT_HOLE, TAB_PLAY, THREAD_COAT } from './limits';
 
@@ -57,10 +57,7 @@ export function checkCoatedSize(context: RuleContext): readonly Finding[] {
 /** How often the coat counts where an opening lies. */
 function coatTimes({ development }: RuleContext, feature: Feature): number {
   if (development === null) return 1;
-  const { holes, slots } = development.flat;
-  const hole = holes.find(({ featureId }) => featureId === feature.id)?.centre;
-  const slot = slots.find(({ featureId }) => featureId === feature.id)?.from;
-  const at = hole ?? slot;
+  const [at] = flatPlaces(development, feature);
   const panel = at === undefined ? null : panelIndexAt(development, at);
   return panel !== null && panelsInsideU(development).has(panel) ? INSIDE_U.timesThickness : 1;
 }
