@@ -1,6 +1,6 @@
 import type { Pose } from '../bending/fold';
 import type { Point, Point3 } from '../geometry/point';
-import { dot3, subtract3 } from '../geometry/vector3';
+import { along3, dot3, subtract3 } from '../geometry/vector3';
 import { cross, subtract } from '../geometry/vector';
 
 /**
@@ -66,34 +66,50 @@ export function prismsOverlap(a: Prism, b: Prism): boolean {
 /** What a prism leaves between two heights of a pose, seen along the pose's z: points whose hull it is. Empty where nothing is left. */
 export function shadowOf(pose: Pose, b: Prism, low: number, high: number): readonly Point[] {
   const origin = subtract3(b.pose.origin, pose.origin);
-  const { ux, uy, uz } = b.pose;
-  const inAxes = (axis: Point3): readonly number[] => [
-    dot3(axis, origin),
-    dot3(axis, ux),
-    dot3(axis, uy),
-    dot3(axis, uz),
-  ];
-  const [ox = 0, xx = 0, xy = 0, xz = 0] = inAxes(pose.ux);
-  const [oy = 0, yx = 0, yy = 0, yz = 0] = inAxes(pose.uy);
-  const [oz = 0, zx = 0, zy = 0, zz = 0] = inAxes(pose.uz);
-  const corners = [b.low, b.high].map((h) =>
+  const ends = [b.low, b.high].map((height) => {
+    const inSpace = along3(origin, b.pose.uz, height);
+    return { x: dot3(pose.ux, inSpace), y: dot3(pose.uy, inSpace), z: dot3(pose.uz, inSpace) };
+  });
+  const { ux, uy } = b.pose;
+  const [xx, xy] = [dot3(pose.ux, ux), dot3(pose.ux, uy)];
+  const [yx, yy] = [dot3(pose.uy, ux), dot3(pose.uy, uy)];
+  const [zx, zy] = [dot3(pose.uz, ux), dot3(pose.uz, uy)];
+  const corners = ends.map((foot) =>
     b.polygon.map(({ x, y }): Corner => ({
-      x: ox + xx * x + xy * y + xz * h,
-      y: oy + yx * x + yy * y + yz * h,
-      z: oz + zx * x + zy * y + zz * h,
+      x: foot.x + xx * x + xy * y,
+      y: foot.y + yx * x + yy * y,
+      z: foot.z + zx * x + zy * y,
     })),
   );
   return shadowBetween(corners, low, high);
 }
 
-/** Whether the ball around `b` lies beside the box of `a`: settles nearly every test. */
-function areFarApart({ pose, middle, half }: Prism, { centre, radius }: Prism): boolean {
+/** Whether the ball around `b` lies beside the box of `a`, or one box beside a face of the other: settles nearly every test. */
+function areFarApart({ pose, middle, half }: Prism, b: Prism): boolean {
   const { origin, ux, uy, uz } = pose;
+  const { centre, radius } = b;
   const [x, y, z] = [centre.x - origin.x, centre.y - origin.y, centre.z - origin.z];
+  const offX = ux.x * x + ux.y * y + ux.z * z - middle.x;
+  if (Math.abs(offX) >= half.x + radius) return true;
+  const offY = uy.x * x + uy.y * y + uy.z * z - middle.y;
+  if (Math.abs(offY) >= half.y + radius) return true;
+  const offZ = uz.x * x + uz.y * y + uz.z * z - middle.z;
+  if (Math.abs(offZ) >= half.z + radius) return true;
+
+  const { ux: bx, uy: by, uz: bz } = b.pose;
+  const size = b.half;
+  const [xx, xy, xz] = [dot3(ux, bx), dot3(ux, by), dot3(ux, bz)];
+  const [yx, yy, yz] = [dot3(uy, bx), dot3(uy, by), dot3(uy, bz)];
+  const [zx, zy, zz] = [dot3(uz, bx), dot3(uz, by), dot3(uz, bz)];
+  const gap = (off: number, own: number, p: number, q: number, r: number, of: Point3): boolean =>
+    Math.abs(off) >= own + Math.abs(p) * of.x + Math.abs(q) * of.y + Math.abs(r) * of.z - TOUCHING_MM;
   return (
-    Math.abs(ux.x * x + ux.y * y + ux.z * z - middle.x) >= half.x + radius ||
-    Math.abs(uy.x * x + uy.y * y + uy.z * z - middle.y) >= half.y + radius ||
-    Math.abs(uz.x * x + uz.y * y + uz.z * z - middle.z) >= half.z + radius
+    gap(offX, half.x, xx, xy, xz, size) ||
+    gap(offY, half.y, yx, yy, yz, size) ||
+    gap(offZ, half.z, zx, zy, zz, size) ||
+    gap(offX * xx + offY * yx + offZ * zx, size.x, xx, yx, zx, half) ||
+    gap(offX * xy + offY * yy + offZ * zy, size.y, xy, yy, zy, half) ||
+    gap(offX * xz + offY * yz + offZ * zz, size.z, xz, yz, zz, half)
   );
 }
 
