@@ -130,8 +130,8 @@ describe('from a photo of a template to a bracket that is on its way', () => {
     await listDrawn(page);
     await drawn(page, edge.name).click();
     const place = page.getByRole('textbox', { name: `Distance of the bend from ${edge.name}` });
-    // Within the depth of the template's notched corners, so that their edges keep clear of the bend.
-    await place.fill('13');
+    // Well behind the template's notched corners, so that their edges keep clear of the bend.
+    await place.fill('26');
     await place.press('Enter');
     await page.getByRole('button', { name: 'Bend table' }).click();
     const row = page.getByRole('region', { name: 'Bend table' }).getByRole('row', { name: /^B1/ });

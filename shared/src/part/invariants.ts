@@ -16,6 +16,8 @@ export const DOCUMENT_LIMITS = {
   marks: 40,
   neighbours: 60,
   coordinateMm: 5000,
+  /** Smallest hole or slot: far below what anything cuts, far above where points run together. */
+  leastSizeMm: 0.01,
   bulge: 1000,
 } as const;
 
@@ -125,8 +127,8 @@ function checkFeature(feature: Feature, report: Report): void {
   const sizeMm = feature.kind === 'hole' ? findHoleDiameterMm(feature.purpose) : feature.widthMm;
   if (sizeMm === null) {
     report('unknownThread', 'The fastener tables have no such thread for this purpose.', feature.id);
-  } else if (!isPositive(sizeMm) || sizeMm > DOCUMENT_LIMITS.coordinateMm) {
-    report('impossibleSize', 'A hole or slot has a size above 0.', feature.id);
+  } else if (!(sizeMm >= DOCUMENT_LIMITS.leastSizeMm && sizeMm <= DOCUMENT_LIMITS.coordinateMm)) {
+    report('impossibleSize', 'A hole or slot is at least a hundredth of a millimetre wide.', feature.id);
   }
 }
 
