@@ -70,9 +70,9 @@ describe('an order of bends', () => {
   });
 
   it('channel with lips of 15 on legs of 60 over a web of 50: no', () => {
-    // The last bend at the web has the other leg's corner at x = 10 / 1.414 = 7, y = 78, its lip of 15 reaching on towards the back
-    // and down: through the gooseneck's head, whose front runs from x = 14 at 70 to x = -13 at 95. With a web bend made and a lip
-    // left for the end, the leg of 60 carries the web's other side into the punch: tip of leg at x = (60 - 50) / 1.414.
+    // A bend at the web last: the other leg's corner is at x = (60 - 50) / 1.414 = 7, y = 78, and its lip goes on from there to
+    // x = 7 + 15 / 1.414 = 18, y = 67: through the gooseneck's neck, which starts at 14. A lip last: its leg of 60 rises in front, the
+    // web of 50 goes on to x = -7, y = 78, and the other leg from there down to x = 35, y = 35: across any punch.
     const order = orderOf(lippedChannel(15, 60, 50));
     expect(order).toMatchObject({ ok: false, reason: 'blocked' });
     expect(new Set(obstaclesOf(order))).toEqual(new Set(['punch']));
@@ -122,6 +122,14 @@ describe('an order of bends', () => {
   it('a flange of 6 is shorter than half the mouth', () => {
     // 6 - 4 = 2 flat and 2.081 of the bend: 4.081 of 8.
     expect(obstaclesOf(orderOf(lLayout(50, 6)))).toEqual(['slips']);
+  });
+
+  it('a long sheet lies with its narrow side to the back, where the side frames leave 400', () => {
+    // 2700 is longer than the 2550 between the frames: 600 behind the bend line meet them, 50 do not.
+    const long = stripLayout([50, 600], [square], 2700);
+    expect(orderOf(long)).toMatchObject({ ok: true, order: [{ gaugedSide: 'parent' }] });
+    expect(obstaclesOf(orderOf(stripLayout([450, 600], [square], 2700)))).toEqual(['frames']);
+    expect(orderOf(stripLayout([450, 600], [square], 2500)).ok).toBe(true);
   });
 
   it('flips within 0.05 mm of the least flange', () => {
