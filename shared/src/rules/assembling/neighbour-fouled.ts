@@ -37,9 +37,6 @@ interface Meeting {
   readonly at: Point3;
 }
 
-/** No flange's tip is ever this far off: farther neighbours are not looked at, mm. */
-const FAR_MM = 12;
-
 /**
  * The fully formed part against the solids around it. Sharing room is a blocker, told with the depth; less air than the flange's tip
  * may be off, and no less than 1 mm, is a caution. The coat adds its thickness.
@@ -67,7 +64,7 @@ function missingOf({ gapMm, requiredMm }: Meeting): number {
   return requiredMm - gapMm;
 }
 
-/** Air that a piece needs, mm. The spread of tips is worked out when first asked for. */
+/** Air that a piece needs, mm: a tip a metre up may be 17 off, so no fixed reach does. Tips are worked out when first asked for. */
 function requiredBy(context: RuleContext, development: Development): (of: PieceName) => number {
   const finish = finishOf(context);
   const coat: CoatSpread =
@@ -91,26 +88,28 @@ function bendOf({ panels, zones }: Development, { kind, index }: PieceName): str
   return (kind === 'panel' ? panels[index]?.bendId : zones[index]?.bendId) ?? null;
 }
 
+/** A piece and a neighbour, if they are nearer to each other than the air that the piece needs. */
 function meet(body: FormedBody, solid: Prism, required: (of: PieceName) => number): Meeting | null {
+  const requiredMm = required(body.of);
   const apartMm = (one: Prism) => length3(subtract3(one.centre, solid.centre)) - one.radius - solid.radius;
-  if (apartMm(body.around) > FAR_MM) return null;
+  if (apartMm(body.around) > requiredMm) return null;
   const corners = prismCorners(solid);
   let nearest: ConvexGap | null = null;
   let depthMm = 0;
   for (const piece of body.prisms) {
-    if (apartMm(piece) > (nearest?.distanceMm ?? FAR_MM)) continue;
+    if (apartMm(piece) > (nearest?.distanceMm ?? requiredMm)) continue;
     const gap = convexGap(prismCorners(piece), corners);
     if (nearest === null || gap.distanceMm < nearest.distanceMm) nearest = gap;
     if (gap.distanceMm === 0) depthMm = Math.max(depthMm, depthOf(piece, solid, corners));
   }
-  if (nearest === null || nearest.distanceMm > FAR_MM) return null;
+  if (nearest === null || nearest.distanceMm > requiredMm) return null;
   const isOverlap = depthMm > TOUCHING_MM;
   // A plate is cut into triangles where it has openings; how far it reaches in is measured on the whole of it.
   const wholeMm = isOverlap && body.of.kind === 'panel' ? depthOf(body.around, solid, corners) : depthMm;
   return {
     body,
     gapMm: isOverlap ? -wholeMm : nearest.distanceMm,
-    requiredMm: required(body.of),
+    requiredMm,
     at: nearest.from,
   };
 }

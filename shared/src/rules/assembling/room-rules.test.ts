@@ -1,11 +1,23 @@
 import type { Feature, HolePurpose } from '../../bending/layout';
 import { LYING_FLAT } from '../../bending/fold';
 import { prism } from '../../brake/prism';
-import { applyCommands } from '../../part/apply-command';
+import { applyCommand, applyCommands } from '../../part/apply-command';
 import type { Neighbour } from '../../part/assembly';
 import type { StockRole } from '../../part/part-document';
+import { starterDocument } from '../../part/starter-document';
 import { checkPart } from '../check-part';
-import { MENDED, add, bracket, found, hole, outcomeOfMending, plain, plate, severities } from '../testing/rule-bench';
+import {
+  ACROSS,
+  MENDED,
+  add,
+  bracket,
+  found,
+  hole,
+  outcomeOfMending,
+  plain,
+  plate,
+  severities,
+} from '../testing/rule-bench';
 import { assembled } from './testing/assembled';
 import { swingDeg } from './tool-room';
 
@@ -183,6 +195,18 @@ describe('neighbourFouled', () => {
     expect(requiredMm).toBeLessThan(2);
     expect(severities(beside(outside(requiredMm - 0.04)), 'neighbourFouled')).toEqual(['caution']);
     expect(severities(beside(outside(requiredMm + 0.04)), 'neighbourFouled')).toEqual([]);
+  });
+
+  it('wants more by a long flange, whose tip strays farther', () => {
+    const shape = { shape: 'l-bracket', baseMm: 200, flangeMm: 900, widthMm: 100, bendAngleDeg: 90 } as const;
+    const tall = applyCommand(starterDocument(shape), { kind: 'setStock', role: 'production', stock: ACROSS });
+    const by = (gapMm: number) =>
+      assembled(tall, { neighbours: [block('wall', [200 + gapMm, -50, 20], [300, 150, 1200])] });
+    const requiredMm = found(by(5), 'neighbourFouled')[0]?.requiredMm ?? NaN;
+    // 1° at 900 mm is 15.7 mm.
+    expect(Math.abs(requiredMm - 15.7)).toBeLessThan(0.5);
+    expect(severities(by(requiredMm - 0.04), 'neighbourFouled')).toEqual(['caution']);
+    expect(severities(by(requiredMm + 0.04), 'neighbourFouled')).toEqual([]);
   });
 
   it('measures to cylinders as they are', () => {
