@@ -17,7 +17,7 @@ const WHY: Provenance = {
   confidence: 'common-practice',
 };
 
-/** Tests of overlap for one check: about 20 ms at the most. */
+/** Tests of overlap for one check: about 50 ms at the most. */
 const TEST_BUDGET = 200_000;
 
 /**

@@ -150,7 +150,7 @@ function tryOutOn(context: RuleContext, result: DevelopmentResult): TryOut {
   };
 }
 
-/** Whether an order of bends has to be looked for anew, which takes a millisecond for six bends: holes and slots leave it be. */
+/** Whether an order of bends has to be looked for anew, which takes two milliseconds for six bends: holes and slots leave it be. */
 function changesBends(before: PartDocument, after: PartDocument): boolean {
   if (before.stocks !== after.stocks || before.template !== after.template) return true;
   return (['outer', 'cutouts', 'bends', 'reliefs'] as const).some((part) => before.layout[part] !== after.layout[part]);
